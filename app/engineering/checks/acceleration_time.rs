@@ -1,0 +1,294 @@
+//! # acceleration-time
+//!
+//! How long the load really takes to speed up, against the time that is set.
+//!
+//! The motor's torque within the current limit is T = T_N·(1/r)·√(I_lim² − (I_m/r)²)/√(I_N² − I_m²), r = n/n_N but at
+//! least 1, and never above λ·T_N/(1.3·r²). What the load leaves of it speeds up the inertia: dt = J·dω/(T − T_L),
+//! integrated in 400 even steps of speed. The shortest even ramp is J·Δω over the least spare torque on the way.
+//! Set at least that: within. Shorter: the limit stretches the ramp, marginal. Shorter than the least time there is,
+//! stalled on the way, or held at standstill: outside. A plate without λ counts as 1.6, a gear not stated as a direct
+//! coupling. Inertia and load come from their makers; nothing here replaces the first careful run.
+
+use crate::decision::Measured;
+use crate::formulas::plausible;
+use crate::limit_rule::LimitRule;
+use crate::motion::machine::newton_metres;
+use crate::motion::ramp_up::RampUp;
+use crate::motion::{End, Machine, Trace};
+use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
+use crate::quantity::{Duration, Speed};
+use crate::rounding::significant;
+use crate::sources::motion::{RM_01, RM_08, VF_04};
+
+/// Name in the catalogue.
+pub const NAME: &str = "acceleration-time";
+
+/// What the check takes.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Inputs {
+    /// Motor, load, gear and current limit.
+    pub machine: Machine,
+    /// Motor speed at which the ramp begins; standstill is assumed.
+    pub from_speed: Option<Speed>,
+    /// Motor speed at which it ends; rated speed is assumed.
+    pub to_speed: Option<Speed>,
+    /// Set time for this very change of speed.
+    pub set_time: Option<Duration>,
+    /// Whether the drive runs on plain volts per hertz without boost.
+    pub plain_volts_per_hertz: Option<bool>,
+}
+
+/// The ramp as it will run; none while an input is missing.
+#[must_use]
+pub fn trace(inputs: &Inputs) -> Option<Trace> {
+    let mut b = OutcomeBuilder::new(NAME);
+    let run = run_up(&mut b, inputs)?;
+    let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
+    Some(run.on_ramp(set))
+}
+
+/// Runs the check.
+#[must_use]
+pub fn check(inputs: &Inputs) -> Outcome {
+    let mut b = OutcomeBuilder::new(NAME);
+    b.cite(RM_01);
+    b.cite(RM_08);
+    let run = run_up(&mut b, inputs);
+    let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time");
+    if inputs.plain_volts_per_hertz != Some(false) {
+        b.cite(VF_04);
+        b.note("Plain volts per hertz without boost does not reach this torque at breakaway.");
+    }
+    let Some(run) = run else { return b.not_assessed() };
+
+    let standstill = Speed::from_rpm(0.0);
+    let at_start = run.motor.available(run.limit, standstill);
+    // The end of the bracket that gives less: the lower one in overload, the upper one below rated current.
+    let overload = run.limit.amperes() >= run.motor.rated_current.amperes();
+    let magnetising = if overload { run.motor.magnetising.low } else { run.motor.magnetising.high };
+    let (limit, rated, m) = (
+        significant(run.limit.amperes(), 4),
+        significant(run.motor.rated_current.amperes(), 4),
+        significant(magnetising.amperes(), 4),
+    );
+    b.line(
+        "torque within the limit up to base speed",
+        "T = T_N·√(I_lim² − I_m²)/√(I_N² − I_m²), at most λ·T_N/1.3",
+        format!(
+            "{} × √({limit}² − {m}²)/√({rated}² − {m}²), at most {}",
+            newton_metres(run.motor.rated_torque),
+            newton_metres(run.motor.ceiling(standstill))
+        ),
+        newton_metres(at_start),
+    );
+    let (place, spare) = run.tightest();
+    b.line(
+        &format!("least spare torque, at {} rpm ({})", significant(place.rpm(), 4), run.train.load.words()),
+        "T − T_L",
+        format!(
+            "{} − {}",
+            newton_metres(run.motor.available(run.limit, place)),
+            newton_metres(run.train.opposing(place))
+        ),
+        newton_metres(spare),
+    );
+    b.figure("least spare torque", spare.newton_metres(), 3, "N·m");
+    let fastest = run.fastest();
+    let (Some(even), Some(least)) = (run.shortest_even_ramp(), fastest.time()) else {
+        return cannot(b, &run, &fastest.end);
+    };
+    let (even, least) = (even.seconds(), least.seconds());
+    b.line(
+        "shortest even ramp",
+        "t = J·2π·Δn/(60·(T − T_L))",
+        format!(
+            "{} kg·m² × 2π × {} rpm/(60 × {})",
+            significant(run.train.inertia.kilogram_square_metres(), 4),
+            significant(run.to.rpm() - run.from.rpm(), 4),
+            newton_metres(spare)
+        ),
+        format!("{} s", significant(even, 3)),
+    );
+    b.line(
+        "least time, always in the limit",
+        "t = J·∫dω/(T − T_L)",
+        "400 steps of speed",
+        format!("{} s", significant(least, 3)),
+    );
+    b.figure("shortest even ramp", even, 3, "s");
+    b.figure("least time", least, 3, "s");
+    b.limit(format!("at least {} s, the shortest even ramp that stays out of the current limit", significant(even, 3)));
+    b.rule(
+        LimitRule::linear("s")
+            .at_least(even, format!("≥ {} s", significant(even, 3)))
+            .tick(least, format!("least {} s", significant(least, 3))),
+    );
+    let Some(set) = set else { return b.not_assessed() };
+    judge(b, &run, set, even, least)
+}
+
+fn run_up(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<RampUp> {
+    let (motor, train, limit) = (inputs.machine.motor(b), inputs.machine.train(b), inputs.machine.limit(b));
+    b.assume(inputs.machine.breakaway.map(|_| ()), (), "breakaway torque", "none beyond the start of the load's curve");
+    let from = b.assume(inputs.from_speed, Speed::from_rpm(0.0), "speed at the start", "standstill");
+    let from = plausible::not_negative(b, Some(from), "speed at the start");
+    let motor = motor?;
+    let to = b.assume(inputs.to_speed, motor.rated_speed, "speed at the end", "rated speed");
+    let to = plausible::positive(b, Some(to), "speed at the end");
+    let (from, to) = (from?, to?);
+    let to = b.need((to.rpm() > from.rpm()).then_some(to), "speed at the end above the speed at the start")?;
+    Some(RampUp { motor, train: train?, limit: limit?, from, to })
+}
+
+/// No setting helps: the load is held or stalls with all the torque that the limit leaves.
+fn cannot(mut b: OutcomeBuilder, run: &RampUp, end: &End) -> Outcome {
+    b.limit("more torque than the load asks, at every speed on the way");
+    let (place, _) = run.tightest();
+    let (available, asked, because) = match end {
+        End::HeldAtStandstill { available, asked } => (
+            *available,
+            *asked,
+            format!(
+                "The load needs {} to break away and the limit leaves {}",
+                newton_metres(*asked),
+                newton_metres(*available)
+            ),
+        ),
+        End::Stalled { at } => (
+            run.motor.available(run.limit, place),
+            run.train.opposing(place),
+            format!(
+                "The run stalls at {} rpm: the limit leaves no torque over and above the load",
+                significant(at.rpm(), 4)
+            ),
+        ),
+        End::Reached | End::BusTripped { .. } => {
+            (run.motor.available(run.limit, place), run.train.opposing(place), "No torque is left over".to_owned())
+        }
+    };
+    b.rule(LimitRule::linear("N·m").at_least(asked.newton_metres(), format!("> {}", newton_metres(asked))).reading(
+        available.newton_metres(),
+        0.0,
+        newton_metres(available),
+        Verdict::Outside,
+    ));
+    b.judged(
+        Verdict::Outside,
+        format!("{because}. Look at the current limit, the load and the gear; a longer ramp does not help."),
+    )
+}
+
+fn judge(mut b: OutcomeBuilder, run: &RampUp, set: Duration, even: f64, least: f64) -> Outcome {
+    let predicted = run.on_ramp(set);
+    let seconds = set.seconds();
+    let taken = predicted.time().map_or(f64::NAN, Duration::seconds);
+    b.figure("predicted time on the set ramp", taken, 3, "s");
+    b.figure("highest current on the set ramp", predicted.peak_current().amperes(), 3, "A");
+    let verdict = match Measured::exact(seconds).at_least(even) {
+        Verdict::Within => Verdict::Within,
+        _ if seconds < least => Verdict::Outside,
+        _ => Verdict::Marginal,
+    };
+    let (set, taken, even) = (significant(seconds, 3), significant(taken, 3), significant(even, 3));
+    if let Some(rule) = b.take_rule() {
+        b.rule(rule.reading(seconds, 0.0, format!("set {set} s"), verdict));
+    }
+    b.line(
+        "on the set ramp",
+        "dn/dt = the set one, or what the limit leaves",
+        format!("{set} s set"),
+        format!("{taken} s"),
+    );
+    let between = predicted.limited_between().map_or_else(String::new, |(from, to)| {
+        format!(" from {} to {} rpm", significant(from.rpm(), 3), significant(to.rpm(), 3))
+    });
+    b.judged(
+        verdict,
+        match verdict {
+            Verdict::Within => format!("The set {set} s can be followed; the current limit acts below {even} s."),
+            Verdict::Outside => format!(
+                "Set {set} s; the load takes {} s at least, in the current limit all the way or nearly. Set {even} s or more.",
+                significant(least, 3)
+            ),
+            _ => format!("Set {set} s; the current limit acts{between} and stretches it to {taken} s. Set {even} s or more."),
+        },
+    )
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::motion::LoadTorque;
+    use crate::motion::machine::tests::fan;
+    use crate::quantity::{Current, Inertia, Torque};
+
+    fn set(seconds: f64) -> Inputs {
+        Inputs { machine: fan(), set_time: Some(Duration::from_seconds(seconds)), ..Inputs::default() }
+    }
+
+    fn figure(outcome: &Outcome, name: &str) -> f64 {
+        outcome.figures.iter().find(|f| f.name == name).expect("there").value.parse().expect("number")
+    }
+
+    #[test]
+    fn at_just_inside_and_just_outside() {
+        let first = check(&set(60.0));
+        let (even, least) = (figure(&first, "shortest even ramp"), figure(&first, "least time"));
+        assert_eq!(first.verdict, Verdict::Within);
+        assert!(least < even, "{least} {even}");
+        assert_eq!(check(&set(even * 1.01)).verdict, Verdict::Within);
+        let stretched = check(&set(even * 0.9));
+        assert_eq!(stretched.verdict, Verdict::Marginal);
+        assert!(figure(&stretched, "predicted time on the set ramp") > even * 0.9);
+        assert_eq!(check(&set(least * 0.99)).verdict, Verdict::Outside);
+    }
+
+    /// Row RM-01, C-RM-003 by its figures: 1.2 kg·m², 97 N·m against 40 N·m, 1470 rpm: 3.24 s.
+    #[test]
+    fn a_constant_load_takes_the_published_time() {
+        let mut inputs = set(60.0);
+        inputs.machine.motor_inertia = Some(Inertia::from_kilogram_square_metres(0.2));
+        inputs.machine.load_inertia = Some(Inertia::from_kilogram_square_metres(1.0));
+        inputs.machine.load = Some(LoadTorque::Constant(Torque::from_newton_metres(40.0)));
+        // Rated current: 97.44 N·m, so 3.2408 s × 57/57.44.
+        inputs.machine.current_limit = Some(Current::from_amperes(28.5));
+        let outcome = check(&inputs);
+        assert!((figure(&outcome, "least time") - 3.216).abs() < 0.011, "{outcome:?}");
+        assert!((figure(&outcome, "shortest even ramp") - 3.216).abs() < 0.011);
+    }
+
+    #[test]
+    fn the_limit_is_there_before_the_setting() {
+        let outcome = check(&Inputs { set_time: None, ..set(1.0) });
+        assert_eq!(outcome.verdict, Verdict::NotAssessed);
+        assert!(outcome.limit.starts_with("at least ") && outcome.rule.is_some());
+        assert_eq!(outcome.missing[0].what, "set acceleration time");
+    }
+
+    #[test]
+    fn breakaway_and_stall_are_outside_whatever_is_set() {
+        let mut inputs = set(600.0);
+        inputs.machine.breakaway = Some(Torque::from_newton_metres(200.0));
+        let outcome = check(&inputs);
+        assert_eq!(outcome.verdict, Verdict::Outside);
+        assert!(outcome.summary.contains("break away"), "{}", outcome.summary);
+        let mut inputs = set(600.0);
+        inputs.machine.load =
+            Some(LoadTorque::Quadratic { torque: Torque::from_newton_metres(150.0), speed: Speed::from_rpm(1470.0) });
+        assert!(check(&inputs).summary.contains("stalls at"), "{}", check(&inputs).summary);
+    }
+
+    #[test]
+    fn impossible_numbers_are_not_assessed() {
+        for bad in [0.0, -3.0, f64::NAN, f64::INFINITY] {
+            assert_eq!(check(&set(bad)).verdict, Verdict::NotAssessed);
+            let mut inputs = set(10.0);
+            inputs.to_speed = Some(Speed::from_rpm(bad));
+            assert_eq!(check(&inputs).verdict, Verdict::NotAssessed);
+            inputs = set(10.0);
+            inputs.machine.motor_inertia = Some(Inertia::from_kilogram_square_metres(bad));
+            assert_eq!(check(&inputs).verdict, Verdict::NotAssessed);
+        }
+        assert!(trace(&Inputs::default()).is_none() && trace(&set(10.0)).is_some());
+    }
+}

@@ -1,0 +1,166 @@
+//! # disconnection
+//!
+//! Automatic disconnection ahead of the drive: Z_s ≤ U₀/I_a, Z_s the earth-fault loop impedance, U₀ the nominal volts
+//! to earth, I_a the current that operates the protective device in the time that the rules ask for (TN system,
+//! IEC 60364-4-41, from memory). Without a loop reading the design's proof can stand in, as a figure.
+//! Behind the drive's output its own electronics limit the fault current: that part rests on the drive's manual.
+
+use crate::decision::Measured;
+use crate::formulas::marking::mark;
+use crate::formulas::plausible::{positive, positive_reading};
+use crate::limit_rule::LimitRule;
+use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
+use crate::quantity::{Current, Resistance, Voltage};
+use crate::reading::Reading;
+use crate::rounding::significant;
+use crate::sources::earthing::{DISCONNECTION, PE_08};
+
+/// Name in the catalogue.
+pub const NAME: &str = "disconnection";
+
+/// What the check takes.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Inputs {
+    /// Earth-fault loop impedance at the drive's line terminals.
+    pub loop_impedance: Option<Reading<Resistance>>,
+    /// Nominal volts from line to earth.
+    pub voltage_to_earth: Option<Voltage>,
+    /// Current that operates the device in the required time.
+    pub operating_current: Option<Current>,
+    /// Largest loop impedance that the site or the device's maker states; replaces U₀/I_a.
+    pub stated_limit: Option<Resistance>,
+    /// Whether the design's own proof of disconnection was seen.
+    pub proved_by_design: Option<bool>,
+}
+
+/// Largest loop impedance, U₀/I_a.
+#[must_use]
+pub fn largest_loop(to_earth: Voltage, operating: Current) -> Resistance {
+    Resistance::from_ohms(to_earth.volts() / operating.amperes())
+}
+
+/// Runs the check.
+#[must_use]
+pub fn check(inputs: &Inputs) -> Outcome {
+    let mut b = OutcomeBuilder::new(NAME);
+    b.cite(DISCONNECTION);
+    b.cite(PE_08);
+    b.note("A loop measured cold reads lower than at working temperature; a site rule may ask for a smaller limit. Local rules go first.");
+    let seen = inputs.proved_by_design == Some(true);
+    if seen && inputs.loop_impedance.is_none() {
+        return b.as_figure(
+            "No loop impedance measured; the design's own proof of disconnection was seen and is relied on.",
+        );
+    }
+    let Some(limit) = limit(&mut b, inputs) else {
+        return b.not_assessed();
+    };
+    let limit_shown = significant(limit, 3);
+    b.limit(format!("loop impedance at most {limit_shown} Ω"));
+    b.rule(LimitRule::linear("Ω").at_most(limit, format!("≤ {limit_shown} Ω")));
+    let Some(reading) = positive_reading(&mut b, inputs.loop_impedance.as_ref(), "earth-fault loop impedance") else {
+        return b.not_assessed();
+    };
+    let measured = Measured::direct(&reading);
+    let verdict = measured.at_most(limit);
+    let shown = significant(measured.value, 3);
+    if let Some(to_earth) = inputs.voltage_to_earth {
+        let fault = to_earth.volts() / measured.value;
+        b.figure("earth-fault current", fault, 3, "A");
+        b.line(
+            "earth-fault current",
+            "U₀/Z_s",
+            format!("{} V/{shown} Ω", significant(to_earth.volts(), 4)),
+            format!("{} A", significant(fault, 3)),
+        );
+    }
+    mark(&mut b, &measured, format!("{shown} Ω"), verdict);
+    b.judged(
+        verdict,
+        match verdict {
+            Verdict::Outside => format!("Loop impedance {shown} Ω, above {limit_shown} Ω: the device need not trip in time. Do not energise; check the protective conductor's joints, the section and the device."),
+            Verdict::Marginal => format!("Loop impedance {shown} Ω: the instrument cannot tell it from the {limit_shown} Ω limit, or its word does not count."),
+            _ => format!("Loop impedance {shown} Ω, at most {limit_shown} Ω."),
+        },
+    )
+}
+
+/// The limit in ohms, with its working.
+fn limit(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
+    if let Some(stated) = inputs.stated_limit {
+        let ohms = positive(b, Some(stated), "stated largest loop impedance")?.ohms();
+        b.line(
+            "limit",
+            "as stated by the site or the device's maker",
+            String::new(),
+            format!("{} Ω", significant(ohms, 3)),
+        );
+        return Some(ohms);
+    }
+    let to_earth = positive(b, inputs.voltage_to_earth, "nominal volts to earth");
+    let operating = positive(b, inputs.operating_current, "operating current of the protective device");
+    let (to_earth, operating) = (to_earth?, operating?);
+    let ohms = positive(b, Some(largest_loop(to_earth, operating)), "largest loop impedance")?.ohms();
+    b.line(
+        "limit",
+        "Z_s ≤ U₀/I_a",
+        format!("{} V/{} A", significant(to_earth.volts(), 4), significant(operating.amperes(), 4)),
+        format!("{} Ω", significant(ohms, 3)),
+    );
+    Some(ohms)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::reading::Accuracy;
+
+    fn measured(ohms: f64) -> Inputs {
+        let tester = Accuracy {
+            percent_of_reading: 5.0,
+            digits: 0.0,
+            resolution: 0.01,
+            percent_of_full_scale: 0.0,
+            full_scale: 0.0,
+        };
+        Inputs {
+            loop_impedance: Some(Reading::with(Resistance::from_ohms(ohms), tester)),
+            voltage_to_earth: Some(Voltage::from_volts(230.0)),
+            operating_current: Some(Current::from_amperes(320.0)),
+            ..Inputs::default()
+        }
+    }
+
+    /// IEC 60364-4-41 clause 411.4 (from memory): 230 V and a device that needs 320 A allow 0.719 Ω.
+    #[test]
+    fn at_just_inside_and_just_outside() {
+        for (ohms, verdict) in
+            [(0.68, Verdict::Within), (0.719, Verdict::Marginal), (0.75, Verdict::Marginal), (0.76, Verdict::Outside)]
+        {
+            assert_eq!(check(&measured(ohms)).verdict, verdict, "{ohms}");
+        }
+        let bare = Inputs { loop_impedance: Some(Reading::bare(Resistance::from_ohms(0.1))), ..measured(0.0) };
+        assert_eq!(check(&bare).verdict, Verdict::Marginal);
+    }
+
+    #[test]
+    fn a_stated_limit_goes_first_and_the_designs_proof_is_a_figure() {
+        let stated = Inputs { stated_limit: Some(Resistance::from_ohms(0.5)), ..measured(0.6) };
+        assert_eq!(check(&stated).verdict, Verdict::Outside);
+        let design = Inputs { proved_by_design: Some(true), ..Inputs::default() };
+        assert_eq!(check(&design).verdict, Verdict::Figure);
+        assert_eq!(check(&Inputs { proved_by_design: Some(true), ..measured(2.0) }).verdict, Verdict::Outside);
+    }
+
+    #[test]
+    fn the_limit_is_there_before_the_reading() {
+        let outcome = check(&Inputs { loop_impedance: None, ..measured(0.0) });
+        assert_eq!((outcome.limit.as_str(), outcome.rule.is_some()), ("loop impedance at most 0.719 Ω", true));
+        assert_eq!(outcome.missing[0].what, "earth-fault loop impedance");
+        assert_eq!(check(&measured(0.0)).verdict, Verdict::NotAssessed);
+        assert_eq!(
+            check(&Inputs { operating_current: Some(Current::from_amperes(0.0)), ..measured(0.5) }).verdict,
+            Verdict::NotAssessed
+        );
+    }
+}

@@ -1,0 +1,18 @@
+//! # measured-acceleration
+//!
+//! The time the load took to speed up, against the set and the predicted time.
+//!
+//! More than 10 % off the set time, either way: marginal. Beyond the predicted time plus 25 %: outside. Both are common
+//! practice, no source. Predicted is the time of `acceleration-time` on the set ramp; without it nothing is outside.
+
+pub use crate::motion::measured_ramp::Inputs;
+use crate::outcome::Outcome;
+
+/// Name in the catalogue.
+pub const NAME: &str = "measured-acceleration";
+
+/// Runs the check.
+#[must_use]
+pub fn check(inputs: &Inputs) -> Outcome {
+    crate::motion::measured_ramp::check(NAME, "acceleration", inputs)
+}
