@@ -1,0 +1,12 @@
+//! Tests of what may happen and who may do it.
+
+mod entries;
+mod fields;
+mod findings;
+mod holds;
+mod isolation;
+mod moves;
+mod parameters;
+mod people;
+mod roles;
+mod signing;

@@ -1,0 +1,182 @@
+//! Which check takes which entries: from a drive's fields, entries and parameters to the catalogue's outcomes.
+
+mod cable;
+pub mod catalogue;
+pub mod motion;
+mod nameplate;
+mod runs;
+mod settings;
+mod supply;
+mod take;
+#[cfg(test)]
+mod tests;
+mod windings;
+
+use crate::plant::{Sheet, Site, flags_of};
+use crate::procedure::{Procedure, applies};
+use crate::record::{Drive, ParameterColumn};
+use engineering::{Outcome, Verdict};
+use serde::{Deserialize, Serialize};
+use std::collections::BTreeSet;
+
+/// A check's outcome for one thing it was run for.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Judged {
+    /// The step it is shown at; empty for nameplate checks.
+    pub step: String,
+    /// What it was run for, where a check runs more than once: "50 %", "as left", "rating column 2".
+    #[serde(default)]
+    pub of: String,
+    /// What it says.
+    pub outcome: Outcome,
+}
+
+/// Everything a check may look at.
+#[derive(Clone, Copy, Debug)]
+pub struct View<'a> {
+    /// The drive with its record.
+    pub drive: &'a Drive,
+    /// Its site: supply and site rules.
+    pub site: &'a Site,
+    /// The procedure of its record, or the newest.
+    pub procedure: &'a Procedure,
+}
+
+impl View<'_> {
+    /// Fitted options of the drive, and those of the site's supply where the drive has no value of its own.
+    #[must_use]
+    pub fn flags(&self) -> BTreeSet<String> {
+        let mut fields = self.drive.fields.clone();
+        for (place, slot) in &self.site.fields {
+            let own = fields.get(place).and_then(|s| s.current()).is_some_and(|r| r.value.is_some());
+            if place.sheet == Sheet::Supply && !own {
+                fields.insert(place.clone(), slot.clone());
+            }
+        }
+        flags_of(&fields)
+    }
+}
+
+/// What a check said for each thing it was run for: "50 %", "as left"; empty where it runs once.
+type Runs = Vec<(String, Outcome)>;
+
+/// A check that runs once.
+fn once(outcome: Outcome) -> Runs {
+    vec![(String::new(), outcome)]
+}
+
+/// Runs a check for every row of a table in which the item was entered; once, for its limit, while none was.
+fn per_row(view: &View<'_>, item: &str, run: impl Fn(u16) -> Outcome) -> Runs {
+    let rows = view.rows_of(item);
+    let entered: Runs = (0u16..)
+        .zip(rows)
+        .filter(|(row, _)| view.entry(item, *row).is_some())
+        .map(|(row, label)| (label, run(row)))
+        .collect();
+    if entered.is_empty() { once(run(0)) } else { entered }
+}
+
+/// Runs a settings check for what is intended and, once anything it reads was left, for what was left.
+fn both_columns(view: &View<'_>, functions: &[&str], run: impl Fn(ParameterColumn) -> Outcome) -> Runs {
+    let stands = |column| functions.iter().any(|f| view.parameter(f, column).is_some());
+    let mut runs = Vec::new();
+    for column in [ParameterColumn::Intended, ParameterColumn::AsLeft] {
+        if stands(column) {
+            runs.push((column.words().to_owned(), run(column)));
+        }
+    }
+    if runs.is_empty() {
+        runs.push((ParameterColumn::Intended.words().to_owned(), run(ParameterColumn::Intended)));
+    }
+    runs
+}
+
+/// Runs one check of the catalogue as shown at a step.
+fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
+    let Some((_, _, runner)) = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name) else {
+        return Vec::new();
+    };
+    let runs = match runner {
+        catalogue::Runner::Anywhere(run) => run(view),
+        catalogue::Runner::AtStep(run) => run(view, step),
+    };
+    runs.into_iter().map(|(of, outcome)| Judged { step: step.to_owned(), of, outcome }).collect()
+}
+
+fn group(view: &View<'_>, group: catalogue::Group) -> Vec<Judged> {
+    catalogue::CATALOGUE.iter().filter(|(_, g, _)| *g == group).flat_map(|(name, ..)| run(view, name, "")).collect()
+}
+
+/// All checks of a drive with their outcomes, in the order of the procedure. A check that says the same at several
+/// steps is listed at the first of them; one that no applicable step shows is listed with the nameplates, before all.
+#[must_use]
+pub fn all(view: &View<'_>) -> Vec<Judged> {
+    let flags = view.flags();
+    let mut judged: Vec<Judged> = Vec::new();
+    for (_, step) in view.procedure.steps().filter(|(_, s)| applies(&s.when, &flags)) {
+        for name in &step.checks {
+            let fresh = run(view, name, &step.id);
+            let new = |one: &Judged| !judged.iter().any(|j| j.of == one.of && j.outcome == one.outcome);
+            let fresh: Vec<Judged> = fresh.into_iter().filter(new).collect();
+            judged.extend(fresh);
+        }
+    }
+    let mut unshown = plates(view);
+    unshown.retain(|p| !judged.iter().any(|j| j.outcome.check == p.outcome.check));
+    unshown.extend(judged);
+    unshown
+}
+
+/// The checks shown at a step.
+#[must_use]
+pub fn step(view: &View<'_>, step: &str) -> Vec<Judged> {
+    let Some((_, found)) = view.procedure.step(step) else { return Vec::new() };
+    found.checks.iter().flat_map(|name| run(view, name, &found.id)).collect()
+}
+
+/// The checks of the nameplates and sheets.
+#[must_use]
+pub fn plates(view: &View<'_>) -> Vec<Judged> {
+    group(view, catalogue::Group::Plate)
+}
+
+/// The checks of the parameter record; `of` tells which column.
+#[must_use]
+pub fn parameters(view: &View<'_>) -> Vec<Judged> {
+    group(view, catalogue::Group::Setting)
+}
+
+/// How many outcomes there are of each verdict.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct Counts {
+    /// Within.
+    pub within: usize,
+    /// Marginal.
+    pub marginal: usize,
+    /// Outside.
+    pub outside: usize,
+    /// Not assessed.
+    pub not_assessed: usize,
+    /// Figures, which have no verdict.
+    pub figure: usize,
+}
+
+impl Counts {
+    /// Counts these.
+    #[must_use]
+    pub fn of(judged: &[Judged]) -> Self {
+        let mut counts = Self::default();
+        for one in judged {
+            match one.outcome.verdict {
+                Verdict::Within => counts.within += 1,
+                Verdict::Marginal => counts.marginal += 1,
+                Verdict::Outside => counts.outside += 1,
+                Verdict::NotAssessed => counts.not_assessed += 1,
+                Verdict::Figure => counts.figure += 1,
+            }
+        }
+        counts
+    }
+}

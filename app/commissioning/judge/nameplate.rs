@@ -1,0 +1,204 @@
+//! Inputs of the nameplate and fit checks.
+
+use super::{Runs, View, once};
+use crate::plant::Sheet::{Drive, DrivePlate, Further, Load, Motor, Site, Supply};
+use engineering::checks::{
+    connection_fit, drive_current_fit, efficiency_class, full_load_current, low_speed_cooling, overload_fit,
+    pole_pairs, power_balance, rated_torque, rated_volts_per_hertz,
+};
+use engineering::overload::Overload;
+use engineering::printed::Printed;
+use engineering::quantity::Quantity;
+use engineering::{Frequency, Kind, Ratio, Voltage};
+
+/// Every rating column that has anything in it, with its words when there are several.
+fn columns(view: &View<'_>) -> Vec<(u8, String)> {
+    let filled: Vec<u8> = (0..Motor.columns())
+        .filter(|c| {
+            view.drive.fields.keys().any(|p| p.sheet == Motor && p.column == *c && view.drive.field(p).is_some())
+        })
+        .collect();
+    let several = filled.len() > 1;
+    let words = |c: u8| if several { format!("rating column {}", c + 1) } else { String::new() };
+    if filled.is_empty() { vec![(0, String::new())] } else { filled.into_iter().map(|c| (c, words(c))).collect() }
+}
+
+/// A figure of a rating column as printed, with the half step of its last digit.
+fn printed<Q: Quantity>(view: &View<'_>, column: u8, field: &str, kind: Kind) -> Option<Printed<Q>> {
+    let typed = view.value(Motor, column, field)?;
+    let unit = kind.unit(typed.unit.as_deref().unwrap_or_default()).unwrap_or(kind.usual());
+    Some(Printed::from_text(Q::from_coherent(typed.number()?), &typed.text, Q::from_coherent(unit.factor)))
+}
+
+pub(super) fn pole_pairs(view: &View<'_>) -> Runs {
+    columns(view)
+        .into_iter()
+        .map(|(c, of)| {
+            let inputs = pole_pairs::Inputs {
+                rated_frequency: view.motor_in(c, "hertz"),
+                rated_speed: printed(view, c, "rpm", Kind::Speed),
+                rated_power: view.motor_in(c, "power"),
+                printed_poles: view.count(Motor, "poles"),
+            };
+            (of, pole_pairs::check(&inputs))
+        })
+        .collect()
+}
+
+pub(super) fn power_balance(view: &View<'_>) -> Runs {
+    columns(view)
+        .into_iter()
+        .map(|(c, of)| {
+            let inputs = power_balance::Inputs {
+                voltage: printed(view, c, "volts", Kind::Voltage),
+                current: printed(view, c, "amps", Kind::Current),
+                power: printed(view, c, "power", Kind::Power),
+                power_factor: printed(view, c, "power-factor", Kind::Number),
+                efficiency: printed(view, c, "efficiency", Kind::Percent),
+            };
+            (of, power_balance::check(&inputs))
+        })
+        .collect()
+}
+
+pub(super) fn rated_torque(view: &View<'_>) -> Runs {
+    once(rated_torque::check(&rated_torque::Inputs {
+        rated_power: view.motor("power"),
+        rated_speed: view.motor("rpm"),
+    }))
+}
+
+pub(super) fn rated_volts_per_hertz(view: &View<'_>) -> Runs {
+    once(rated_volts_per_hertz::check(&rated_volts_per_hertz::Inputs {
+        rated_voltage: view.motor("volts"),
+        rated_frequency: view.motor("hertz"),
+    }))
+}
+
+pub(super) fn efficiency_class(view: &View<'_>) -> Runs {
+    use efficiency_class::{Inputs, check};
+    use engineering::formulas::efficiency_class::Class;
+    let printed_class = match view.choice(Motor, "efficiency-class") {
+        Some("ie1") => Some(Class::Ie1),
+        Some("ie2") => Some(Class::Ie2),
+        Some("ie3") => Some(Class::Ie3),
+        Some("ie4") => Some(Class::Ie4),
+        _ => None,
+    };
+    let poles = match (view.motor::<Frequency>("hertz"), view.motor("rpm")) {
+        (Some(f), Some(n)) => engineering::formulas::synchronous::pole_pairs(f, n).map(|pairs| pairs * 2),
+        _ => None,
+    };
+    once(check(&Inputs {
+        rated_power: view.motor("power"),
+        poles,
+        rated_frequency: view.motor("hertz"),
+        efficiency: view.motor("efficiency"),
+        printed_class,
+    }))
+}
+
+pub(super) fn full_load_current(view: &View<'_>) -> Runs {
+    once(full_load_current::check(&full_load_current::Inputs {
+        rated_power: view.motor("power"),
+        rated_voltage: view.motor("volts"),
+        rated_current: view.motor("amps"),
+    }))
+}
+
+/// The drive's overload as printed.
+pub(super) fn overload(view: &View<'_>) -> Option<Overload> {
+    Some(Overload {
+        multiple: view.plate(DrivePlate, "overload")?,
+        lasting: view.plate(DrivePlate, "overload-time")?,
+        every: view.plate(DrivePlate, "overload-period")?,
+    })
+}
+
+pub(super) fn drive_current_fit(view: &View<'_>) -> Runs {
+    once(drive_current_fit::check(&drive_current_fit::Inputs {
+        drive_current: view.plate(DrivePlate, "continuous-current"),
+        overload: overload(view),
+        motor_current: view.motor("amps"),
+        maker_reduction: view.plate(DrivePlate, "reduction"),
+        altitude: view.plate(Drive, "altitude").or_else(|| view.plate(Site, "altitude")),
+        ambient: view.plate(Drive, "ambient-high").or_else(|| view.plate(Site, "ambient-high")),
+        lost_per_hundred_metres: view.plate(DrivePlate, "lost-per-hundred-metres"),
+        lost_per_kelvin: view.plate(DrivePlate, "lost-per-kelvin"),
+    }))
+}
+
+pub(super) fn overload_fit(view: &View<'_>) -> Runs {
+    let (breakaway_torque, acceleration_torque) = super::motion::torques(view);
+    once(overload_fit::check(&overload_fit::Inputs {
+        drive_current: view.plate(DrivePlate, "continuous-current"),
+        overload: overload(view),
+        rated_current: view.motor("amps"),
+        power_factor: view.motor("power-factor"),
+        breakdown: view.plate(Motor, "breakdown-torque"),
+        rated_power: view.motor("power"),
+        rated_speed: view.motor("rpm"),
+        breakaway_torque,
+        acceleration_torque,
+        acceleration_time: super::motion::start_time(view),
+        time_between_starts: view.plate(Further, "start-interval"),
+    }))
+}
+
+pub(super) fn connection_fit(view: &View<'_>) -> Runs {
+    use connection_fit::{Connection, Inputs, check};
+    let in_use = view.column_in_use();
+    let hertz: Option<Frequency> = view.motor("hertz");
+    let volts_of = |wanted: &[&str]| -> Option<Voltage> {
+        (0..Motor.columns())
+            .filter(|c| view.motor_in::<Frequency>(*c, "hertz") == hertz)
+            .find(|c| view.value(Motor, *c, "connection").is_some_and(|t| wanted.contains(&t.text.as_str())))
+            .and_then(|c| view.motor_in(c, "volts"))
+    };
+    // A single-voltage motor with sealed links counts with the connection of its column in use.
+    let star_voltage = volts_of(&["star", "high"]);
+    let delta_voltage = volts_of(&["delta", "low"]);
+    let found = match view.chosen("links-found") {
+        Some("star" | "high") => Some(Connection::Star),
+        Some("delta" | "low") => Some(Connection::Delta),
+        _ => None,
+    };
+    let planned = match view.value(Motor, in_use, "connection").map(|t| t.text.as_str()) {
+        Some("star" | "high") => Some(Connection::Star),
+        Some("delta" | "low") => Some(Connection::Delta),
+        _ => None,
+    };
+    once(check(&Inputs {
+        star_voltage,
+        delta_voltage,
+        plate_frequency: hertz,
+        supply_voltage: view.plate(Supply, "volts"),
+        output_voltage: view.plate(DrivePlate, "output-volts").or_else(|| view.in_force("base-volts")),
+        base_frequency: view.in_force("base-frequency").or_else(|| view.plate(Further, "design-base-hertz")),
+        found: found.or(planned),
+        maker_allows_raised_base: view.flag(Motor, "raised-base-allowed"),
+    }))
+}
+
+pub(super) fn low_speed_cooling(view: &View<'_>) -> Runs {
+    use low_speed_cooling::{Cooling, Inputs, check};
+    let cooling = match view.choice(Motor, "cooling") {
+        Some("self") => Some(Cooling::SelfCooled),
+        Some(_) => Some(Cooling::Separate),
+        None => None,
+    };
+    let profile = view.choice(Load, "profile");
+    let rated = super::motion::rated_torque(view).map(engineering::Torque::newton_metres);
+    let load = super::motion::load_torque_at_shaft(view).map(engineering::Torque::newton_metres);
+    let share = match (profile, load, rated) {
+        (Some("constant"), Some(load), Some(rated)) if rated > 0.0 => Some(Ratio::from_fraction(load / rated)),
+        _ => None,
+    };
+    once(check(&Inputs {
+        cooling,
+        lowest_frequency: view.in_force("minimum-frequency"),
+        rated_frequency: view.motor("hertz"),
+        load_torque: share,
+        maker_torque: None,
+    }))
+}

@@ -1,0 +1,4 @@
+//! The project's own tests across crates: its architecture, and the whole job from the outside.
+
+mod architecture;
+mod engineering_basis;
