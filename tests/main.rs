@@ -2,3 +2,4 @@
 
 mod architecture;
 mod engineering_basis;
+mod licences;

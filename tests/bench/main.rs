@@ -5,6 +5,7 @@ mod checks;
 mod document;
 mod pages;
 mod saves;
+mod start;
 
 fn main() {
     // `cargo test --benches` and `cargo bench -- --list` only want to know that it builds.
@@ -22,6 +23,9 @@ fn main() {
     }
     if asked("saves") {
         saves::run();
+    }
+    if asked("start") {
+        start::run();
     }
     if asked("pages") {
         pages::run();
