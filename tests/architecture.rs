@@ -82,7 +82,11 @@ fn every_crate_folder_is_in_the_list_of_layers() {
 #[test]
 fn the_engineering_depends_on_libm_alone() {
     let manifest = fs::read_to_string(root().join("app/engineering/Cargo.toml")).expect("manifest");
-    assert_eq!(names_under(&manifest, "[dependencies]"), ["libm", "serde"], "serde only as an option, see docs/decisions/0002");
+    assert_eq!(
+        names_under(&manifest, "[dependencies]"),
+        ["libm", "serde"],
+        "serde only as an option, see docs/decisions/0002"
+    );
     assert!(manifest.contains("serde = { workspace = true, optional = true }"));
 }
 
@@ -124,7 +128,8 @@ fn no_file_is_named_after_nothing() {
     for path in rust_files() {
         let stem = path.file_stem().expect("named").to_string_lossy().into_owned();
         assert!(
-            !["utils", "util", "helpers", "helper", "common", "misc", "manager", "service", "data", "info"].contains(&stem.as_str()),
+            !["utils", "util", "helpers", "helper", "common", "misc", "manager", "service", "data", "info"]
+                .contains(&stem.as_str()),
             "{}",
             shown(&path)
         );

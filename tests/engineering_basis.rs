@@ -70,10 +70,12 @@ fn sources_page() -> String {
     for file in rust_files("app/engineering/sources") {
         let text = fs::read_to_string(&file).expect("readable");
         let area = file.file_stem().expect("named").to_string_lossy().replace('_', " ");
-        let _ = write!(page, "\n## {area}\n\n| id | source | confirmed | safety may depend on it |\n|---|---|---|---|\n");
+        let _ =
+            write!(page, "\n## {area}\n\n| id | source | confirmed | safety may depend on it |\n|---|---|---|---|\n");
         for block in text.split("Source {").skip(1) {
             let (Some(id), Some(words)) = (quoted(block, "id"), quoted(block, "text")) else { continue };
-            let status = block.split_once("Status::").map_or("", |(_, s)| s.split([',', '}', ' ']).next().unwrap_or_default());
+            let status =
+                block.split_once("Status::").map_or("", |(_, s)| s.split([',', '}', ' ']).next().unwrap_or_default());
             let status = match status {
                 "Confirmed" => engineering::Status::Confirmed,
                 "Arithmetic" => engineering::Status::Arithmetic,

@@ -1,5 +1,6 @@
 //! The project's own tests across crates: its architecture, and the whole job from the outside.
 
 mod architecture;
+mod browser;
 mod engineering_basis;
 mod licences;

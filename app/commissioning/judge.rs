@@ -12,6 +12,7 @@ mod take;
 mod tests;
 mod windings;
 
+use crate::agenda::{Agenda, StepState};
 use crate::plant::{Sheet, Site, flags_of};
 use crate::procedure::{Procedure, applies};
 use crate::record::{Drive, ParameterColumn};
@@ -94,7 +95,7 @@ fn both_columns(view: &View<'_>, functions: &[&str], run: impl Fn(ParameterColum
 
 /// Runs one check of the catalogue as shown at a step.
 fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
-    let Some((_, _, runner)) = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name) else {
+    let Some((.., runner)) = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name) else {
         return Vec::new();
     };
     let runs = match runner {
@@ -105,7 +106,7 @@ fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
 }
 
 fn group(view: &View<'_>, group: catalogue::Group) -> Vec<Judged> {
-    catalogue::CATALOGUE.iter().filter(|(_, g, _)| *g == group).flat_map(|(name, ..)| run(view, name, "")).collect()
+    catalogue::CATALOGUE.iter().filter(|(_, _, g, _)| *g == group).flat_map(|(name, ..)| run(view, name, "")).collect()
 }
 
 /// All checks of a drive with their outcomes, in the order of the procedure. A check that says the same at several
@@ -114,8 +115,13 @@ fn group(view: &View<'_>, group: catalogue::Group) -> Vec<Judged> {
 pub fn all(view: &View<'_>) -> Vec<Judged> {
     let flags = view.flags();
     let mut judged: Vec<Judged> = Vec::new();
+    let mut ran: BTreeSet<&str> = BTreeSet::new();
     for (_, step) in view.procedure.steps().filter(|(_, s)| applies(&s.when, &flags)) {
         for name in &step.checks {
+            // One that is the same wherever it is shown would only be worked out again to be left out below.
+            if !ran.insert(name) && is_the_same_anywhere(name) {
+                continue;
+            }
             let fresh = run(view, name, &step.id);
             let new = |one: &Judged| !judged.iter().any(|j| j.of == one.of && j.outcome == one.outcome);
             let fresh: Vec<Judged> = fresh.into_iter().filter(new).collect();
@@ -126,6 +132,11 @@ pub fn all(view: &View<'_>) -> Vec<Judged> {
     unshown.retain(|p| !judged.iter().any(|j| j.outcome.check == p.outcome.check));
     unshown.extend(judged);
     unshown
+}
+
+fn is_the_same_anywhere(name: &str) -> bool {
+    let runner = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name).map(|(.., runner)| runner);
+    matches!(runner, Some(catalogue::Runner::Anywhere(_)))
 }
 
 /// The checks shown at a step.
@@ -145,6 +156,14 @@ pub fn plates(view: &View<'_>) -> Vec<Judged> {
 #[must_use]
 pub fn parameters(view: &View<'_>) -> Vec<Judged> {
     group(view, catalogue::Group::Setting)
+}
+
+/// Leaves out what is not assessed only because its step was not reached yet: what lists and boards count.
+#[must_use]
+pub fn reached(mut judged: Vec<Judged>, agenda: &Agenda) -> Vec<Judged> {
+    let begun = |step: &str| agenda.step(step).is_some_and(|(_, s)| s.state != StepState::Open);
+    judged.retain(|j| j.outcome.verdict != Verdict::NotAssessed || begun(&j.step));
+    judged
 }
 
 /// How many outcomes there are of each verdict.

@@ -27,7 +27,10 @@ fn material() -> Material {
         .block_on(async {
             let site = store.site_by_tag(&demo.site_tag).await?.expect("the demo's site");
             store
-                .board(site.id, store::BoardFilter { status: Some(store::StatusKey::Accepted), ..store::BoardFilter::default() })
+                .board(
+                    site.id,
+                    store::BoardFilter { status: Some(store::StatusKey::Accepted), ..store::BoardFilter::default() },
+                )
                 .await
         })
         .expect("the board");
@@ -43,7 +46,8 @@ pub fn run() {
     let first = handover::package::assemble(&material, &key).expect("assembles");
     println!("| package, first in the process | {:.3?} | | | |", begun.elapsed());
     let page = folder.path().join("page.html");
-    let rows: String = page_text(first.document(), folder.path()).lines().map(|l| format!("<tr><td>{l}</td></tr>")).collect();
+    let rows: String =
+        page_text(first.document(), folder.path()).lines().map(|l| format!("<tr><td>{l}</td></tr>")).collect();
     std::fs::write(&page, format!("<!doctype html><meta charset=utf-8><table>{rows}</table>")).expect("a page");
     let both = alternate::medians(
         5,
@@ -52,7 +56,13 @@ pub fn run() {
         },
         || {
             let printed = Command::new("chromium")
-                .args(["--headless", "--no-sandbox", "--disable-gpu", "--no-first-run", "--disable-background-networking"])
+                .args([
+                    "--headless",
+                    "--no-sandbox",
+                    "--disable-gpu",
+                    "--no-first-run",
+                    "--disable-background-networking",
+                ])
                 .arg(format!("--user-data-dir={}", folder.path().join("profile").display()))
                 .arg(format!("--print-to-pdf={}", folder.path().join("printed.pdf").display()))
                 .arg(format!("file://{}", page.display()))

@@ -18,7 +18,8 @@ pub fn run() {
     let store = Store::open(&folder.path().join("store"), now).expect("a store");
     let demo = seed_demo::load(&store, now).expect("the demo loads");
     let installation = store.installation().wait().expect("readable");
-    let person = installation.people.values().find(|p| p.is(commissioning::people::Role::Engineer)).expect("an engineer").id;
+    let person =
+        installation.people.values().find(|p| p.is(commissioning::people::Role::Engineer)).expect("an engineer").id;
     let site = store.site_by_tag(&demo.site_tag).wait().expect("readable").expect("the site");
     let open = |id: &&DriveId| {
         let drive = store.drive(**id).wait().expect("readable").expect("the drive");

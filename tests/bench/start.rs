@@ -44,7 +44,7 @@ pub fn run() {
             });
         },
         || {
-            let connection = rusqlite::Connection::open(data.join("asleft.sqlite")).expect("opens");
+            let connection = rusqlite::Connection::open(data.join("store.sqlite")).expect("opens");
             let pages: i64 = connection.query_row("PRAGMA page_count", [], |r| r.get(0)).expect("counts");
             assert!(pages > 0);
         },
@@ -72,7 +72,11 @@ fn fill(data: &std::path::Path, now: Timestamp) -> String {
     perform(Some(person), fresh(), Deed::CreateSite { site, tag: "many".to_owned(), name: "Many drives".to_owned() });
     for n in 0..DRIVES {
         let drive = DriveId(fresh());
-        perform(Some(person), fresh(), Deed::CreateDrive { site, drive, tag: format!("PU-{n:04}"), name: "Pump".to_owned() });
+        perform(
+            Some(person),
+            fresh(),
+            Deed::CreateDrive { site, drive, tag: format!("PU-{n:04}"), name: "Pump".to_owned() },
+        );
     }
     store.open_session(person, SessionKind::Enrolled, now).wait().expect("a session")
 }

@@ -215,6 +215,10 @@ pub(super) fn deceleration_time(view: &View<'_>) -> Runs {
 }
 
 pub(super) fn braking(view: &View<'_>) -> Runs {
+    if view.flag(Drive, "brake-chopper") == Some(false) {
+        // Nothing to size: whether the bus stands the ramp is the deceleration time's question.
+        return Vec::new();
+    }
     super::both_columns(view, &["deceleration-time"], |column| {
         let (from_speed, set_time) = ramp(view, "deceleration-time", column);
         let cycle = view.plate(Further, "stop-cycle").or_else(|| {
@@ -315,7 +319,11 @@ pub(super) fn rotation(view: &View<'_>) -> Runs {
         Some("either") => on_drive,
         other => direction(other),
     };
-    let reversed = view.parameter("output-phase-order", ParameterColumn::AsLeft).map(|order| order.text == "u-w-v");
+    // At the first turn nothing is left yet; what is intended is then what the drive was given.
+    let reversed = view
+        .parameter("output-phase-order", ParameterColumn::AsLeft)
+        .or_else(|| view.parameter("output-phase-order", ParameterColumn::Intended))
+        .map(|order| order.text == "u-w-v");
     once(check(&Inputs {
         required,
         on_drive,

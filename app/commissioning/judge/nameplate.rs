@@ -98,7 +98,12 @@ pub(super) fn efficiency_class(view: &View<'_>) -> Runs {
     }))
 }
 
+/// A table of North American practice: asked for 60 Hz plates, and where the site follows that rule.
 pub(super) fn full_load_current(view: &View<'_>) -> Runs {
+    let sixty = view.motor::<Frequency>("hertz").is_some_and(|f| f.hertz() > 55.0);
+    if !sixty && view.choice(Site, "overload-rule") != Some("nfpa-70") {
+        return Vec::new();
+    }
     once(full_load_current::check(&full_load_current::Inputs {
         rated_power: view.motor("power"),
         rated_voltage: view.motor("volts"),
@@ -187,11 +192,15 @@ pub(super) fn low_speed_cooling(view: &View<'_>) -> Runs {
         Some(_) => Some(Cooling::Separate),
         None => None,
     };
-    let profile = view.choice(Load, "profile");
     let rated = super::motion::rated_torque(view).map(engineering::Torque::newton_metres);
-    let load = super::motion::load_torque_at_shaft(view).map(engineering::Torque::newton_metres);
-    let share = match (profile, load, rated) {
-        (Some("constant"), Some(load), Some(rated)) if rated > 0.0 => Some(Ratio::from_fraction(load / rated)),
+    // What the load asks at that very speed: a fan or pump asks little there, a conveyor all of it.
+    let lowest = view.in_force::<Frequency>("minimum-frequency").and_then(|f| super::motion::speed_at(view, f));
+    let load = match lowest {
+        Some(speed) => super::motion::load_at_motor_speed(view, speed),
+        None => super::motion::load_torque_at_shaft(view).filter(|_| view.choice(Load, "profile") == Some("constant")),
+    };
+    let share = match (load.map(engineering::Torque::newton_metres), rated) {
+        (Some(load), Some(rated)) if rated > 0.0 => Some(Ratio::from_fraction(load / rated)),
         _ => None,
     };
     once(check(&Inputs {

@@ -1,13 +1,13 @@
 //! Inputs of the checks on runs, uncoupled and under load.
 
 use super::{Runs, View, once, per_row};
-use crate::plant::Sheet::{Further, Load, Motor};
+use crate::plant::Sheet::{DrivePlate, Further, Load, Motor};
 use engineering::checks::{
     current_balance, encoder_scaling, instrument_calibration, load_current, load_profile, no_load_current,
     slip_at_no_load, temperature_rise, vibration,
 };
 use engineering::day::Day;
-use engineering::{Frequency, Length, Ratio, Speed, Torque};
+use engineering::{Accuracy, Frequency, Length, Outcome, Ratio, Reading, Speed, Torque};
 use std::collections::BTreeMap;
 
 fn uncoupled(view: &View<'_>) -> Option<bool> {
@@ -23,8 +23,13 @@ fn meter(view: &View<'_>) -> Option<current_balance::Meter> {
     }
 }
 
+/// A check that asks for an uncoupled motor: for every row, or once for its refusal where the motor was coupled.
+fn per_uncoupled_row(view: &View<'_>, item: &str, run: impl Fn(u16) -> Outcome) -> Runs {
+    if uncoupled(view) == Some(false) { once(run(0)) } else { per_row(view, item, run) }
+}
+
 pub(super) fn no_load_current(view: &View<'_>) -> Runs {
-    per_row(view, "run-i-u", |row| {
+    per_uncoupled_row(view, "run-i-u", |row| {
         no_load_current::check(&no_load_current::Inputs {
             reading: view.reading_in("run-i-u", row),
             uncoupled: uncoupled(view),
@@ -50,11 +55,25 @@ pub(super) fn current_balance(view: &View<'_>, step: &str) -> Runs {
     })
 }
 
+/// The frequency that the drive makes: its own clock makes it, exact to the step that it shows.
+fn output_frequency(view: &View<'_>, row: u16) -> Option<Reading<Frequency>> {
+    let value: Frequency = view.entered("run-hz", row)?;
+    let step = view.plate::<Frequency>(DrivePlate, "step-hertz").map_or(0.1, Frequency::hertz);
+    let accuracy = Accuracy {
+        percent_of_reading: 0.0,
+        digits: 1.0,
+        resolution: step,
+        percent_of_full_scale: 0.0,
+        full_scale: 0.0,
+    };
+    Some(Reading::with(value, accuracy))
+}
+
 pub(super) fn slip_at_no_load(view: &View<'_>) -> Runs {
-    per_row(view, "run-rpm", |row| {
+    per_uncoupled_row(view, "run-rpm", |row| {
         slip_at_no_load::check(&slip_at_no_load::Inputs {
             speed: view.reading_in("run-rpm", row),
-            frequency: view.reading_in("run-hz", row),
+            frequency: output_frequency(view, row),
             uncoupled: uncoupled(view),
             rated_frequency: view.motor("hertz"),
             rated_speed: view.motor("rpm"),

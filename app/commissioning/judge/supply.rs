@@ -54,6 +54,9 @@ pub(super) fn line_current_balance(view: &View<'_>) -> Runs {
 
 pub(super) fn bus_discharged(view: &View<'_>, step: &str) -> Runs {
     let maker_limit = view.plate(DrivePlate, "bus-limit").or_else(|| view.plate(Site, "residual-voltage-other"));
+    if step == "isolate-for-exchange" && view.chosen("exchange-isolation") == Some("not-needed") {
+        return Vec::new();
+    }
     let first = step == "prove-dead" || step.is_empty();
     let between = match step {
         "isolate-for-exchange" => "exchange-bus-after-waiting",

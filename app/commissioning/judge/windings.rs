@@ -178,7 +178,8 @@ pub(super) fn identified_resistance(view: &View<'_>) -> Runs {
         w_u: view.reading("winding-r-wu"),
         measured_at: view.entered("winding-temperature", 0),
         identified_at: view.entered("identified-at-temperature", 0),
-        cable_conductor: cable_conductor(view),
+        // Measured at the drive's end of the cable, the cable is in the reading already.
+        cable_conductor: cable_conductor(view).filter(|_| view.chosen("winding-r-place") != Some("cable")),
     }))
 }
 

@@ -101,7 +101,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         format!("({n_s_shown} − {rpm})/{n_s_shown}"),
         format!("{} %", significant(s * 100.0, 3)),
     );
-    b.figure("poles", f64::from(2 * pairs), 2, "");
+    b.text_figure("poles", (2 * pairs).to_string());
     b.figure("synchronous speed", n_s.rpm(), 4, "rpm");
     b.figure("slip", s * 100.0, 3, "%");
 

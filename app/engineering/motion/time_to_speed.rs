@@ -9,6 +9,9 @@ use crate::quantity::{Duration, Inertia, Speed, Torque};
 /// Steps of a ramp; even ones, in speed.
 pub const STEPS: u32 = 400;
 
+/// Steps of a run that only answers yes or no in a search: Simpson's rule loses little by it.
+pub(crate) const COARSE_STEPS: u32 = 48;
+
 /// One step: its ends and middle, and how long it takes.
 pub(crate) struct Step {
     pub from: Speed,
@@ -21,7 +24,13 @@ pub(crate) struct Step {
 
 /// Walks from one speed to the other; `rate` is the acceleration in rpm/s and `visit` is told each step. Stops at the
 /// first place where the rate does not lead towards `to`, and gives that speed back.
-pub(crate) fn walk(
+pub(crate) fn walk(from: Speed, to: Speed, rate: impl Fn(Speed) -> f64, visit: impl FnMut(&Step)) -> Result<(), Speed> {
+    walk_in(STEPS, from, to, rate, visit)
+}
+
+/// The same in a given number of steps.
+pub(crate) fn walk_in(
+    steps: u32,
     from: Speed,
     to: Speed,
     rate: impl Fn(Speed) -> f64,
@@ -32,13 +41,13 @@ pub(crate) fn walk(
         return Ok(());
     }
     let leads = |r: f64| (r * change > 0.0).then_some(r);
-    let place = |halves: u32| Speed::from_rpm(from.rpm() + change * f64::from(halves) / f64::from(2 * STEPS));
+    let place = |halves: u32| Speed::from_rpm(from.rpm() + change * f64::from(halves) / f64::from(2 * steps));
     let mut first = leads(rate(from)).ok_or(from)?;
-    for step in 0..STEPS {
+    for step in 0..steps {
         let (start, middle, end) = (place(2 * step), place(2 * step + 1), place(2 * step + 2));
         let half = leads(rate(middle)).ok_or(middle)?;
         let last = leads(rate(end)).ok_or(end)?;
-        let seconds = change / f64::from(STEPS) / 6.0 * (1.0 / first + 4.0 / half + 1.0 / last);
+        let seconds = change / f64::from(steps) / 6.0 * (1.0 / first + 4.0 / half + 1.0 / last);
         visit(&Step { from: start, middle, to: end, seconds, rates: [first, half, last] });
         first = last;
     }

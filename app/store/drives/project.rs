@@ -93,11 +93,12 @@ pub(crate) fn project_signature(connection: &Connection, event: &Event) -> Resul
 fn listed(drive: &Drive, site: &Site, procedure: Option<&Procedure>) -> Written {
     let record = drive.record.as_ref();
     let view = procedure.map(|procedure| View { drive, site, procedure });
-    let phases = view.as_ref().map(|v| cells(&agenda::of(v))).unwrap_or_default();
-    let counts = match (record.and_then(|r| r.frozen.as_deref()), &view) {
-        (Some(frozen), _) => Counts::of(frozen),
-        (None, Some(view)) => Counts::of(&judge::all(view)),
-        (None, None) => Counts::of(&[]),
+    let agenda = view.as_ref().map(agenda::of);
+    let phases = agenda.as_ref().map(cells).unwrap_or_default();
+    let counts = match (record.and_then(|r| r.frozen.as_deref()), &view, &agenda) {
+        (Some(frozen), ..) => Counts::of(frozen),
+        (None, Some(view), Some(agenda)) => Counts::of(&judge::reached(judge::all(view), agenda)),
+        _ => Counts::of(&[]),
     };
     let open = record.map_or(0, |r| r.findings.values().filter(|f| f.state == FindingState::Open).count());
     let signed_at = match record.map(|r| &r.status) {

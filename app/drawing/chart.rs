@@ -1,0 +1,301 @@
+//! A chart: curves, points and bars over two axes, with a legend that needs no colour.
+
+use crate::axis::Axis;
+use crate::labels::width;
+use crate::style::{Ink, Style, Voice};
+use crate::svg::{Anchor, Svg, TEXT};
+use engineering::Scale;
+use engineering::rounding::significant;
+
+/// One axis as asked for: its words, its unit, how it is divided.
+#[derive(Clone, Debug, PartialEq)]
+pub struct AxisWords {
+    /// What it shows: "speed".
+    pub label: String,
+    /// Its unit.
+    pub unit: String,
+    /// How it is divided.
+    pub scale: Scale,
+}
+
+/// How a series is drawn.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Look {
+    /// A solid line.
+    Line,
+    /// A broken line: predicted, set, limit.
+    Dashed,
+    /// Single points.
+    Points,
+    /// Points joined by a line: measured.
+    Measured,
+    /// Bars from zero.
+    Bars,
+}
+
+/// A curve or a set of points.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Series {
+    /// Its words in the legend.
+    pub name: String,
+    /// How it is drawn.
+    pub look: Look,
+    /// Its points; those that are not finite are left out.
+    pub points: Vec<(f64, f64)>,
+}
+
+/// A reference line across the chart, with words.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Mark {
+    /// Value on the y axis for a level line, on the x axis for an upright one.
+    pub at: f64,
+    /// Whether it stands upright.
+    pub upright: bool,
+    /// Its words.
+    pub label: String,
+}
+
+/// A chart.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Chart {
+    /// Its heading; also the beginning of its text alternative.
+    pub title: String,
+    /// Across.
+    pub x: AxisWords,
+    /// Up.
+    pub y: AxisWords,
+    /// What is drawn.
+    pub series: Vec<Series>,
+    /// Reference lines.
+    pub marks: Vec<Mark>,
+}
+
+const WIDTH: f64 = 400.0;
+const LEFT: f64 = 58.0;
+const RIGHT: f64 = 388.0;
+const TOP: f64 = 26.0;
+const FOOT: f64 = 206.0;
+
+impl Chart {
+    /// An empty chart with even axes; labels and units as given.
+    #[must_use]
+    pub fn new(title: &str, x: (&str, &str), y: (&str, &str)) -> Self {
+        let axis = |(label, unit): (&str, &str)| AxisWords {
+            label: label.to_owned(),
+            unit: unit.to_owned(),
+            scale: Scale::Linear,
+        };
+        Self { title: title.to_owned(), x: axis(x), y: axis(y), series: Vec::new(), marks: Vec::new() }
+    }
+
+    /// With the y axis in decades.
+    #[must_use]
+    pub fn y_in_decades(mut self) -> Self {
+        self.y.scale = Scale::Logarithmic;
+        self
+    }
+
+    /// With the x axis in decades.
+    #[must_use]
+    pub fn x_in_decades(mut self) -> Self {
+        self.x.scale = Scale::Logarithmic;
+        self
+    }
+
+    /// With a series more; an empty one is left out.
+    #[must_use]
+    pub fn with(mut self, name: &str, look: Look, points: Vec<(f64, f64)>) -> Self {
+        let decades = (self.x.scale == Scale::Logarithmic, self.y.scale == Scale::Logarithmic);
+        let can_be = |v: f64, log: bool| v.is_finite() && (!log || v > 0.0);
+        let points: Vec<_> =
+            points.into_iter().filter(|(x, y)| can_be(*x, decades.0) && can_be(*y, decades.1)).collect();
+        if !points.is_empty() {
+            self.series.push(Series { name: name.to_owned(), look, points });
+        }
+        self
+    }
+
+    /// With a level reference line.
+    #[must_use]
+    pub fn level(mut self, at: f64, label: &str) -> Self {
+        if at.is_finite() {
+            self.marks.push(Mark { at, upright: false, label: label.to_owned() });
+        }
+        self
+    }
+
+    /// With an upright reference line.
+    #[must_use]
+    pub fn upright(mut self, at: f64, label: &str) -> Self {
+        if at.is_finite() {
+            self.marks.push(Mark { at, upright: true, label: label.to_owned() });
+        }
+        self
+    }
+
+    /// The chart in words: title, axes, and every series with its ends.
+    #[must_use]
+    pub fn words(&self) -> String {
+        let mut text = format!("{}. {} against {}.", self.title, named(&self.y), named(&self.x));
+        for s in &self.series {
+            let (first, last) =
+                (s.points.first().copied().unwrap_or_default(), s.points.last().copied().unwrap_or_default());
+            let highest = s.points.iter().map(|p| p.1).fold(f64::NEG_INFINITY, f64::max);
+            text.push_str(&format!(
+                " {}: {} points from {} at {} to {} at {}, highest {}.",
+                s.name,
+                s.points.len(),
+                significant(first.1, 4),
+                significant(first.0, 4),
+                significant(last.1, 4),
+                significant(last.0, 4),
+                significant(highest, 4)
+            ));
+        }
+        for m in &self.marks {
+            text.push_str(&format!(" Line at {}: {}.", significant(m.at, 4), m.label));
+        }
+        text
+    }
+
+    /// Draws the chart: 400 units wide, as high as its legend needs.
+    #[must_use]
+    pub fn draw(&self, style: Style) -> String {
+        let mut svg = Svg::new(style);
+        let bars = self.series.iter().any(|s| s.look == Look::Bars);
+        let across = self.axis(&self.x, |p| p.0, true, (LEFT, RIGHT), bars);
+        let up = self.axis(&self.y, |p| p.1, false, (FOOT, TOP), bars);
+        self.draw_axes(&mut svg, &across, &up);
+        self.draw_marks(&mut svg, &across, &up);
+        for (n, s) in self.series.iter().enumerate() {
+            self.draw_series(&mut svg, n, s, &across, &up);
+        }
+        let height = self.draw_legend(&mut svg);
+        svg.finish(WIDTH, height, "chart", &self.words())
+    }
+
+    fn axis(
+        &self,
+        words: &AxisWords,
+        pick: impl Fn(&(f64, f64)) -> f64,
+        upright: bool,
+        span: (f64, f64),
+        bars: bool,
+    ) -> Axis {
+        let marks = self.marks.iter().filter(|m| m.upright == upright).map(|m| m.at);
+        let values: Vec<f64> = self.series.iter().flat_map(|s| s.points.iter().map(&pick)).chain(marks).collect();
+        let low = values.iter().copied().fold(f64::INFINITY, f64::min);
+        let high = values.iter().copied().fold(f64::NEG_INFINITY, f64::max);
+        if words.scale == Scale::Logarithmic {
+            return Axis::new(words.scale, low / 1.3, high * 1.3, span.0, span.1);
+        }
+        let room = if high > low { high - low } else { high.abs() };
+        let (mut from, to) = if upright { (low, high) } else { (low - room * 0.05, high + room * 0.08) };
+        if low >= 0.0 && (low <= high * 0.5 || bars) {
+            from = 0.0;
+        }
+        if bars && upright {
+            return Axis::new(words.scale, low - 1.0, high + 1.0, span.0, span.1);
+        }
+        Axis::new(words.scale, from, to, span.0, span.1)
+    }
+
+    fn draw_axes(&self, svg: &mut Svg, across: &Axis, up: &Axis) {
+        let mut taken = f64::NEG_INFINITY;
+        for (v, shown) in across.numbers(5) {
+            let x = across.at(v);
+            svg.line(x, TOP, x, FOOT, Ink::Grid);
+            let half = width(&shown, false) / 2.0;
+            if x - half > taken + 6.0 && x + half < WIDTH {
+                svg.text(x, FOOT + 16.0, &shown, Anchor::Middle, Voice::Quiet);
+                taken = x + half;
+            }
+        }
+        for (v, shown) in up.numbers(4) {
+            svg.line(LEFT, up.at(v), RIGHT, up.at(v), Ink::Grid);
+            svg.text(LEFT - 6.0, up.at(v) + 4.5, &shown, Anchor::End, Voice::Quiet);
+        }
+        svg.line(LEFT, FOOT, RIGHT, FOOT, Ink::Line);
+        svg.line(LEFT, TOP, LEFT, FOOT, Ink::Line);
+        svg.text(4.0, 14.0, &named(&self.y), Anchor::Start, Voice::Strong);
+        svg.text(RIGHT, FOOT + 33.0, &named(&self.x), Anchor::End, Voice::Strong);
+    }
+
+    fn draw_marks(&self, svg: &mut Svg, across: &Axis, up: &Axis) {
+        let mut rows: Vec<(f64, f64, f64)> = Vec::new();
+        for mark in &self.marks {
+            let half = width(&mark.label, true) / 2.0;
+            let (mut y, x) = if mark.upright {
+                svg.line(across.at(mark.at), TOP, across.at(mark.at), FOOT, Ink::Limit);
+                (TOP + 12.0, across.at(mark.at))
+            } else {
+                svg.line(LEFT, up.at(mark.at), RIGHT, up.at(mark.at), Ink::Limit);
+                ((up.at(mark.at) - 5.0).max(TOP + 10.0), RIGHT - half - 4.0)
+            };
+            let x = x.clamp(LEFT + half + 4.0, (RIGHT - half - 4.0).max(LEFT + half + 4.0));
+            // Words that would lie on others step down a row at a time.
+            while rows.iter().any(|(l, r, at)| (at - y).abs() < 13.0 && x - half < r + 6.0 && x + half > l - 6.0)
+                && y < FOOT - 20.0
+            {
+                y += 14.0;
+            }
+            rows.push((x - half, x + half, y));
+            svg.text(x, y, &mark.label, Anchor::Middle, Voice::Strong);
+        }
+    }
+
+    fn draw_series(&self, svg: &mut Svg, n: usize, series: &Series, across: &Axis, up: &Axis) {
+        let at: Vec<(f64, f64)> = series.points.iter().map(|(x, y)| (across.at(*x), up.at(*y))).collect();
+        match series.look {
+            Look::Line => svg.curve(&at, Ink::Curve(n, false)),
+            Look::Dashed => svg.curve(&at, Ink::Curve(n, true)),
+            Look::Measured => svg.curve(&at, Ink::Curve(n, false)),
+            Look::Points => {}
+            Look::Bars => {
+                let groups = self.series.iter().filter(|s| s.look == Look::Bars).count().max(1);
+                let count = f64::from(u16::try_from(series.points.len()).unwrap_or(1).max(1));
+                let one = ((RIGHT - LEFT) / count / f64::from(u16::try_from(groups).unwrap_or(1)) * 0.7).min(18.0);
+                for (x, y) in &at {
+                    let shift = (f64::from(u16::try_from(n).unwrap_or(0))
+                        - f64::from(u16::try_from(groups).unwrap_or(1)) / 2.0)
+                        * one;
+                    svg.rect(x + shift, *y, one, FOOT - y, Ink::Bar(n));
+                }
+            }
+        }
+        if matches!(series.look, Look::Points | Look::Measured) {
+            for (x, y) in &at {
+                svg.circle(*x, *y, 3.4, Ink::Point(n));
+            }
+        }
+    }
+
+    /// The legend under the chart; gives the height of the whole.
+    fn draw_legend(&self, svg: &mut Svg) -> f64 {
+        let (mut x, mut y) = (LEFT, FOOT + 54.0);
+        for (n, s) in self.series.iter().enumerate() {
+            let wide = 40.0 + width(&s.name, false);
+            if x + wide > WIDTH && x > LEFT {
+                x = LEFT;
+                y += TEXT + 5.0;
+            }
+            let sample = [(x, y - 4.5), (x + 26.0, y - 4.5)];
+            match s.look {
+                Look::Line | Look::Measured => svg.curve(&sample, Ink::Curve(n, false)),
+                Look::Dashed => svg.curve(&sample, Ink::Curve(n, true)),
+                Look::Bars => svg.rect(x + 6.0, y - 11.0, 14.0, 12.0, Ink::Bar(n)),
+                Look::Points => {}
+            }
+            if matches!(s.look, Look::Points | Look::Measured) {
+                svg.circle(x + 13.0, y - 4.5, 3.4, Ink::Point(n));
+            }
+            svg.text(x + 31.0, y, &s.name, Anchor::Start, Voice::Quiet);
+            x += wide;
+        }
+        y + 8.0
+    }
+}
+
+fn named(axis: &AxisWords) -> String {
+    if axis.unit.is_empty() { axis.label.clone() } else { format!("{}, {}", axis.label, axis.unit) }
+}

@@ -1,0 +1,120 @@
+//! `asleft serve`: the pages of one data folder.
+
+use crate::clock;
+use crate::ending::Ending;
+use clap::Args;
+use std::net::SocketAddr;
+use std::path::{Path, PathBuf};
+use std::sync::Arc;
+use store::Store;
+use web::App;
+
+#[derive(Args)]
+pub struct Arguments {
+    /// Data folder; made if it does not exist
+    #[arg(long)]
+    data: PathBuf,
+    /// Address to listen on
+    #[arg(long, default_value = "127.0.0.1:8420")]
+    listen: SocketAddr,
+}
+
+pub fn run(arguments: &Arguments) -> Ending {
+    let store = match Store::open(&arguments.data, clock::now()) {
+        Ok(store) => store,
+        Err(fault) => return Ending::could_not(fault),
+    };
+    if let Err(why) = load_built_in(&store) {
+        return Ending::could_not(why);
+    }
+    serve(store, &arguments.data, arguments.listen, None, |address, store| {
+        match store.setup_code().wait() {
+            Ok(Some(code)) => {
+                println!("This store is empty. Open {address}, and set it up with this one-time code: {code}");
+            }
+            Ok(None) => println!("Asleft is at {address}"),
+            Err(fault) => eprintln!("asleft: {fault}"),
+        }
+        if !arguments.listen.ip().is_loopback() {
+            println!(
+                "This address is reached over the network without encryption. Use it on a network of your own, or behind a TLS proxy."
+            );
+        }
+    })
+}
+
+/// Loads the built-in procedure where the store does not have this version yet.
+pub fn load_built_in(store: &Store) -> Result<(), String> {
+    use commissioning::ActId;
+    use commissioning::journal::{Act, Deed};
+    let procedure = commissioning::procedure::built_in::built_in()?;
+    let installation = store.installation().wait().map_err(|f| f.to_string())?;
+    if installation.procedures.contains_key(&procedure.version) {
+        return Ok(());
+    }
+    let act = Act {
+        id: ActId(clock::fresh_id()),
+        tablet: None,
+        deed: Deed::LoadProcedure { procedure: Box::new(procedure) },
+    };
+    store.perform(None, act, store::Proof::none(), clock::now()).wait().map(|_| ()).map_err(|f| f.to_string())
+}
+
+/// Serves until interrupted; `ready` is told the address once the port is open.
+pub fn serve(
+    store: Store,
+    data: &Path,
+    listen: SocketAddr,
+    welcome: Option<String>,
+    ready: impl FnOnce(&str, &Store),
+) -> Ending {
+    // The key is made at the first start, so that the first package does not have to wait for it.
+    let key = data.join("signing-key.pem");
+    if let Err(fault) = handover::key::load_or_create(&key) {
+        return Ending::could_not(fault);
+    }
+    let runtime = match tokio::runtime::Builder::new_multi_thread().enable_all().build() {
+        Ok(runtime) => runtime,
+        Err(fault) => return Ending::could_not(fault),
+    };
+    let app = App {
+        store: store.clone(),
+        clock: Arc::new(clock::now),
+        ids: Arc::new(clock::fresh_id),
+        signing_key: Some(Arc::from(key.as_path())),
+        secure: false,
+        welcome: welcome.map(Arc::from),
+    };
+    let opened = runtime.block_on(tokio::net::TcpListener::bind(listen));
+    let listener = match opened {
+        Ok(listener) => listener,
+        Err(fault) => {
+            return Ending::could_not(format!("{listen} cannot be listened on: {fault}. Choose another with --listen."));
+        }
+    };
+    let address = listener.local_addr().map_or_else(|_| listen.to_string(), |a| a.to_string());
+    ready(&format!("http://{address}"), &store);
+    match runtime.block_on(web::serve(listener, app, stopped())) {
+        Ok(()) => Ending::Fine,
+        Err(fault) => Ending::could_not(fault),
+    }
+}
+
+/// Ready when the person or the machine asks the program to stop.
+async fn stopped() {
+    let interrupted = async {
+        // Without a handler for it the program still ends, only less gently.
+        if tokio::signal::ctrl_c().await.is_err() {
+            std::future::pending::<()>().await;
+        }
+    };
+    let terminated = async {
+        match tokio::signal::unix::signal(tokio::signal::unix::SignalKind::terminate()) {
+            Ok(mut signal) => {
+                signal.recv().await;
+            }
+            Err(_) => std::future::pending::<()>().await,
+        }
+    };
+    tokio::select! { () = interrupted => (), () = terminated => () }
+}

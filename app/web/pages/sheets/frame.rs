@@ -1,0 +1,61 @@
+//! The page around a drive's sheet: tabs, form, verdicts beside it.
+
+use crate::components::{Page, live_form, main_button, verdict_panels};
+use crate::extract::DriveAt;
+use crate::sheet_form::{self, Back};
+use crate::visitor::Signed;
+use crate::{App, links};
+use commissioning::judge::{self, Judged, View};
+use commissioning::people::Role;
+use commissioning::plant::Sheet;
+use maud::{Markup, html};
+
+/// The sheets that belong to a drive.
+pub const SHEETS: [Sheet; 7] =
+    [Sheet::Drive, Sheet::DrivePlate, Sheet::Motor, Sheet::Cable, Sheet::Load, Sheet::Supply, Sheet::Further];
+
+/// The page of a sheet; `asked` is how many rating columns were asked for.
+#[must_use]
+pub fn page(app: &App, signed: &Signed, at: &DriveAt, sheet: Sheet, asked: u8, back: &Back<'_>) -> Markup {
+    let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
+    let may = signed.visitor.is_any(&[Role::Engineer]);
+    let columns = sheet_form::columns(sheet, &at.drive.fields, back.posted, asked);
+    let action = links::sheet(site, drive, sheet);
+    let inputs = html! {
+        fieldset.plain disabled[!may] {
+            (sheet_form::inputs(sheet, columns, &at.drive.fields, back, app.now()))
+            @if columns < sheet.columns() && may { p { a.b href=(format!("{action}?columns={}", columns + 1)) { "Show one more rating column" } } }
+            (sheet_form::reason(back))
+        }
+        div.row.foot { @if may { (main_button("Record")) } a.b href=(links::drive(site, drive)) { "Back to the drive" } }
+    };
+    let body = html! {
+        (tabs(at, sheet))
+        h1 { (sheet.words()) }
+        (sheet_form::summary(back.errors))
+        div.split {
+            section { (live_form(&signed.visitor, &action, &links::sheet_live(site, drive, sheet), inputs)) }
+            aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (verdicts(&at.view())) } }
+        }
+    };
+    Page::new(sheet.words(), body).own_heading().plate(at.plate()).render(&signed.visitor)
+}
+
+/// What the nameplate checks say about a view.
+#[must_use]
+pub fn verdicts(view: &View<'_>) -> Markup {
+    let judged: Vec<Judged> = judge::plates(view);
+    html! {
+        h2 { "Do the plates agree?" }
+        @if judged.is_empty() { p.quiet { "As soon as volts, amps, power and speed are entered, they are checked against each other here." } }
+        (verdict_panels(&judged, false))
+    }
+}
+
+fn tabs(at: &DriveAt, sheet: Sheet) -> Markup {
+    html! {
+        nav.tabs aria-label="Sheets" {
+            @for other in SHEETS { a href=(links::sheet(&at.site.tag, &at.drive.tag, other)) aria-current=[(other == sheet).then_some("page")] { (other.words()) } }
+        }
+    }
+}

@@ -1,0 +1,34 @@
+//! Shows a drive's sheet.
+
+use super::frame::{SHEETS, page};
+use crate::extract::{DriveAt, SheetAt};
+use crate::sheet_form::Back;
+use crate::visitor::Signed;
+use crate::{App, PageError};
+use axum::extract::{Query, State};
+use maud::Markup;
+use serde::Deserialize;
+
+/// How many rating columns were asked for; what is no number asks for none.
+#[derive(Debug, Default, Deserialize)]
+pub struct Asked {
+    #[serde(default)]
+    columns: String,
+}
+
+/// Shows it.
+///
+/// # Errors
+/// When the sheet is not a drive's.
+pub async fn show(
+    State(app): State<App>,
+    signed: Signed,
+    at: DriveAt,
+    SheetAt(sheet): SheetAt,
+    Query(asked): Query<Asked>,
+) -> Result<Markup, PageError> {
+    if !SHEETS.contains(&sheet) {
+        return Err(PageError::not_found("This page"));
+    }
+    Ok(page(&app, &signed, &at, sheet, asked.columns.parse().unwrap_or(1), &Back::default()))
+}

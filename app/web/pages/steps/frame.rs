@@ -1,0 +1,94 @@
+//! The page of a step, whole or as it comes back with what was wrong.
+
+use super::at::{StepAt, items, may_record};
+use super::inputs::{self, Inputs};
+use super::{footer, notices, sheet};
+use crate::components::{Page, caution, check_title, notice, seal, verdict_panels};
+use crate::pages::parameters::inputs as parameter_inputs;
+use crate::sheet_form::{self, Back};
+use crate::visitor::Signed;
+use crate::{App, PageError, links, progress, verdicts};
+use commissioning::agenda::{self, Agenda};
+use commissioning::judge::Judged;
+use commissioning::procedure::{ItemKind, Phase, Step};
+use maud::{Markup, html};
+
+/// The page; `told` is a sentence about what was just recorded.
+///
+/// # Errors
+/// Never for a step that is there.
+pub fn page(app: &App, signed: &Signed, at: &StepAt, back: &Back<'_>, told: Option<&str>) -> Result<Markup, PageError> {
+    let (phase, step) = at.step()?;
+    let agenda = agenda::of(&at.at.view());
+    let judged = verdicts::at_step(&at.at.view(), step);
+    let may = may_record(signed, &at.at) && agenda.step(&at.id).is_some();
+    let inputs = Inputs { signed, at, step, back: *back, now: app.now() };
+    let has_form = !items(&at.at, step).is_empty() || step.parameters.is_some();
+    let wide = !step.rows.is_empty() || step.parameters.is_some();
+    let body = html! {
+        (sheet_form::summary(back.errors))
+        @if let Some(told) = told { (notice(told)) }
+        div.step.split[!judged.is_empty() && !wide].wide[wide] {
+            section {
+                (heading(at, phase, step, &agenda))
+                (notices::all(signed, at, step, &agenda, may))
+                @for words in &step.cautions { (caution(words)) }
+                (limits(&judged))
+                @if let Some(of) = sheet::of(step) { (sheet::summary(at, of, agenda.step(&at.id).map_or(&[][..], |(_, s)| &s.missing))) }
+                @if has_form { (form(&inputs, may)) }
+                @if !step.why.is_empty() { details.why { summary { "Why and how" } p { (step.why) } } }
+            }
+            @if !judged.is_empty() { aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (panels(&judged)) } } }
+        }
+    };
+    let strip = progress::phase_strip(&at.at, &agenda, Some(&phase.id));
+    Ok(Page::new(step.title.clone(), body)
+        .own_heading()
+        .plate(at.at.plate())
+        .strip(strip)
+        .actions(footer::bar(at, &agenda, may, has_form))
+        .render(&signed.visitor))
+}
+
+fn heading(at: &StepAt, phase: &Phase, step: &Step, agenda: &Agenda) -> Markup {
+    let place =
+        agenda.step(&at.id).and_then(|(p, _)| Some((p.steps.iter().position(|s| s.id == at.id)? + 1, p.steps.len())));
+    html! {
+        p.where-in { (phase.title) @if let Some((n, of)) = place { " · " (n) " of " (of) } }
+        h1 { (step.title) }
+        p.instruction { (step.instruction) }
+    }
+}
+
+/// What will be asked of the reading, before it is taken.
+fn limits(judged: &[Judged]) -> Markup {
+    let known: Vec<&Judged> = judged.iter().filter(|j| !j.outcome.limit.is_empty()).collect();
+    let mut said: Vec<(&str, &str)> = Vec::new();
+    for j in known {
+        if !said.iter().any(|(limit, _)| *limit == j.outcome.limit) {
+            said.push((j.outcome.limit.as_str(), check_title(&j.outcome.check)));
+        }
+    }
+    html! { @if !said.is_empty() { dl.limits { @for (limit, check) in said { div { dt { (check) } dd { (limit) } } } } } }
+}
+
+fn form(i: &Inputs<'_>, may: bool) -> Markup {
+    let (site, drive) = (i.at.at.site.tag.as_str(), i.at.at.drive.tag.as_str());
+    let pictures = i.step.items.iter().any(|item| matches!(item.kind, ItemKind::Photo));
+    html! {
+        form method="post" action=(links::step(site, drive, &i.at.id)) id="step" enctype=[pictures.then_some("multipart/form-data")] data-judge=(links::step_live(site, drive, &i.at.id)) {
+            (seal(&i.signed.visitor))
+            fieldset.plain disabled[!may] {
+                @if let Some(group) = &i.step.parameters { (parameter_inputs::group(&i.at.at, group, &i.back, i.now)) }
+                (inputs::all(i))
+                @if may { (sheet_form::reason(&i.back)) }
+            }
+        }
+    }
+}
+
+/// What the checks of a step say: the fragment that is replaced while typing.
+#[must_use]
+pub fn panels(judged: &[Judged]) -> Markup {
+    verdict_panels(judged, false)
+}

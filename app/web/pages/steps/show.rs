@@ -1,0 +1,39 @@
+//! Shows a step.
+
+use super::at::StepAt;
+use super::frame::page;
+use crate::sheet_form::Back;
+use crate::visitor::Signed;
+use crate::{App, PageError};
+use axum::extract::{Query, State};
+use commissioning::agenda;
+use maud::Markup;
+use serde::Deserialize;
+
+/// What brought the person here.
+#[derive(Debug, Default, Deserialize)]
+pub struct Asked {
+    #[serde(default)]
+    recorded: String,
+}
+
+/// Shows it; after a partial record it says what is still to be entered.
+///
+/// # Errors
+/// Never for a step that is there.
+pub async fn show(
+    State(app): State<App>,
+    signed: Signed,
+    at: StepAt,
+    Query(asked): Query<Asked>,
+) -> Result<Markup, PageError> {
+    let agenda = agenda::of(&at.at.view());
+    let missing = agenda.step(&at.id).map(|(_, s)| s.missing.join(", ")).filter(|m| !m.is_empty());
+    let told = match (asked.recorded.as_str(), missing) {
+        ("", _) => None,
+        ("nothing", _) => Some("Nothing was entered. Fill in a field, or settle the step otherwise.".to_owned()),
+        (_, Some(missing)) => Some(format!("Recorded. Still to be entered here: {missing}.")),
+        (_, None) => Some("Recorded.".to_owned()),
+    };
+    page(&app, &signed, &at, &Back::default(), told.as_deref())
+}

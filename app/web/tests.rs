@@ -1,0 +1,14 @@
+//! Tests of the pages: each begins with who, and then does only what that person can do through the router.
+
+mod access;
+mod accounts;
+mod conflicts;
+mod every_page;
+mod job;
+mod pictures;
+mod record_pages;
+mod review;
+mod serving;
+mod sheets;
+mod steps;
+mod world;

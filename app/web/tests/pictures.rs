@@ -1,0 +1,89 @@
+//! Pictures through a step's form: kept before the entry, shown as a copy, given back as they came; a refused one takes nothing along.
+
+use super::job::{DRIVE, begin, hidden, post_parts, prepare, small_picture, view};
+use super::world::World;
+use axum::http::StatusCode;
+
+const PATH: &str = "/sites/larch-ferry/FN-204/steps/locks-and-tags";
+
+/// The step's picture item.
+async fn item(world: &World) -> String {
+    let now = view(world).await;
+    let (_, step) = now.procedure.step("locks-and-tags").expect("listed");
+    step.items
+        .iter()
+        .find(|i| matches!(i.kind, commissioning::procedure::ItemKind::Photo))
+        .expect("a picture")
+        .key
+        .clone()
+}
+
+#[tokio::test]
+async fn a_picture_is_kept_shown_and_given_back() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    begin(&world, "ines").await;
+    let key = item(&world).await;
+    let bytes = small_picture();
+    let pairs = [(format!("{key}.0"), "lock on Q4".to_owned())];
+    let answer = post_parts(&world, "ines", PATH, &pairs, &[format!("{key}.0.file")], &bytes).await;
+    assert_eq!(answer.status, StatusCode::SEE_OTHER, "{}", answer.text);
+    let page = world.get("ines", PATH).await.text;
+    let hash = page.split_once("src=\"/photos/").expect("shown").1.split('"').next().expect("closed").to_owned();
+    assert!(page.contains("lock on Q4"));
+    let copy = world.get("rolf", &format!("/photos/{hash}")).await;
+    assert_eq!((copy.status, copy.headers["content-type"].to_str().expect("ascii")), (StatusCode::OK, "image/jpeg"));
+    let original = world.get("rolf", &format!("/photos/{hash}/original")).await;
+    assert!(original.headers["content-disposition"].to_str().expect("ascii").starts_with("attachment; filename="));
+    assert_eq!(
+        world.app.store.photo(&hash).await.expect("reads").expect("kept").0,
+        bytes,
+        "the original is kept byte for byte"
+    );
+    assert_eq!(
+        world.get("", &format!("/photos/{hash}")).await.status,
+        StatusCode::SEE_OTHER,
+        "nobody signed in sees none"
+    );
+}
+
+#[tokio::test]
+async fn a_refused_picture_says_why_and_one_received_goes_along() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    begin(&world, "ines").await;
+    let key = item(&world).await;
+    let file = [format!("{key}.0.file")];
+    let heic = post_parts(&world, "ines", PATH, &[], &file, b"\0\0\0\x18ftypheic\0\0\0\0heic").await;
+    assert_eq!(heic.status, StatusCode::UNPROCESSABLE_ENTITY);
+    assert!(heic.text.contains("HEIC"), "{}", heic.text);
+    let whole = small_picture();
+    let cut = post_parts(&world, "ines", PATH, &[], &file, &whole[..whole.len() / 2]).await;
+    assert_eq!(cut.status, StatusCode::UNPROCESSABLE_ENTITY, "half a picture is none");
+    // A form that is refused for another field keeps the picture that came with it.
+    let long = [(format!("{key}.0"), "x".repeat(300))];
+    let answer = post_parts(&world, "ines", PATH, &long, &file, &whole).await;
+    assert_eq!(answer.status, StatusCode::UNPROCESSABLE_ENTITY);
+    let kept = hidden(&answer.text, &format!("{key}.0.kept"));
+    assert!(kept.contains("image/jpeg"), "{}", answer.text);
+    let again = [(format!("{key}.0"), "lock".to_owned()), (format!("{key}.0.kept"), kept)];
+    assert_eq!(post_parts(&world, "ines", PATH, &again, &[], b"").await.status, StatusCode::SEE_OTHER);
+    // One that was never received here is not believed.
+    let invented = [
+        (format!("{key}.0"), "lock".to_owned()),
+        (format!("{key}.0.kept"), format!("{} image/jpeg 5", "0".repeat(64))),
+    ];
+    post_parts(&world, "ines", PATH, &invented, &[], b"").await;
+    let now = view(&world).await;
+    assert!(
+        now.drive.record.as_ref().expect("begun").entries.values().flat_map(|s| s.standing()).all(|r| r
+            .value
+            .photo
+            .as_ref()
+            .is_none_or(|p| p.hash != "0".repeat(64)))
+    );
+    for path in ["/photos/0", "/photos/..%2f..%2fetc%2fpasswd", "/photos/0/original"] {
+        assert_eq!(world.get("ines", path).await.status, StatusCode::NOT_FOUND, "{path}");
+    }
+    assert_eq!(world.get("ines", DRIVE).await.status, StatusCode::OK);
+}
