@@ -23,7 +23,9 @@ pub fn run(arguments: &Arguments) -> Ending {
         Ok(store) => store,
         Err(fault) => return Ending::could_not(fault),
     };
-    println!("Loading the demo site …");
+    println!(
+        "Loading the demo site through the same acts as a person would; on a small machine this takes up to a minute …"
+    );
     let demo = match seed_demo::load(&store, clock::now()) {
         Ok(demo) => demo,
         Err(fault) => return Ending::could_not(fault),
@@ -31,7 +33,7 @@ pub fn run(arguments: &Arguments) -> Ending {
     let signs: Vec<String> =
         demo.people.iter().map(|p| format!("{} / {} ({}, {})", p.login, p.password, p.name, p.role)).collect();
     let welcome = format!("Demo sign-ins, name / password: {}.", signs.join(" · "));
-    serve::serve(store, folder.path(), arguments.listen, Some(welcome), |address, _| {
+    serve::serve(store, folder.path(), arguments.listen, false, Some(welcome), |address, _| {
         println!("Asleft with the demo site is at {address}/sites/{}", demo.site_tag);
         println!("Sign in as one of these invented people (name / password):");
         for line in &signs {

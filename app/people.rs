@@ -100,7 +100,7 @@ fn first(store: &Store, firm: &str, login: &str, name: &str) -> Ending {
 }
 
 fn invite(store: &Store, person: PersonId, name: &str) -> Ending {
-    match store.invite(person, clock::now()).wait() {
+    match store.invite(person, None, clock::now()).wait() {
         Ok(code) => {
             println!("One-time code for {name}, valid for 7 days: {code}");
             println!("Start the server, open its address and choose “I have a one-time code”.");

@@ -17,6 +17,10 @@ pub struct Arguments {
     /// Address to listen on
     #[arg(long, default_value = "127.0.0.1:8420")]
     listen: SocketAddr,
+    /// Behind a TLS proxy on this machine: cookies are sent under TLS only, and the address that the proxy gives as
+    /// the last of X-Forwarded-For is the one that failed sign-ins are counted by
+    #[arg(long)]
+    behind_tls: bool,
 }
 
 pub fn run(arguments: &Arguments) -> Ending {
@@ -27,7 +31,7 @@ pub fn run(arguments: &Arguments) -> Ending {
     if let Err(why) = load_built_in(&store) {
         return Ending::could_not(why);
     }
-    serve(store, &arguments.data, arguments.listen, None, |address, store| {
+    serve(store, &arguments.data, arguments.listen, arguments.behind_tls, None, |address, store| {
         match store.setup_code().wait() {
             Ok(Some(code)) => {
                 println!("This store is empty. Open {address}, and set it up with this one-time code: {code}");
@@ -35,9 +39,16 @@ pub fn run(arguments: &Arguments) -> Ending {
             Ok(None) => println!("Asleft is at {address}"),
             Err(fault) => eprintln!("asleft: {fault}"),
         }
-        if !arguments.listen.ip().is_loopback() {
+        if arguments.behind_tls {
+            println!("Pages work only through the TLS proxy in front of this address.");
+            if !arguments.listen.ip().is_loopback() {
+                println!(
+                    "A proxy's word about addresses is taken from this machine alone: let it run here, and listen on 127.0.0.1."
+                );
+            }
+        } else if !arguments.listen.ip().is_loopback() {
             println!(
-                "This address is reached over the network without encryption. Use it on a network of your own, or behind a TLS proxy."
+                "This address is reached over the network without encryption. Use it on a network of your own, or behind a TLS proxy with --behind-tls."
             );
         }
     })
@@ -65,6 +76,7 @@ pub fn serve(
     store: Store,
     data: &Path,
     listen: SocketAddr,
+    secure: bool,
     welcome: Option<String>,
     ready: impl FnOnce(&str, &Store),
 ) -> Ending {
@@ -82,14 +94,16 @@ pub fn serve(
         clock: Arc::new(clock::now),
         ids: Arc::new(clock::fresh_id),
         signing_key: Some(Arc::from(key.as_path())),
-        secure: false,
+        secure,
         welcome: welcome.map(Arc::from),
     };
     let opened = runtime.block_on(tokio::net::TcpListener::bind(listen));
     let listener = match opened {
         Ok(listener) => listener,
         Err(fault) => {
-            return Ending::could_not(format!("{listen} cannot be listened on: {fault}. Choose another with --listen."));
+            return Ending::could_not(format!(
+                "{listen} cannot be listened on: {fault}. Choose another with --listen."
+            ));
         }
     };
     let address = listener.local_addr().map_or_else(|_| listen.to_string(), |a| a.to_string());

@@ -30,6 +30,8 @@ pub struct PhaseAgenda {
     pub short: String,
     /// Its hold point, if it has one.
     pub hold: Option<HoldAgenda>,
+    /// An earlier phase whose hold point is not released: this one stands behind it too.
+    pub behind: Option<String>,
     /// The steps that apply, in order.
     pub steps: Vec<StepAgenda>,
 }
@@ -89,6 +91,7 @@ pub fn of(view: &View<'_>) -> Agenda {
             title: phase.title.clone(),
             short: phase.short.clone(),
             hold: None,
+            behind: None,
             steps: applying.map(|s| step_parts::of(view, s, &flags)).collect(),
         });
     }
@@ -96,6 +99,13 @@ pub fn of(view: &View<'_>) -> Agenda {
     let holds: Vec<_> = view.procedure.phases.iter().map(|p| hold::of(view, p, &agenda)).collect();
     for (phase, hold) in agenda.phases.iter_mut().zip(holds) {
         phase.hold = hold;
+    }
+    let mut closed: Option<String> = None;
+    for phase in &mut agenda.phases {
+        phase.behind.clone_from(&closed);
+        if closed.is_none() && phase.hold.as_ref().is_some_and(|h| h.released.is_none()) {
+            closed = Some(phase.title.clone());
+        }
     }
     agenda
 }
@@ -124,7 +134,7 @@ impl PhaseAgenda {
     /// Whether its work may go ahead.
     #[must_use]
     pub fn open(&self) -> bool {
-        self.hold.as_ref().is_none_or(|h| h.open)
+        self.behind.is_none() && self.hold.as_ref().is_none_or(|h| h.open)
     }
 }
 

@@ -4,12 +4,14 @@
 //! the form up to date. An act that changes nothing gives no event and is no refusal.
 
 mod changes;
+mod directions;
 pub(crate) mod entry_value;
 mod fields;
 mod findings;
 mod holds;
 mod instruments;
 mod isolation;
+mod isolation_proof;
 pub(crate) mod parameters;
 mod people;
 mod plants;
@@ -24,6 +26,7 @@ mod words;
 mod writer;
 
 pub(crate) use fields::field_at;
+pub use roles::needed as roles_needed;
 
 #[cfg(test)]
 mod tests;

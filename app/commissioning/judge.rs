@@ -2,6 +2,7 @@
 
 mod cable;
 pub mod catalogue;
+mod drive_train;
 pub mod motion;
 mod nameplate;
 mod runs;
@@ -98,10 +99,18 @@ fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
     let Some((.., runner)) = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name) else {
         return Vec::new();
     };
-    let runs = match runner {
+    let (mut runs, column_asked) = take::noting_column(|| match runner {
         catalogue::Runner::Anywhere(run) => run(view),
         catalogue::Runner::AtStep(run) => run(view, step),
-    };
+    });
+    if column_asked && view.column_is_assumed() {
+        for (_, outcome) in &mut runs {
+            outcome.assumed.push(engineering::outcome::Assumption {
+                what: "rating column in use".to_owned(),
+                taken: "column 1, the first; the plate has several, and the motor sheet does not say which".to_owned(),
+            });
+        }
+    }
     runs.into_iter().map(|(of, outcome)| Judged { step: step.to_owned(), of, outcome }).collect()
 }
 

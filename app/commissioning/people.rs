@@ -70,7 +70,8 @@ impl Person {
     }
 }
 
-/// Accuracy of an instrument for one kind of quantity, as decimals in the unit named.
+/// Accuracy of an instrument for one kind of quantity, as decimals in the unit named. Where it differs from range to
+/// range there is a row for each, told apart by full scale.
 #[derive(Clone, Debug, PartialEq, Eq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub struct AccuracyRow {
@@ -86,7 +87,7 @@ pub struct AccuracyRow {
     pub resolution: String,
     /// Percent of full scale, decimal.
     pub percent_of_full_scale: String,
-    /// Full scale in `unit`.
+    /// Full scale in `unit`: also where the range ends for which this row holds; 0 for no end.
     pub full_scale: String,
 }
 

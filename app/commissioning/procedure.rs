@@ -158,6 +158,8 @@ pub struct Item {
     pub kind: ItemKind,
     /// May stay empty.
     pub optional: bool,
+    /// May stay empty only while the step is left alone (`not-needed`); otherwise it is asked for like any other.
+    pub left_alone_only: bool,
     /// Flags under which it applies, as for a step.
     pub when: Vec<String>,
 }

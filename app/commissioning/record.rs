@@ -11,7 +11,9 @@ pub mod parameter;
 pub mod sign;
 
 pub use drive::{Drive, Record, Status, Turn};
-pub use entry::{Entry, EntryPlace, InstrumentUsed, Isolation, Photo, Release, ReleaseRole, SettledOtherwise};
+pub use entry::{
+    Entry, EntryPlace, InstrumentUsed, Isolation, OnceOtherwise, Photo, Release, ReleaseRole, SettledOtherwise,
+};
 pub use finding::{Finding, FindingState, Severity};
 pub use parameter::{ParameterColumn, ParameterPlace};
 pub use sign::{Meaning, Signature};

@@ -5,13 +5,13 @@ pub mod numeral;
 use engineering::Kind;
 use serde::{Deserialize, Serialize};
 
-/// Text exactly as typed, the unit picked, and the number in the coherent unit as a decimal (absent for words).
+/// Text exactly as typed, the unit it counts in, and the number in the coherent unit as a decimal (absent for words).
 #[derive(Clone, Debug, PartialEq, Eq, Serialize, Deserialize)]
 #[serde(deny_unknown_fields)]
 pub struct Typed {
     /// As typed: `50.0` is not `50`. For a choice its key, for a flag `yes` or `no`.
     pub text: String,
-    /// The unit's symbol, for a quantity.
+    /// The unit's symbol, for a quantity: the one picked, or `Ω` where the text itself carries a prefix (`500k`).
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub unit: Option<String>,
     /// The number in the coherent unit, twelve significant digits, for a quantity.
@@ -25,7 +25,8 @@ impl Typed {
         Self { text: text.into(), unit: None, si: None }
     }
 
-    /// Understands a quantity as typed; the error is a sentence with fault and remedy.
+    /// Understands a quantity as typed; the error is a sentence with fault and remedy. A prefix typed after a
+    /// resistance counts in ohms whatever unit was picked, or `500k` beside MΩ would be taken a million times too large.
     ///
     /// # Errors
     /// When the text is no number, is ambiguous, or the unit does not belong to this kind.
@@ -35,11 +36,12 @@ impl Typed {
             format!("“{}” is no unit of {}. Pick one of: {}.", shorten(unit), kind.words(), list.join(", "))
         })?;
         let number = numeral::understand(text, kind)?;
-        Ok(Self {
-            text: text.to_owned(),
-            unit: Some(unit.to_owned()),
-            si: Some(numeral::twelve_digits(known.to_coherent(number))),
-        })
+        let (unit, coherent) = match numeral::prefix(text, kind) {
+            Some(_) => (numeral::OHM, number),
+            None => (unit, known.to_coherent(number)),
+        };
+        let (text, unit) = (text.to_owned(), Some(unit.to_owned()));
+        Ok(Self { text, unit, si: Some(numeral::twelve_digits(coherent)) })
     }
 
     /// The number in the coherent unit.
@@ -55,10 +57,14 @@ impl Typed {
         Some(unit.from_coherent(self.number()?))
     }
 
-    /// Text with its unit, as shown.
+    /// Text with its unit, as shown; a prefix typed after a resistance stands with the ohms it counts: `500 kΩ`.
     #[must_use]
     pub fn shown(&self) -> String {
         match self.unit.as_deref() {
+            Some(numeral::OHM) if numeral::prefix(&self.text, Kind::Resistance).is_some() => {
+                let (digits, prefix) = numeral::parted(self.text.trim());
+                format!("{digits} {prefix}{}", numeral::OHM)
+            }
             Some(unit) if !unit.is_empty() => format!("{} {unit}", self.text.trim()),
             _ => self.text.trim().to_owned(),
         }
@@ -73,4 +79,42 @@ pub fn shorten(text: &str) -> String {
         short.push('…');
     }
     short
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn resistance(text: &str, unit: &str) -> Typed {
+        Typed::quantity(text, unit, Kind::Resistance).unwrap()
+    }
+
+    /// SI prefixes (SI brochure, table 7): k is 10³ and M is 10⁶, so that 500k is half a megohm.
+    #[test]
+    fn a_prefix_typed_counts_in_ohms_whatever_unit_was_picked() {
+        for (text, picked, ohms, shown) in [
+            ("500k", "MΩ", 5e5, "500 kΩ"),
+            ("500 K", "GΩ", 5e5, "500 kΩ"),
+            ("1.2G", "MΩ", 1.2e9, "1.2 GΩ"),
+            ("2M", "MΩ", 2e6, "2 MΩ"),
+            ("85m", "mΩ", 0.085, "85 mΩ"),
+            ("85u", "Ω", 85e-6, "85 µΩ"),
+        ] {
+            let typed = resistance(text, picked);
+            assert_eq!((typed.number(), typed.unit.as_deref()), (Some(ohms), Some("Ω")), "{text} {picked}");
+            assert_eq!(
+                (typed.text.as_str(), typed.shown().as_str()),
+                (text, shown),
+                "kept as typed, shown as understood"
+            );
+            assert_eq!(typed, resistance(text, "Ω"), "sent again with another unit it is the same value");
+        }
+        assert_eq!(resistance("500", "MΩ").number(), Some(5e8));
+        assert_eq!(resistance("500", "MΩ").shown(), "500 MΩ");
+        assert!(
+            Typed::quantity("500k", "V", Kind::Resistance).is_err(),
+            "the unit must belong to the kind all the same"
+        );
+        assert!(Typed::quantity("5k", "V", Kind::Voltage).is_err());
+    }
 }

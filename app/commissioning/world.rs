@@ -1,7 +1,7 @@
 //! A small world for tests: invented people, one site, one drive, a tiny procedure; everything happens through acts.
 //!
 //! After every act the world checks what must always hold: events survive JSON, chains are whole, the record file
-//! reads back and rebuilds, and every standing signature still fits.
+//! reads back and rebuilds, and every standing signature still fits. Each starting point is made once and copied.
 
 use crate::decide::{Surroundings, decide};
 use crate::journal::{Act, Chain, Change, Deed, Event, Head, Sealed, seal, verify_chain};
@@ -13,6 +13,7 @@ use crate::record::canonical::RecordFile;
 use crate::record::{Drive, EntryPlace, Meaning, Record, ReleaseRole, apply};
 use crate::{ActId, DriveId, PersonId, Refusal, SiteId, Timestamp};
 use std::collections::BTreeMap;
+use std::sync::LazyLock;
 use uuid::Uuid;
 
 mod any_acts;
@@ -64,6 +65,11 @@ impl World {
 
     /// People, procedure, site and drive; no record yet.
     pub(crate) fn new() -> Self {
+        static MADE: LazyLock<World> = LazyLock::new(World::make_new);
+        MADE.clone()
+    }
+
+    fn make_new() -> Self {
         let mut world = Self::empty();
         let set_up = Deed::SetUp {
             firm: "Larchwood Drives".into(),
@@ -92,6 +98,11 @@ impl World {
 
     /// A record just begun.
     pub(crate) fn begun() -> Self {
+        static MADE: LazyLock<World> = LazyLock::new(World::make_begun);
+        MADE.clone()
+    }
+
+    fn make_begun() -> Self {
         let mut world = Self::new();
         world.does(ERIN, Deed::BeginRecord { drive: DRIVE });
         world
@@ -99,6 +110,11 @@ impl World {
 
     /// Every step settled, in order; not signed.
     pub(crate) fn complete() -> Self {
+        static MADE: LazyLock<World> = LazyLock::new(World::make_complete);
+        MADE.clone()
+    }
+
+    fn make_complete() -> Self {
         let mut world = Self::begun();
         world.enter(ERIN, "prove-dead", &[("tester-proved", "yes"), ("bus-after-waiting", "3")]);
         world.release("inspect");
@@ -115,6 +131,11 @@ impl World {
 
     /// Signed by Erin.
     pub(crate) fn signed() -> Self {
+        static MADE: LazyLock<World> = LazyLock::new(World::make_signed);
+        MADE.clone()
+    }
+
+    fn make_signed() -> Self {
         let mut world = Self::complete();
         world.sign(ERIN, Meaning::Performed).unwrap();
         world
@@ -122,6 +143,11 @@ impl World {
 
     /// Accepted by Sune.
     pub(crate) fn accepted() -> Self {
+        static MADE: LazyLock<World> = LazyLock::new(World::make_accepted);
+        MADE.clone()
+    }
+
+    fn make_accepted() -> Self {
         let mut world = Self::signed();
         world.sign(SUNE, Meaning::Accepted).unwrap();
         world

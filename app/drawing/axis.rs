@@ -95,11 +95,21 @@ impl Axis {
     }
 
     fn decades(&self) -> Vec<(f64, String)> {
-        (exponent(self.low)..=exponent(self.high) + 1)
-            .map(|e| (ten(e), shown(ten(e), usize::try_from(-e).unwrap_or(0))))
+        // Short of three decades the powers alone would leave the reader with a number or two.
+        let factors: &[f64] = if self.high / self.low < 1000.0 { &[1.0, 2.0, 5.0] } else { &[1.0] };
+        (exponent(self.low) - 1..=exponent(self.high) + 1)
+            .flat_map(|e| factors.iter().map(move |f| (f * ten(e), e)))
+            .map(|(v, e)| (v, shown(v, usize::try_from(-e).unwrap_or(0))))
             .filter(|(v, _)| !self.is_beyond(*v))
             .collect()
     }
+}
+
+/// The nearest 1, 2 or 5 times a power of ten at or below a positive number, and at or above it.
+pub(crate) fn around(value: f64) -> (f64, f64) {
+    let base = ten(exponent(value));
+    let below = [5.0, 2.0, 1.0].into_iter().map(|f| f * base).find(|v| *v <= value).unwrap_or(base);
+    (below, nice_step(value))
 }
 
 /// 1, 2 or 5 times a power of ten, at least `rough`.
@@ -176,6 +186,8 @@ mod tests {
         assert_eq!(words(&axis, 4), ["0.1", "1", "10", "100", "1000"]);
         assert!((axis.at(10.0) - 50.0).abs() < 1e-9);
         assert_eq!(axis.between().len(), 32, "eight in each of four decades");
+        assert_eq!(words(&Axis::new(Scale::Logarithmic, 10.0, 100.0, 0.0, 1.0), 4), ["10", "20", "50", "100"]);
+        assert_eq!((around(13.0), around(0.2), around(99.0)), ((10.0, 20.0), (0.2, 0.2), (50.0, 100.0)));
     }
 
     #[test]

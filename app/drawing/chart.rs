@@ -1,6 +1,6 @@
 //! A chart: curves, points and bars over two axes, with a legend that needs no colour.
 
-use crate::axis::Axis;
+use crate::axis::{Axis, around};
 use crate::labels::width;
 use crate::style::{Ink, Style, Voice};
 use crate::svg::{Anchor, Svg, TEXT};
@@ -187,7 +187,7 @@ impl Chart {
         let low = values.iter().copied().fold(f64::INFINITY, f64::min);
         let high = values.iter().copied().fold(f64::NEG_INFINITY, f64::max);
         if words.scale == Scale::Logarithmic {
-            return Axis::new(words.scale, low / 1.3, high * 1.3, span.0, span.1);
+            return Axis::new(words.scale, around(low / 1.05).0, around(high * 1.05).1, span.0, span.1);
         }
         let room = if high > low { high - low } else { high.abs() };
         let (mut from, to) = if upright { (low, high) } else { (low - room * 0.05, high + room * 0.08) };
@@ -226,8 +226,10 @@ impl Chart {
         for mark in &self.marks {
             let half = width(&mark.label, true) / 2.0;
             let (mut y, x) = if mark.upright {
-                svg.line(across.at(mark.at), TOP, across.at(mark.at), FOOT, Ink::Limit);
-                (TOP + 12.0, across.at(mark.at))
+                let x = across.at(mark.at);
+                svg.line(x, TOP, x, FOOT, Ink::Limit);
+                // Beside its line, on the side that has the room.
+                (TOP + 12.0, if x + 2.0 * half + 8.0 < RIGHT { x + half + 5.0 } else { x - half - 5.0 })
             } else {
                 svg.line(LEFT, up.at(mark.at), RIGHT, up.at(mark.at), Ink::Limit);
                 ((up.at(mark.at) - 5.0).max(TOP + 10.0), RIGHT - half - 4.0)

@@ -87,11 +87,16 @@ fn draw_scale(svg: &mut Svg, axis: &Axis, rule: &LimitRule, middle: f64, foot: f
     let wanted = if rule.scale == Scale::Linear { 4 } else { 0 };
     let numbers = axis.numbers(wanted);
     let last = numbers.len().saturating_sub(1);
-    for (n, (v, shown)) in numbers.iter().enumerate() {
+    // From the last one back, since it carries the unit; powers of ten before what stands between them.
+    let (powers, others): (Vec<_>, Vec<_>) = numbers
+        .iter()
+        .enumerate()
+        .rev()
+        .partition(|(n, (_, shown))| *n == last || shown.starts_with('1') || rule.scale == Scale::Linear);
+    for (n, (v, shown)) in powers.into_iter().chain(others) {
         let x = axis.at(*v);
         svg.line(x, middle - 4.0, x, middle + 4.0, Ink::Line);
         let with_unit = format!("{shown} {}", rule.unit);
-        // The last number carries the unit where there is room for it.
         for text in
             if n == last && !rule.unit.is_empty() { vec![with_unit, shown.clone()] } else { vec![shown.clone()] }
         {

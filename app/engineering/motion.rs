@@ -25,6 +25,6 @@ pub use available_torque::Motor;
 pub use bus::Bus;
 pub use gear::{Flow, Gear};
 pub use load_torque::{LoadTorque, TorqueTable};
-pub use machine::Machine;
+pub use machine::{Linear, Machine};
 pub use trace::{End, Sample, Trace};
 pub use train::Train;

@@ -281,12 +281,20 @@ impl OutcomeBuilder {
 
     /// No outcome leaves with a number that is not one: the arithmetic left its range, and the outcome says so.
     fn end(mut self, verdict: Verdict) -> Outcome {
-        let broken = self.outcome.figures.iter().any(|f| f.value == "not a number")
-            || self.outcome.rule.as_ref().is_some_and(|r| !r.is_finite());
+        let none = |text: &str| text.contains(rounding::NOT_A_NUMBER);
+        let said = &self.outcome;
+        let broken = said.figures.iter().any(|f| none(&f.value))
+            || [&said.summary, &said.limit, &said.needed].into_iter().any(|text| none(text))
+            || said.working.iter().any(|line| none(&line.numbers) || none(&line.result))
+            || said.rule.as_ref().is_some_and(|r| !r.is_finite());
         if broken {
-            self.outcome.figures.retain(|f| f.value != "not a number");
+            self.outcome.figures.retain(|f| !none(&f.value));
             self.outcome.rule = None;
             self.outcome.working.clear();
+            self.outcome.needed.clear();
+            if none(&self.outcome.limit) {
+                self.outcome.limit.clear();
+            }
             self.outcome.summary =
                 "Not assessed: with these inputs the arithmetic leaves its range. Check the nameplate and the reading."
                     .to_owned();
@@ -295,5 +303,30 @@ impl OutcomeBuilder {
             self.outcome.verdict = verdict;
         }
         self.outcome
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::rounding::significant;
+
+    #[test]
+    fn no_text_leaves_with_a_number_that_is_none() {
+        let broken = significant(f64::NAN, 3);
+        let fill: [fn(&mut OutcomeBuilder, &str); 4] = [
+            |b, text| b.limit(text),
+            |b, text| b.needed(text),
+            |b, text| b.line("what", "a/b", text, "1"),
+            |b, text| b.line("what", "a/b", "0/0", text),
+        ];
+        for fill in fill {
+            let mut b = OutcomeBuilder::new("x");
+            fill(&mut b, &broken);
+            let outcome = b.judged(Verdict::Within, "Fine.");
+            assert_eq!(outcome.verdict, Verdict::NotAssessed);
+            assert!(!format!("{outcome:?}").contains(&broken), "{outcome:?}");
+        }
+        assert_eq!(OutcomeBuilder::new("x").judged(Verdict::Within, broken).verdict, Verdict::NotAssessed);
     }
 }

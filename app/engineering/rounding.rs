@@ -1,5 +1,8 @@
 //! Numbers as people read them, the same on every platform.
 
+/// What stands where the arithmetic left its range.
+pub(crate) const NOT_A_NUMBER: &str = "not a number";
+
 /// `value` rounded to `digits` significant digits; keeps zero and what is not finite.
 #[must_use]
 pub fn to_significant(value: f64, digits: u32) -> f64 {
@@ -15,7 +18,7 @@ pub fn to_significant(value: f64, digits: u32) -> f64 {
 #[must_use]
 pub fn significant(value: f64, digits: u32) -> String {
     if !value.is_finite() {
-        return "not a number".to_owned();
+        return NOT_A_NUMBER.to_owned();
     }
     if value == 0.0 {
         return "0".to_owned();
@@ -37,7 +40,7 @@ pub fn significant(value: f64, digits: u32) -> String {
 /// Text with a fixed count of decimals.
 #[must_use]
 pub fn decimals(value: f64, count: usize) -> String {
-    if value.is_finite() { format!("{value:.count$}") } else { "not a number".to_owned() }
+    if value.is_finite() { format!("{value:.count$}") } else { NOT_A_NUMBER.to_owned() }
 }
 
 #[cfg(test)]

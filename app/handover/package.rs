@@ -3,7 +3,7 @@
 use crate::key::{self, Fingerprint};
 use crate::material::{Material, Photograph};
 use crate::pdf::{self, Picture, TypesetFault};
-use crate::sheet::{Pages, photos, picture_name};
+use crate::sheet::{Pages, picture_name};
 use crate::{archive, charts, events, instructions, parameters_csv};
 use commissioning::journal::chain::hexadecimal;
 use commissioning::journal::{ChainFault, Head, verify_chain};
@@ -121,7 +121,7 @@ pub fn assemble(material: &Material, key: &SigningKey) -> Result<Package, Assemb
 fn pictures(material: &Material) -> Result<Vec<Picture>, AssembleFault> {
     let Some(record) = &material.record.record else { return Ok(Vec::new()) };
     let mut found: BTreeMap<String, Vec<u8>> = BTreeMap::new();
-    for (_, _, photo) in photos(record) {
+    for (_, _, photo) in record.photos() {
         let missing = || AssembleFault::Photo(photo.hash.clone());
         let name = picture_name(photo).ok_or_else(missing)?;
         let given: &Photograph = material.photos.iter().find(|p| p.hash == photo.hash).ok_or_else(missing)?;

@@ -13,7 +13,7 @@ use crate::key::Fingerprint;
 use crate::material::{Material, Photograph};
 use commissioning::procedure::Procedure;
 use commissioning::record::canonical::{RecordFile, RecordPart};
-use commissioning::record::{Entry, Photo, Status};
+use commissioning::record::{Photo, Status};
 use serde_json::{Value, json};
 
 /// What every page of the sheet is written from.
@@ -31,13 +31,6 @@ pub(crate) struct Pages<'a> {
 /// Name of a picture in the template and in the package's folder.
 pub(crate) fn picture_name(photo: &Photo) -> Option<String> {
     Some(format!("{}.{}", photo.hash, Photograph::ending(&photo.media)?))
-}
-
-/// The entries that are pictures, standing ones, in the order of the procedure.
-pub(crate) fn photos(record: &RecordPart) -> impl Iterator<Item = (&str, &Entry, &Photo)> {
-    record.entries.iter().flat_map(|part| {
-        part.slot.standing().iter().filter_map(|r| Some((part.place.item.as_str(), &r.value, r.value.photo.as_ref()?)))
-    })
 }
 
 impl Pages<'_> {

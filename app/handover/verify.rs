@@ -177,7 +177,7 @@ fn check_signing(file: &RecordFile, report: &mut Report) {
 /// Every picture that the record names is there under its hash.
 fn check_photos(files: &BTreeMap<String, Vec<u8>>, file: &RecordFile, report: &mut Report) {
     let Some(record) = &file.record else { return };
-    for (_, _, photo) in crate::sheet::photos(record) {
+    for (_, _, photo) in record.photos() {
         let name = crate::sheet::picture_name(photo).map(|n| format!("photos/{n}")).unwrap_or_default();
         match files.get(&name) {
             Some(bytes) if hexadecimal(&Sha256::digest(bytes)) == photo.hash => {}

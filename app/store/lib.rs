@@ -30,7 +30,7 @@ pub use fault::ReadFault;
 pub use journal::Witnessed;
 pub use keeping::{BackupFault, BackupReceipt, Report, ReportLine, Space, check_store};
 pub use opening::OpenFault;
-pub use people::{AccountRow, PasswordAnswer, PasswordFault, Session, SessionKind, SignIn, password_will_do};
+pub use people::{AccountRow, CodeMade, PasswordAnswer, PasswordFault, Session, SessionKind, SignIn, password_will_do};
 pub use photos::{LARGEST_PHOTO, PhotoFault, media_of as photo_media};
 pub use sites::SiteRow;
 pub use states::DriveView;

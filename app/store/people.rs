@@ -4,6 +4,7 @@ mod account;
 mod attempts;
 mod hashing;
 mod invite;
+mod invited;
 mod password;
 mod project;
 mod session;
@@ -12,6 +13,7 @@ mod sign_in;
 mod well_known;
 
 pub use account::AccountRow;
+pub use invited::CodeMade;
 pub use password::{PasswordFault, will_do as password_will_do};
 pub(crate) use project::project;
 pub use session::{Session, SessionKind};

@@ -35,7 +35,7 @@ const SIGNED_IN: Who = Who::Any(&[Engineer, Supervisor, Administrator, Reader]);
 const ENGINEERS: Who = Who::Any(&[Engineer]);
 const SUPERVISORS: Who = Who::Any(&[Supervisor]);
 const RECORD_KEEPERS: Who = Who::Any(&[Engineer, Supervisor]);
-const SITE_KEEPERS: Who = Who::Any(&[Engineer, Supervisor, Administrator]);
+const KEEPERS: Who = Who::Any(&[Engineer, Supervisor, Administrator]);
 const ADMINISTRATORS: Who = Who::Any(&[Administrator]);
 
 const fn get(path: &'static str, who: Who) -> Access {
@@ -71,17 +71,17 @@ pub const TABLE: &[Access] = &[
     post("/people/{login}/signing-unlock", ADMINISTRATORS),
     get("/signers", SIGNED_IN),
     get("/instruments", SIGNED_IN),
-    get("/new-instrument", ADMINISTRATORS),
-    post("/new-instrument", ADMINISTRATORS),
+    get("/new-instrument", KEEPERS),
+    post("/new-instrument", KEEPERS),
     get("/instruments/{instrument}", SIGNED_IN),
-    post("/instruments/{instrument}", ADMINISTRATORS),
+    post("/instruments/{instrument}", KEEPERS),
     get("/sites", SIGNED_IN),
-    get("/new-site", SITE_KEEPERS),
-    post("/new-site", SITE_KEEPERS),
+    get("/new-site", KEEPERS),
+    post("/new-site", KEEPERS),
     get("/sites/{site}/-/{sheet}", SIGNED_IN),
-    post("/sites/{site}/-/{sheet}", SITE_KEEPERS),
-    get("/sites/{site}/-/new-drive", SITE_KEEPERS),
-    post("/sites/{site}/-/new-drive", SITE_KEEPERS),
+    post("/sites/{site}/-/{sheet}", RECORD_KEEPERS),
+    get("/sites/{site}/-/new-drive", RECORD_KEEPERS),
+    post("/sites/{site}/-/new-drive", RECORD_KEEPERS),
     get("/sites/{site}", SIGNED_IN),
     get("/queue", SIGNED_IN),
     get("/sites/{site}/{drive}", SIGNED_IN),
@@ -121,8 +121,8 @@ pub const TABLE: &[Access] = &[
     get("/photos/{hash}", SIGNED_IN),
     get("/photos/{hash}/original", SIGNED_IN),
     get("/sites/{site}/{drive}/{sheet}", SIGNED_IN),
-    post("/sites/{site}/{drive}/{sheet}", ENGINEERS),
-    post("/sites/{site}/{drive}/{sheet}/live", ENGINEERS),
+    post("/sites/{site}/{drive}/{sheet}", RECORD_KEEPERS),
+    post("/sites/{site}/{drive}/{sheet}/live", RECORD_KEEPERS),
 ];
 
 /// The row of a route.
@@ -135,9 +135,12 @@ pub fn row(method: &Method, path: &str) -> Option<Who> {
 
 /// Lets in, or answers why not.
 pub async fn guard(request: Request, next: Next) -> Response {
-    let path = request.extensions().get::<MatchedPath>().map(|p| p.as_str().to_owned());
-    let (Some(path), Some(visitor)) = (path, request.extensions().get::<Visitor>().cloned()) else {
-        return next.run(request).await;
+    let Some(path) = request.extensions().get::<MatchedPath>().map(|p| p.as_str().to_owned()) else {
+        // No route of ours: nothing behind this door is asked, whatever answers there.
+        return PageError::not_found("This page").into_response();
+    };
+    let Some(visitor) = request.extensions().get::<Visitor>().cloned() else {
+        return PageError::broken("the request was not recognised before its door").into_response();
     };
     if !routes::takes(request.method(), &path) {
         return PageError::WrongMethod.into_response();

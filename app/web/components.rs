@@ -21,4 +21,4 @@ pub use plate::{Plate, plate, small_plate};
 pub use shell::Page;
 pub use strip::{StripCell, strip};
 pub use svg::drawn;
-pub use verdict::{check_title, counts, verdict_mark, verdict_panel, verdict_panels};
+pub use verdict::{check_title, counts, verdict_mark, verdict_panel, verdict_panels, verdict_panels_to_review};

@@ -22,14 +22,12 @@ pub const SESSION: &str = "asleft-session";
 const VISIT: &str = "asleft-visit";
 const THEME: &str = "asleft-theme";
 
-/// Reads the cookies; under TLS the guarded names are looked for first.
+/// Reads the cookies. Under TLS only the guarded names count: a plain one may come from a page without TLS on the same
+/// host, where anyone on the way could have set it.
 #[must_use]
-pub fn read(headers: &HeaderMap) -> Sent {
+pub fn read(headers: &HeaderMap, secure: bool) -> Sent {
     let jar = CookieJar::from_headers(headers);
-    let token = |name: &str| {
-        let guarded = format!("__Host-{name}");
-        jar.get(&guarded).or_else(|| jar.get(name)).map(|c| c.value().to_owned()).filter(|v| is_token(v))
-    };
+    let token = |name: &str| jar.get(&named(name, secure)).map(|c| c.value().to_owned()).filter(|v| is_token(v));
     let theme = jar.get(THEME).map_or(Theme::System, |c| Theme::from_key(c.value()));
     Sent { session: token(SESSION), visit: token(VISIT), theme }
 }
@@ -49,9 +47,18 @@ fn is_token(text: &str) -> bool {
     (32..=200).contains(&text.len()) && text.bytes().all(|b| b.is_ascii_alphanumeric() || b == b'-' || b == b'_')
 }
 
+/// Browsers take a name that begins so only from the host itself, for all of it, and only under TLS.
+fn named(name: &str, secure: bool) -> String {
+    if secure { format!("__Host-{name}") } else { name.to_owned() }
+}
+
 fn guarded(name: &str, value: &str, secure: bool) -> Cookie<'static> {
-    let name = if secure { format!("__Host-{name}") } else { name.to_owned() };
-    Cookie::build((name, value.to_owned())).path("/").http_only(true).same_site(SameSite::Lax).secure(secure).build()
+    Cookie::build((named(name, secure), value.to_owned()))
+        .path("/")
+        .http_only(true)
+        .same_site(SameSite::Lax)
+        .secure(secure)
+        .build()
 }
 
 /// The session's cookie.
@@ -90,5 +97,30 @@ pub fn theme(theme: Theme, secure: bool) -> Cookie<'static> {
 pub fn add(response: &mut Response, cookie: &Cookie<'_>) {
     if let Ok(value) = HeaderValue::from_str(&cookie.to_string()) {
         response.headers_mut().append(header::SET_COOKIE, value);
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const TOKEN: &str = "0123456789abcdef0123456789abcdef";
+
+    fn sent(cookie: &str) -> HeaderMap {
+        let mut headers = HeaderMap::new();
+        headers.insert(header::COOKIE, HeaderValue::from_str(cookie).expect("a header"));
+        headers
+    }
+
+    #[test]
+    fn under_tls_a_plain_cookie_is_nobodys_session() {
+        let plain = sent(&format!("asleft-session={TOKEN}; asleft-visit={TOKEN}"));
+        assert_eq!(read(&plain, false).session.as_deref(), Some(TOKEN));
+        assert_eq!((read(&plain, true).session, read(&plain, true).visit), (None, None));
+        let guarded = sent(&format!("__Host-asleft-session={TOKEN}"));
+        assert_eq!(read(&guarded, true).session.as_deref(), Some(TOKEN));
+        assert_eq!(read(&guarded, false).session, None);
+        let cookie = session(TOKEN, true).to_string();
+        assert!(cookie.starts_with("__Host-asleft-session=") && cookie.contains("Secure"), "{cookie}");
     }
 }

@@ -298,6 +298,12 @@ pub fn record(site: &str, drive: &str) -> String {
     format!("{}/record", self::drive(site, drive))
 }
 
+/// The record with the working of every verdict, as it is printed.
+#[must_use]
+pub fn record_in_full(site: &str, drive: &str) -> String {
+    format!("{}?working=all", record(site, drive))
+}
+
 /// A step in the record.
 #[must_use]
 pub fn record_at(site: &str, drive: &str, step: &str) -> String {

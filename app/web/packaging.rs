@@ -7,6 +7,12 @@ use handover::material::{Material, Photograph};
 use std::collections::BTreeSet;
 use store::{ReadFault, Store};
 
+/// The hash of every picture that a record names, each once.
+#[must_use]
+pub fn hashes(file: &RecordFile) -> BTreeSet<String> {
+    file.record.iter().flat_map(|r| r.photos()).map(|(_, _, photo)| photo.hash.clone()).collect()
+}
+
 /// The material for a drive's package; `None` when there is no such drive. Without a record, assembling refuses.
 ///
 /// # Errors
@@ -14,12 +20,8 @@ use store::{ReadFault, Store};
 pub async fn material(store: &Store, drive: DriveId) -> Result<Option<Material>, ReadFault> {
     let Some(view) = store.drive_view_by_id(drive).await? else { return Ok(None) };
     let record = RecordFile::shown(&view.view());
-    let mut hashes = BTreeSet::new();
-    for slot in view.drive.record.iter().flat_map(|r| r.entries.values()) {
-        hashes.extend(slot.standing().iter().filter_map(|e| e.value.photo.as_ref()).map(|p| p.hash.clone()));
-    }
     let mut photos = Vec::new();
-    for hash in hashes {
+    for hash in hashes(&record) {
         // A photo that is named but gone is told by assembling, with its hash.
         if let Some((bytes, media)) = store.photo(&hash).await? {
             photos.push(Photograph { hash, media, bytes });

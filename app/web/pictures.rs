@@ -1,13 +1,42 @@
 //! Pictures as they arrive and as they are shown: magic bytes, size before decoding, full decode, an upright copy without metadata.
 
+use crate::PageError;
 use image::codecs::jpeg::JpegEncoder;
 use image::{DynamicImage, ImageDecoder, ImageReader, Limits};
 use std::io::Cursor;
+use tokio::sync::{Semaphore, SemaphorePermit};
 
 /// Most pixels of a picture.
 pub const MOST_PIXELS: u64 = 50_000_000;
 /// Longest edge of the copy that is shown.
 const SHOWN_EDGE: u32 = 1600;
+
+/// Two pictures are unpacked at once, for keeping and for showing together: a large one takes a tenth of a gigabyte.
+static TURNS: Semaphore = Semaphore::const_new(2);
+/// Forms with pictures held in memory at once, 32 MB each at most.
+static FORMS: Semaphore = Semaphore::const_new(8);
+
+/// A turn to unpack a picture; taken before its bytes are loaded.
+///
+/// # Errors
+/// Never while the program runs.
+pub async fn turn() -> Result<SemaphorePermit<'static>, PageError> {
+    TURNS.acquire().await.map_err(PageError::broken)
+}
+
+/// Room for one form with pictures; given back when the form is done with.
+///
+/// # Errors
+/// Never while the program runs.
+pub async fn room() -> Result<SemaphorePermit<'static>, PageError> {
+    FORMS.acquire().await.map_err(PageError::broken)
+}
+
+/// All turns at once, so that a test sees who waits for one.
+#[cfg(test)]
+pub async fn every_turn() -> SemaphorePermit<'static> {
+    TURNS.acquire_many(2).await.expect("never closed")
+}
 
 /// Whether a picture may be kept; the error is a sentence for the person.
 ///

@@ -161,10 +161,16 @@ pub fn reason(back: &Back<'_>) -> Markup {
 /// The refused fields, listed above the form with a link to each.
 #[must_use]
 pub fn summary(errors: &[FieldError]) -> Markup {
+    faults(errors, "Nothing was recorded yet; what you typed is still here.")
+}
+
+/// The same where something else of the form was recorded: `rest` says what became of the form.
+#[must_use]
+pub fn faults(errors: &[FieldError], rest: &str) -> Markup {
     html! {
         @if !errors.is_empty() {
             div.faults role="alert" tabindex="-1" {
-                p { b { @if errors.len() == 1 { "One field needs attention." } @else { (errors.len()) " fields need attention." } } " Nothing was recorded yet; what you typed is still here." }
+                p { b { @if errors.len() == 1 { "One field needs attention." } @else { (errors.len()) " fields need attention." } } " " (rest) }
                 ul { @for e in errors { li { a href=(format!("#{}", input_id(&e.field))) { (e.label) } ": " (e.message) } } }
             }
         }

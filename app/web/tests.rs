@@ -3,6 +3,7 @@
 mod access;
 mod accounts;
 mod conflicts;
+mod doors;
 mod every_page;
 mod job;
 mod pictures;
@@ -11,4 +12,4 @@ mod review;
 mod serving;
 mod sheets;
 mod steps;
-mod world;
+pub mod world;

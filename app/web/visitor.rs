@@ -101,7 +101,7 @@ pub fn form_token(cookie: &str) -> String {
 
 /// Finds out who asks and leaves it in the request for the extractors; renders page errors on the way out, once, here.
 pub async fn recognise(State(app): State<App>, mut request: Request, next: Next) -> Response {
-    let jar = cookies::read(request.headers());
+    let jar = cookies::read(request.headers(), app.secure);
     let (visit, fresh) = match &jar.visit {
         Some(visit) => (visit.clone(), false),
         None => (cookies::fresh_token(), true),

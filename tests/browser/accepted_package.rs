@@ -41,8 +41,8 @@ async fn a_fresh_drive_becomes_an_accepted_package() {
     tablet.sign_in(&engineer).await;
     tablet.open(SITE).await;
     let to_drive = tablet.one(&format!("main a[href='{DRIVE}']")).await;
-    tablet.tap(&to_drive).await;
-    tablet.tap_words("Begin the record").await;
+    tablet.go(&to_drive).await;
+    tablet.go_by("Begin the record").await;
     let mut answers = Answers::read();
     answers.picture = tablet.picture("links").await.to_str().expect("a plain path").to_owned();
     let passed = walk::to_the_signature(&tablet, &mut answers, PICTURES).await;
@@ -58,17 +58,17 @@ async fn a_fresh_drive_becomes_an_accepted_package() {
     tablet.open("/queue").await;
     tablet.picture("queue").await;
     let review = tablet.one(&format!("ol.queue a.go[href='{DRIVE}/record']")).await;
-    tablet.tap(&review).await;
+    tablet.go(&review).await;
     tablet.whole_picture("record", LYING).await;
     assert!(tablet.text("article.report").await.contains(FINDING), "the finding stands in the record");
     tablet.is_content().await;
     accept_finding(&tablet).await;
     tablet.open(&format!("{DRIVE}/record")).await;
-    tablet.tap_words("Accept …").await;
+    tablet.go_by("Accept …").await;
     sign(&tablet, "accept", &supervisor.password).await;
-    tablet.tap_words("Handover package").await;
+    tablet.go_by("Handover package").await;
     tablet.picture("package").await;
-    tablet.tap_words("Download the package").await;
+    tablet.tap(&tablet.words("Download the package").await).await;
     let package = downloaded(tablet.downloads.path());
     tablet.is_content().await;
 
@@ -87,7 +87,7 @@ async fn raise(tablet: &Tablet) {
         _ => Put::Nothing,
     })
     .await;
-    tablet.tap_words("Raise the finding").await;
+    tablet.go_by("Raise the finding").await;
     tablet.is_content().await;
 }
 
@@ -98,7 +98,7 @@ async fn sign(tablet: &Tablet, page: &str, password: &str) {
     }
     tablet.whole_picture(page, LYING).await;
     tablet.one("main input[name=password]").await.send_keys(password).await.expect("types");
-    tablet.tap_words("Sign").await;
+    tablet.go_by("Sign").await;
     assert_eq!(tablet.path().await, DRIVE, "{}", tablet.text("main").await);
     tablet.is_content().await;
 }
@@ -107,14 +107,14 @@ async fn sign(tablet: &Tablet, page: &str, password: &str) {
 async fn accept_finding(tablet: &Tablet) {
     tablet.open(&format!("{DRIVE}/findings")).await;
     let links = tablet.web.find_all(By::Css(format!("main a[href^='{DRIVE}/findings/']"))).await.expect("links");
-    tablet.tap(links.first().expect("the finding")).await;
+    tablet.go(links.first().expect("the finding")).await;
     tablet
         .one("textarea[name=reason]")
         .await
         .send_keys("It lights a corridor and takes no part in the drive's work.")
         .await
         .expect("types");
-    tablet.tap_words("Accept the finding").await;
+    tablet.go_by("Accept the finding").await;
     tablet.is_content().await;
 }
 

@@ -119,6 +119,10 @@ async fn look(tablet: &Tablet, name: &str, path: &str) -> Vec<String> {
             assert!(measured.targets > 0 && measured.texts > 3, "{name} shows something: {measured:?}");
             faults.extend(measured.faults(&format!("{name} at {} wide, {scheme}", size.0)));
             tablet.whole_picture(&format!("{name}-{}-{scheme}", size.0), size).await;
+            if size == LYING {
+                // What is seen without scrolling, foot bar and all.
+                tablet.picture(&format!("{name}-screen-{scheme}")).await;
+            }
         }
     }
     faults

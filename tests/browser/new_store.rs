@@ -53,7 +53,7 @@ async fn a_new_store_gets_its_first_drive() {
     tablet.open(&format!("{DRIVE}/motor")).await;
     fill(&tablet, &motor).await;
     tablet.whole_picture("motor", LYING).await;
-    tablet.tap_words("Record").await;
+    tablet.go_by("Record").await;
     assert_eq!(tablet.text(".faults").await, "");
     tablet.open(DRIVE).await;
     assert!(
@@ -61,7 +61,7 @@ async fn a_new_store_gets_its_first_drive() {
         "the plate holds together: {}",
         tablet.text("aside").await
     );
-    tablet.tap_words("Begin the record").await;
+    tablet.go_by("Begin the record").await;
     assert!(tablet.path().await.starts_with(&format!("{DRIVE}/steps/")), "{}", tablet.path().await);
     tablet.is_content().await;
 }
@@ -82,7 +82,7 @@ async fn set_up(tablet: &Tablet, program: &Program, chief: &SignIn) {
     ];
     fill(tablet, &said).await;
     tablet.whole_picture("set-up", LYING).await;
-    tablet.tap_words("Set up").await;
+    tablet.go_by("Set up").await;
     assert!(tablet.path().await.starts_with("/sign-in"), "{}", tablet.text("main").await);
     tablet.is_content().await;
 }
@@ -91,7 +91,7 @@ async fn set_up(tablet: &Tablet, program: &Program, chief: &SignIn) {
 async fn invite(tablet: &Tablet) -> String {
     create(tablet, "/new-person", &[("name", "Aske Holm"), ("login", "aske")], "Add").await;
     assert_eq!(tablet.path().await, "/people/aske");
-    tablet.tap_words("Make a one-time code").await;
+    tablet.go_by("Make a one-time code").await;
     tablet.picture("code").await;
     let shown = tablet.one("p.value.code").await.text().await.expect("the code");
     shown.trim().to_owned()
@@ -101,7 +101,7 @@ async fn invite(tablet: &Tablet) -> String {
 async fn create(tablet: &Tablet, path: &str, said: &[(&str, &str)], button: &str) {
     tablet.open(path).await;
     fill(tablet, said).await;
-    tablet.tap_words(button).await;
+    tablet.go_by(button).await;
     assert_eq!(tablet.text(".faults").await, "", "{path}");
     assert_ne!(tablet.path().await, path, "{path} was taken: {}", tablet.text("main").await);
     tablet.is_content().await;

@@ -112,7 +112,11 @@ impl Tablet {
 
     /// What the system prefers: daylight or dark.
     pub async fn prefer(&self, scheme: &str) {
-        let media = serde_json::json!({ "features": [{ "name": "prefers-color-scheme", "value": scheme }] });
+        // Without motion, so that nothing is measured half way from one colour to the other.
+        let media = serde_json::json!({ "features": [
+            { "name": "prefers-color-scheme", "value": scheme },
+            { "name": "prefers-reduced-motion", "value": "reduce" },
+        ] });
         self.devtools("Emulation.setEmulatedMedia", media).await;
     }
 
@@ -153,15 +157,39 @@ impl Tablet {
         }
     }
 
-    /// Taps a link or button by its words.
-    pub async fn tap_words(&self, words: &str) {
-        let path = format!(
-            "//main//*[self::a or self::button][normalize-space(.)='{words}'] | //footer//*[self::a or self::button][normalize-space(.)='{words}']"
-        );
+    /// Taps what leads to another page, and waits until that is there.
+    pub async fn go(&self, element: &WebElement) {
+        self.web.execute("document.documentElement.dataset.left = ''", vec![]).await.expect("marks the page");
+        self.tap(element).await;
+        let arrived =
+            "return document.documentElement.dataset.left === undefined && document.readyState === 'complete'";
+        let tapped = Instant::now();
+        while tapped.elapsed() < Duration::from_secs(60) {
+            // While one page gives way to the next there is nothing to ask.
+            let there = self.web.execute(arrived, vec![]).await.and_then(|answer| answer.convert::<bool>());
+            if there.unwrap_or(false) {
+                return;
+            }
+            tokio::time::sleep(Duration::from_millis(10)).await;
+        }
+        panic!("nothing came after {}", self.path().await);
+    }
+
+    /// A link or button by its words.
+    pub async fn words(&self, words: &str) -> WebElement {
+        let path = ["main", "footer"]
+            .map(|part| format!("//{part}//*[self::a or self::button][normalize-space(.)='{words}']"))
+            .join(" | ");
         match self.web.find(By::XPath(&path)).await {
-            Ok(found) => self.tap(&found).await,
+            Ok(found) => found,
             Err(_) => panic!("nothing says “{words}” at {}:\n{}", self.path().await, self.text("body").await),
         }
+    }
+
+    /// Goes where a link or button of these words leads.
+    pub async fn go_by(&self, words: &str) {
+        let element = self.words(words).await;
+        self.go(&element).await;
     }
 
     /// Signs in and is wherever that leads.
@@ -169,14 +197,15 @@ impl Tablet {
         self.open("/sign-in").await;
         self.one("input[name=login]").await.send_keys(&who.login).await.expect("types");
         self.one("input[name=password]").await.send_keys(&who.password).await.expect("types");
-        self.tap_words("Sign in").await;
+        self.go_by("Sign in").await;
         assert_eq!(self.path().await, "/", "{}", self.text("main").await);
     }
 
     /// Signs out through the menu.
     pub async fn sign_out(&self) {
         self.one("details.menu > summary").await.click().await.expect("opens the menu");
-        self.one("details.menu form[action='/sign-out'] button").await.click().await.expect("signs out");
+        let out = self.one("details.menu form[action='/sign-out'] button").await;
+        self.go(&out).await;
         assert!(self.path().await.starts_with("/sign-in"), "{}", self.path().await);
     }
 

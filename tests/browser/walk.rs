@@ -43,7 +43,7 @@ async fn release(tablet: &Tablet, phase: &str, passed: &mut Passed) {
     let form = "main form";
     form::fill(tablet, form, |c| if c.kind == Kind::Tick { Put::Value("yes".to_owned()) } else { Put::Nothing }).await;
     tablet.picture(&format!("hold-{phase}")).await;
-    tablet.tap_words("Release the hold point").await;
+    tablet.go_by("Release the hold point").await;
     passed.holds.push(phase.to_owned());
 }
 
@@ -63,5 +63,5 @@ async fn take(tablet: &Tablet, step: &str, answers: &mut Answers, pictures: &[&s
         tablet.picture(&format!("step-{step}")).await;
     }
     let button = tablet.one("footer.actions .go").await;
-    tablet.tap(&button).await;
+    tablet.go(&button).await;
 }

@@ -51,7 +51,7 @@ fn seconds(case: &Case, name: &str) -> Duration {
 fn reflected_inertia(case: &Case) -> Results {
     let gear = Gear {
         ratio: Ratio::from_fraction(1.0 / case.number("gear_ratio_load_over_motor_speed", "1")),
-        efficiency: Ratio::from_fraction(case.number("gear_efficiency", "1")),
+        efficiency: Some(Ratio::from_fraction(case.number("gear_efficiency", "1"))),
     };
     let load = LoadTorque::Constant(torque(case, "load_torque"));
     let train = Train::new(inertia(case, "motor_inertia"), inertia(case, "load_inertia"), load, None, gear);

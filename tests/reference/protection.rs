@@ -72,10 +72,16 @@ fn overload_duty(case: &Case) -> Results {
 
 fn drive_derating(case: &Case) -> Results {
     let rate = |name, unit| Ratio::from_fraction(case.number(name, unit) / 100.0);
-    let altitude =
-        derating::by_altitude(Length::from_metres(case.number("altitude", "m")), rate("altitude_rate", "%/100 m"));
-    let ambient =
-        derating::by_ambient(Temperature::from_celsius(case.number("ambient", "degC")), rate("ambient_rate", "%/K"));
+    let altitude = derating::by_altitude(
+        Length::from_metres(case.number("altitude", "m")),
+        derating::FREE_ALTITUDE,
+        rate("altitude_rate", "%/100 m"),
+    );
+    let ambient = derating::by_ambient(
+        Temperature::from_celsius(case.number("ambient", "degC")),
+        derating::FREE_AMBIENT,
+        rate("ambient_rate", "%/K"),
+    );
     let factor = altitude.fraction() * ambient.fraction();
     Results::new().number("factor", factor, "1").number(
         "derated_current",

@@ -273,6 +273,7 @@ fn supply_tolerance(case: &Case) -> Results {
         nominal: Some(nominal),
         drive_lowest: Some(Voltage::from_volts(1.0)),
         drive_highest: Some(Voltage::from_volts(1e5)),
+        ..supply_voltage::Inputs::default()
     });
     assert!(matches!(outcome.verdict, Verdict::Within | Verdict::Outside), "{}: {}", case.id(), outcome.summary);
     Results::new()

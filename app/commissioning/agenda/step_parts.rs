@@ -18,7 +18,8 @@ pub(super) fn of(view: &View<'_>, step: &Step, flags: &BTreeSet<String>) -> Step
         },
         None => {
             let anything = begun(view, step);
-            let asks = step.sheet.is_some() || step.parameters.is_some() || required(step, flags).next().is_some();
+            let asks =
+                step.sheet.is_some() || step.parameters.is_some() || required(step, flags, true).next().is_some();
             match (missing.is_empty(), anything) {
                 (true, _) if asks => StepState::Settled,
                 // Nothing at this step must be entered: it is settled once somebody was there.
@@ -38,9 +39,13 @@ pub(super) fn of(view: &View<'_>, step: &Step, flags: &BTreeSet<String>) -> Step
     }
 }
 
-/// The items that must be entered.
-pub(crate) fn required<'a>(step: &'a Step, flags: &'a BTreeSet<String>) -> impl Iterator<Item = &'a Item> {
-    step.items.iter().filter(move |i| !i.optional && applies(&i.when, flags))
+/// The items that must be entered; `alone` tells whether the step is left alone (`not-needed`).
+pub(crate) fn required<'a>(step: &'a Step, flags: &'a BTreeSet<String>, alone: bool) -> impl Iterator<Item = &'a Item> {
+    step.items.iter().filter(move |i| !may_stay_empty(i, alone) && applies(&i.when, flags))
+}
+
+const fn may_stay_empty(item: &Item, alone: bool) -> bool {
+    item.optional && (alone || !item.left_alone_only)
 }
 
 /// Every place of an item: one, or one a row.
@@ -61,12 +66,14 @@ pub(crate) fn label(step: &Step, item: &Item, row: u16) -> String {
 fn missing(view: &View<'_>, step: &Step, flags: &BTreeSet<String>) -> Vec<String> {
     let record = view.drive.record.as_ref();
     let mut missing = Vec::new();
+    let alone = step
+        .left_alone(|item| record.and_then(|r| r.entry(&EntryPlace::new(item))).map(|e| e.value.value.text.as_str()));
     for item in step.items.iter().filter(|i| applies(&i.when, flags)) {
         for place in places(step, item) {
             let label = label(step, item, place.row);
             if record.and_then(|r| r.entries.get(&place)).is_some_and(|s| s.needs_choice()) {
                 missing.push(format!("{label}: needs a choice"));
-            } else if !item.optional && record.and_then(|r| r.observed(&place)).is_none() {
+            } else if !may_stay_empty(item, alone) && record.and_then(|r| r.observed(&place)).is_none() {
                 missing.push(label);
             }
         }

@@ -76,9 +76,12 @@ fn checked(around: &Surroundings<'_>, given: &Instrument) -> Result<Instrument, 
     for (n, row) in kept.accuracy.iter_mut().enumerate() {
         accuracy(&mut errors, n, row);
     }
-    for (n, row) in given.accuracy.iter().enumerate() {
-        if given.accuracy.iter().take(n).any(|earlier| earlier.kind == row.kind) {
-            let message = format!("The accuracy for {} stands twice. Keep one row.", row.kind.words());
+    for (n, row) in kept.accuracy.iter().enumerate() {
+        if kept.accuracy.iter().take(n).any(|earlier| same_range(earlier, row)) {
+            let message = format!(
+                "The accuracy for {} stands twice for one range. Keep one row, or give each range its own full scale.",
+                row.kind.words()
+            );
             errors.add(format!("accuracy.{n}.kind"), "quantity", message);
         }
     }
@@ -100,6 +103,7 @@ fn accuracy(errors: &mut Errors, n: usize, row: &mut AccuracyRow) {
         ("percent_of_full_scale", "percent of full scale", &mut row.percent_of_full_scale),
         ("full_scale", "full scale", &mut row.full_scale),
     ];
+    let mut understood = true;
     for (key, label, text) in numbers {
         if text.trim().is_empty() {
             "0".clone_into(text);
@@ -108,8 +112,37 @@ fn accuracy(errors: &mut Errors, n: usize, row: &mut AccuracyRow) {
         let number = numeral::understand(text, Kind::Number).and_then(|number| {
             if number >= 0.0 { Ok(number) } else { Err("This cannot be negative. Leave out the sign.".to_owned()) }
         });
-        if let Some(number) = errors.keep(&format!("accuracy.{n}.{key}"), label, number) {
-            *text = numeral::twelve_digits(number);
+        match errors.keep(&format!("accuracy.{n}.{key}"), label, number) {
+            Some(number) => *text = numeral::twelve_digits(number),
+            None => understood = false,
         }
     }
+    if understood && let Err((key, label, message)) = amounts(row) {
+        errors.add(format!("accuracy.{n}.{key}"), label, message);
+    }
+}
+
+/// Whether two rows are for the same quantity and range: the same full scale, or none in both.
+fn same_range(a: &AccuracyRow, b: &AccuracyRow) -> bool {
+    let end = |row: &AccuracyRow| Some(row.kind.unit(&row.unit)?.factor * row.full_scale.parse::<f64>().ok()?);
+    a.kind == b.kind && end(a).zip(end(b)).is_some_and(|(a, b)| (a - b).abs() <= 1e-9 * a.abs().max(b.abs()))
+}
+
+/// A row that amounts to nothing would make every reading exact: each part needs what it is counted in.
+fn amounts(row: &AccuracyRow) -> Result<(), (&'static str, &'static str, &'static str)> {
+    let some = |text: &str| text.parse::<f64>().is_ok_and(|n| n > 0.0);
+    if some(&row.digits) && !some(&row.resolution) {
+        return Err(("resolution", "one digit is", "Digits are given. Say what one digit is worth on this range."));
+    }
+    if some(&row.percent_of_full_scale) && !some(&row.full_scale) {
+        return Err(("full_scale", "full scale", "A percentage of full scale is given. Say what full scale is."));
+    }
+    if some(&row.percent_of_reading) || some(&row.digits) || some(&row.percent_of_full_scale) {
+        return Ok(());
+    }
+    Err((
+        "percent_of_reading",
+        "percent of reading",
+        "This row gives no accuracy at all. Enter a figure from the data sheet, or take the row out.",
+    ))
 }

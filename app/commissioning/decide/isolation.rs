@@ -32,7 +32,8 @@ impl Turn {
         record.entry(place).is_some_and(|e| e.sequence <= self.since)
     }
 
-    /// Whether every required item is there, entered since the last turn or in this act; `gone` was emptied in it.
+    /// Whether every item is there that a step asks for which is not left alone, entered since the last turn or in this
+    /// act; `gone` was emptied in it.
     pub(super) fn complete(
         self,
         record: &Record,
@@ -45,6 +46,6 @@ impl Turn {
             let kept = record.entry(place).is_some_and(|e| e.sequence > self.since) && !gone.contains(place);
             made.contains(place) || kept
         };
-        step_parts::required(step, flags).all(|item| step_parts::places(step, item).all(|place| fresh(&place)))
+        step_parts::required(step, flags, false).all(|item| step_parts::places(step, item).all(|place| fresh(&place)))
     }
 }

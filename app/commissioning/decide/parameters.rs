@@ -2,6 +2,7 @@
 
 use super::Surroundings;
 use super::changes::{Form, Weighed, as_typed, same};
+use super::directions;
 use super::words::{self, Errors};
 use super::writer::Writer;
 use crate::journal::{Act, Chain, Change, Event, Fact};
@@ -21,6 +22,7 @@ pub(super) fn set(
     reason: &str,
 ) -> Result<Vec<Event>, Refusal> {
     let (drive, record) = around.record_in_progress(act)?;
+    let view = around.view(drive, record)?;
     let mut form = Form::of(changes.len())?;
     let mut sent = BTreeSet::new();
     let mut done = Vec::new();
@@ -58,6 +60,10 @@ pub(super) fn set(
     }
     form.settle(reason)?;
     let mut writer = Writer::new(act, around);
+    let set: Vec<_> = done.iter().map(|(place, value, _)| (place, value.as_ref())).collect();
+    if let Some(step) = directions::voided_by(&view, record, &set) {
+        writer.add(Chain::Drive(drive.id), Fact::DirectionsVoided { step });
+    }
     for (place, value, supersedes) in done {
         writer.put(Chain::Drive(drive.id), Fact::ParameterSet { place, value }, supersedes, reason);
     }

@@ -2,13 +2,13 @@
 
 use super::changes::{Form, Weighed, as_typed, same};
 use super::entry_value::{self, Understood};
-use super::writer::{Writer, finding_about};
-use super::{Surroundings, isolation};
+use super::writer::Writer;
+use super::{Surroundings, isolation, isolation_proof};
 use crate::agenda::{self, step_parts};
 use crate::journal::{Act, Chain, Change, Event, Fact};
 use crate::judge::View;
 use crate::procedure::{IsolationAct, Item, ItemKind, Step};
-use crate::record::{Entry, EntryPlace, Record, Severity};
+use crate::record::{Entry, EntryPlace, Finding, Record, Severity};
 use crate::{EventId, Refusal};
 use std::collections::BTreeSet;
 
@@ -71,14 +71,16 @@ pub(super) fn record(
         writer.put(chain, fact, supersedes, reason);
     }
     if let Some(turn) = turn.filter(|t| !alone && t.complete(record, step, &view.flags(), &there, &gone)) {
-        let step = step.id.clone();
-        writer.add(
-            chain,
-            match turn.to {
-                IsolationAct::Enter => Fact::IsolationEntered { step },
-                IsolationAct::Lift => Fact::IsolationLifted { step },
-            },
-        );
+        let speaks_against = match turn.to {
+            IsolationAct::Enter => isolation_proof::against(around, step, writer.so_far())?,
+            IsolationAct::Lift => None,
+        };
+        let id = step.id.clone();
+        match (turn.to, speaks_against) {
+            (IsolationAct::Enter, None) => writer.add(chain, Fact::IsolationEntered { step: id }),
+            (IsolationAct::Lift, _) => writer.add(chain, Fact::IsolationLifted { step: id }),
+            (IsolationAct::Enter, Some(why)) => raise_not_dead(&mut writer, chain, record, step, &why),
+        }
     }
     if any_new {
         raise_for_order(&mut writer, &view, record, step, early, alone);
@@ -86,7 +88,20 @@ pub(super) fn record(
     Ok(writer.done())
 }
 
-/// Raises, once a step and revision, what entries out of order or without isolation leave open.
+/// Everything was entered, but the readings do not prove it dead: isolation stays out of force, and a finding says why.
+fn raise_not_dead(writer: &mut Writer<'_>, chain: Chain, record: &Record, step: &Step, why: &str) {
+    let title = &step.title;
+    let text = format!("“{title}” was recorded, but “isolated and proved dead” is not in force: {why}");
+    let same = |f: &Finding| f.is_open() && f.step.as_ref() == Some(&step.id) && f.text == text;
+    if record.findings.values().any(same) {
+        return;
+    }
+    let (finding, number) = (writer.finding(record, "not-dead", &step.id), super::findings::next_number(record));
+    let (severity, step) = (Severity::StopsStartUp, Some(step.id.clone()));
+    writer.add(chain, Fact::FindingRaised { finding, number, severity, text, step });
+}
+
+/// Raises what entries out of order or without isolation leave open, unless the same stands open at this step already.
 fn raise_for_order(writer: &mut Writer<'_>, view: &View<'_>, record: &Record, step: &Step, early: bool, alone: bool) {
     let title = &step.title;
     let faults = [
@@ -105,14 +120,16 @@ fn raise_for_order(writer: &mut Writer<'_>, view: &View<'_>, record: &Record, st
             ),
         ),
     ];
-    let mut number = super::findings::next_number(record);
+    let raised = writer.so_far().iter().filter(|e| matches!(e.fact, Fact::FindingRaised { .. })).count();
+    let mut number = super::findings::next_number(record) + u32::try_from(raised).unwrap_or(0);
     for (_, what, text) in faults.into_iter().filter(|(is, ..)| *is) {
-        let revision = record.revision.to_string();
-        let finding = finding_about(&[what, &view.drive.id.to_string(), &revision, &step.id]);
-        if record.findings.contains_key(&finding) {
+        let (severity, at) = (Severity::BeforeHandover, Some(&step.id));
+        let same = |f: &Finding| f.is_open() && f.severity == severity && f.step.as_ref() == at && f.text == text;
+        if record.findings.values().any(same) {
             continue;
         }
-        let (severity, step) = (Severity::BeforeHandover, Some(step.id.clone()));
+        let finding = writer.finding(record, what, &step.id);
+        let step = Some(step.id.clone());
         writer.add(Chain::Drive(view.drive.id), Fact::FindingRaised { finding, number, severity, text, step });
         number += 1;
     }

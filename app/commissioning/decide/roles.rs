@@ -8,7 +8,7 @@ use crate::record::Meaning;
 
 /// The roles of which one is needed, and the deed in words: "Only … may …".
 #[must_use]
-pub(super) const fn needed(deed: &Deed) -> (&'static [Role], &'static str) {
+pub const fn needed(deed: &Deed) -> (&'static [Role], &'static str) {
     use Role::{Administrator, Engineer, Supervisor};
     match deed {
         Deed::SetUp { .. } => (&[], "set up the installation"),

@@ -3,13 +3,14 @@
 use super::Surroundings;
 use super::findings::next_number;
 use super::words;
-use super::writer::{Writer, finding_about};
+use super::writer::Writer;
 use crate::Refusal;
 use crate::agenda;
 use crate::journal::{Act, Chain, Event, Fact};
 use crate::record::{SettledOtherwise, Severity};
 
-/// Settles a step as not applicable or as one that could not be done; the latter raises a finding.
+/// Settles a step as not applicable or as one that could not be done. The latter raises a finding; so does leaving out
+/// a step that guards start-up, since nobody else would look at the reason before voltage is applied.
 pub(super) fn settle(
     act: &Act,
     around: &Surroundings<'_>,
@@ -38,11 +39,19 @@ pub(super) fn settle(
     let mut writer = Writer::new(act, around);
     let chain = Chain::Drive(drive.id);
     writer.add_over(chain, Fact::StepSettled { step: step.id.clone(), how }, Vec::new(), &reason);
-    if how == SettledOtherwise::CouldNotBeDone {
-        let severity = if step.stops_start_up { Severity::StopsStartUp } else { Severity::BeforeHandover };
-        // One a time it is settled so: the act makes it its own.
-        let finding = finding_about(&["could-not-be-done", &act.id.to_string(), &step.id]);
-        let text = format!("“{}” could not be done: {reason}", step.title);
+    let severity = if step.stops_start_up { Severity::StopsStartUp } else { Severity::BeforeHandover };
+    let found = match how {
+        SettledOtherwise::CouldNotBeDone => {
+            Some(("could-not-be-done", format!("“{}” could not be done: {reason}", step.title)))
+        }
+        SettledOtherwise::NotApplicable if step.stops_start_up => Some((
+            "not-applicable",
+            format!("“{}” guards start-up and was settled as not applicable: {reason}", step.title),
+        )),
+        SettledOtherwise::NotApplicable => None,
+    };
+    if let Some((what, text)) = found {
+        let finding = writer.finding(record, what, &step.id);
         let (number, step) = (next_number(record), Some(step.id.clone()));
         writer.add(chain, Fact::FindingRaised { finding, number, severity, text, step });
     }

@@ -2,6 +2,7 @@
 
 use super::Surroundings;
 use crate::journal::{Act, Chain, Event, Fact};
+use crate::record::Record;
 use crate::{EventId, FindingId, PersonId};
 use sha2::{Digest, Sha256};
 
@@ -59,13 +60,32 @@ impl<'a> Writer<'a> {
         });
     }
 
+    /// The identifier of a finding that this act raises by itself. The tablet chooses act and finding identifiers, so
+    /// that one raised beforehand could have this one: then the next is taken, and no finding is swallowed.
+    pub(super) fn finding(&self, record: &Record, what: &str, step: &str) -> FindingId {
+        let act = self.act.id.to_string();
+        let mut number = 0_u32;
+        loop {
+            let id = finding_about(&[what, &act, step, &number.to_string()]);
+            if !record.findings.contains_key(&id) {
+                return id;
+            }
+            number += 1;
+        }
+    }
+
+    /// The events so far.
+    pub(super) fn so_far(&self) -> &[Event] {
+        &self.events
+    }
+
     /// The events.
     pub(super) fn done(self) -> Vec<Event> {
         self.events
     }
 }
 
-/// A finding that the program raises itself has an identifier made from what it is about, so that it is raised once.
+/// The identifier of a finding that the program raises: made from what it is about.
 pub(super) fn finding_about(words: &[&str]) -> FindingId {
     let digest = Sha256::digest(words.join("\n").as_bytes());
     let mut bytes = [0u8; 16];

@@ -86,7 +86,7 @@ pub enum Fact {
     IsolationEntered { step: String },
     /// Isolation lifted.
     IsolationLifted { step: String },
-    /// Leads or channels were exchanged: directions observed before count as not observed.
+    /// Leads, channels or the output sequence were exchanged: directions observed before count as not observed.
     DirectionsVoided { step: String },
     /// A hold point was released.
     HoldReleased { phase: String, role: ReleaseRole, printed_name: String },

@@ -1,7 +1,7 @@
 //! Inputs of the checks on the motor cable, the protective conductor's path and the DC bus's charge.
 
 use super::{Runs, View, once};
-use crate::plant::Sheet::{Cable, Drive, DrivePlate, Motor, Site, Supply};
+use crate::plant::Sheet::{Cable, Drive, DrivePlate, Further, Motor, Site, Supply};
 use engineering::checks::{harmonic_distortion, pe_continuity, precharge, reflected_wave, voltage_drop};
 use engineering::formulas::conductor::Build;
 use engineering::formulas::distortion_limit::Edition;
@@ -18,6 +18,7 @@ pub(super) fn pe_continuity(view: &View<'_>) -> Runs {
         section,
         metal: super::supply::metal(view.choice(Cable, "pe-metal")),
         temperature: view.plate(Cable, "pe-temperature"),
+        design_maximum: view.plate(Further, "pe-resistance-limit"),
     }))
 }
 
@@ -47,6 +48,20 @@ pub(super) fn voltage_drop(view: &View<'_>) -> Runs {
         rated_voltage: view.motor("volts"),
         site_limit: view.plate(Cable, "drop-limit").or_else(|| view.plate(Site, "voltage-drop-limit")),
     }))
+}
+
+/// The longest motor cable that drive or filter allows; of two figures the smaller where the kind of cable is not told.
+fn longest_cable(view: &View<'_>) -> Option<Length> {
+    if matches!(view.choice(Drive, "output-filter"), Some("sine" | "dv-dt")) {
+        return view.plate(DrivePlate, "cable-length-filtered");
+    }
+    let screened: Option<Length> = view.plate(DrivePlate, "cable-length-screened");
+    let unscreened: Option<Length> = view.plate(DrivePlate, "cable-length-unscreened");
+    match view.choice(Cable, "type") {
+        Some("screened" | "screened-symmetrical") => screened,
+        Some("unscreened") => unscreened,
+        _ => screened.into_iter().chain(unscreened).min_by(|a, b| a.metres().total_cmp(&b.metres())),
+    }
 }
 
 pub(super) fn reflected_wave(view: &View<'_>) -> Runs {
@@ -84,6 +99,7 @@ pub(super) fn reflected_wave(view: &View<'_>) -> Runs {
         motor_impedance: view.plate(Cable, "motor-surge-impedance"),
         cable_impedance: view.plate(Cable, "cable-surge-impedance"),
         filter,
+        longest_cable: longest_cable(view),
     }))
 }
 
@@ -105,13 +121,21 @@ pub(super) fn harmonic_distortion(view: &View<'_>) -> Runs {
         Some("ieee-519-2022") => Some(Edition::Of2022),
         _ => None,
     };
-    once(harmonic_distortion::check(&harmonic_distortion::Inputs {
+    let at_common_coupling = view.chosen("distortion-place").map(|place| place == "common-coupling");
+    let not_judged = view.choice(Site, "harmonic-rule") == Some("none") && at_common_coupling == Some(true);
+    let mut outcome = harmonic_distortion::check(&harmonic_distortion::Inputs {
         distortion: view.reading("input-thdi"),
         fundamental: view.reading("input-fundamental"),
         harmonics,
-        at_common_coupling: view.chosen("distortion-place").map(|place| place == "common-coupling"),
+        at_common_coupling: at_common_coupling.map(|there| there && !not_judged),
         demand: view.plate(Supply, "demand-current"),
         short_circuit: view.plate(Supply, "coupling-fault-current"),
         edition,
-    }))
+        // It holds at the drive's input, not at the point of common coupling.
+        specified_maximum: view.plate(Further, "distortion-limit").filter(|_| at_common_coupling != Some(true)),
+    });
+    if not_judged {
+        outcome.limit = "none: the site has current distortion shown as a figure".to_owned();
+    }
+    once(outcome)
 }

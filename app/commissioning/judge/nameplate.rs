@@ -126,6 +126,8 @@ pub(super) fn drive_current_fit(view: &View<'_>) -> Runs {
         overload: overload(view),
         motor_current: view.motor("amps"),
         maker_reduction: view.plate(DrivePlate, "reduction"),
+        altitude_rated: view.plate(DrivePlate, "altitude-rated"),
+        ambient_rated: view.plate(DrivePlate, "ambient-rated"),
         altitude: view.plate(Drive, "altitude").or_else(|| view.plate(Site, "altitude")),
         ambient: view.plate(Drive, "ambient-high").or_else(|| view.plate(Site, "ambient-high")),
         lost_per_hundred_metres: view.plate(DrivePlate, "lost-per-hundred-metres"),
@@ -135,19 +137,22 @@ pub(super) fn drive_current_fit(view: &View<'_>) -> Runs {
 
 pub(super) fn overload_fit(view: &View<'_>) -> Runs {
     let (breakaway_torque, acceleration_torque) = super::motion::torques(view);
-    once(overload_fit::check(&overload_fit::Inputs {
-        drive_current: view.plate(DrivePlate, "continuous-current"),
-        overload: overload(view),
-        rated_current: view.motor("amps"),
-        power_factor: view.motor("power-factor"),
-        breakdown: view.plate(Motor, "breakdown-torque"),
-        rated_power: view.motor("power"),
-        rated_speed: view.motor("rpm"),
-        breakaway_torque,
-        acceleration_torque,
-        acceleration_time: super::motion::start_time(view),
-        time_between_starts: view.plate(Further, "start-interval"),
-    }))
+    super::drive_train::told(
+        view,
+        once(overload_fit::check(&overload_fit::Inputs {
+            drive_current: view.plate(DrivePlate, "continuous-current"),
+            overload: overload(view),
+            rated_current: view.motor("amps"),
+            power_factor: view.motor("power-factor"),
+            breakdown: view.plate(Motor, "breakdown-torque"),
+            rated_power: view.motor("power"),
+            rated_speed: view.motor("rpm"),
+            breakaway_torque,
+            acceleration_torque,
+            acceleration_time: super::motion::start_time(view),
+            time_between_starts: view.plate(Further, "start-interval"),
+        })),
+    )
 }
 
 pub(super) fn connection_fit(view: &View<'_>) -> Runs {
@@ -160,19 +165,27 @@ pub(super) fn connection_fit(view: &View<'_>) -> Runs {
             .find(|c| view.value(Motor, *c, "connection").is_some_and(|t| wanted.contains(&t.text.as_str())))
             .and_then(|c| view.motor_in(c, "volts"))
     };
-    // A single-voltage motor with sealed links counts with the connection of its column in use.
-    let star_voltage = volts_of(&["star", "high"]);
-    let delta_voltage = volts_of(&["delta", "low"]);
-    let found = match view.chosen("links-found") {
+    let mut star_voltage = volts_of(&["star", "high"]);
+    let mut delta_voltage = volts_of(&["delta", "low"]);
+    let understood = |key: Option<&str>| match key {
         Some("star" | "high") => Some(Connection::Star),
         Some("delta" | "low") => Some(Connection::Delta),
         _ => None,
     };
-    let planned = match view.value(Motor, in_use, "connection").map(|t| t.text.as_str()) {
-        Some("star" | "high") => Some(Connection::Star),
-        Some("delta" | "low") => Some(Connection::Delta),
-        _ => None,
+    let planned = understood(view.value(Motor, in_use, "connection").map(|t| t.text.as_str()));
+    // Nobody has looked until the links are entered: what the plate draws does not stand in for them.
+    let links = view.chosen("links-found");
+    let found = match links {
+        // Sealed, only one way: that is the connection of the column in use, whatever the plate calls it.
+        Some("single") => Some(planned.unwrap_or(Connection::Star)),
+        other => understood(other),
     };
+    if links == Some("single") {
+        match found {
+            Some(Connection::Delta) => delta_voltage = view.motor("volts"),
+            _ => star_voltage = view.motor("volts"),
+        }
+    }
     once(check(&Inputs {
         star_voltage,
         delta_voltage,
@@ -180,7 +193,7 @@ pub(super) fn connection_fit(view: &View<'_>) -> Runs {
         supply_voltage: view.plate(Supply, "volts"),
         output_voltage: view.plate(DrivePlate, "output-volts").or_else(|| view.in_force("base-volts")),
         base_frequency: view.in_force("base-frequency").or_else(|| view.plate(Further, "design-base-hertz")),
-        found: found.or(planned),
+        found,
         maker_allows_raised_base: view.flag(Motor, "raised-base-allowed"),
     }))
 }
@@ -189,9 +202,16 @@ pub(super) fn low_speed_cooling(view: &View<'_>) -> Runs {
     use low_speed_cooling::{Cooling, Inputs, check};
     let cooling = match view.choice(Motor, "cooling") {
         Some("self") => Some(Cooling::SelfCooled),
-        Some(_) => Some(Cooling::Separate),
-        None => None,
+        Some("surface" | "air-stream") => Some(Cooling::ByItsPlace),
+        Some("separate" | "liquid") => Some(Cooling::Separate),
+        _ => None,
     };
+    let percent = |number: f64| Ratio::from_fraction(number / 100.0);
+    let maker_curve = view
+        .choice(Motor, "low-speed-torque")
+        .and_then(|text| crate::plant::field::table(text).ok())
+        .map(|pairs| pairs.into_iter().map(|(speed, torque)| (percent(speed), percent(torque))).collect())
+        .unwrap_or_default();
     let rated = super::motion::rated_torque(view).map(engineering::Torque::newton_metres);
     // What the load asks at that very speed: a fan or pump asks little there, a conveyor all of it.
     let lowest = view.in_force::<Frequency>("minimum-frequency").and_then(|f| super::motion::speed_at(view, f));
@@ -203,11 +223,15 @@ pub(super) fn low_speed_cooling(view: &View<'_>) -> Runs {
         (Some(load), Some(rated)) if rated > 0.0 => Some(Ratio::from_fraction(load / rated)),
         _ => None,
     };
-    once(check(&Inputs {
-        cooling,
-        lowest_frequency: view.in_force("minimum-frequency"),
-        rated_frequency: view.motor("hertz"),
-        load_torque: share,
-        maker_torque: None,
-    }))
+    super::drive_train::told(
+        view,
+        once(check(&Inputs {
+            cooling,
+            lowest_frequency: view.in_force("minimum-frequency"),
+            rated_frequency: view.motor("hertz"),
+            load_torque: share,
+            maker_curve,
+            turndown: view.plate(Motor, "turndown"),
+        })),
+    )
 }

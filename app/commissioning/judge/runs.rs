@@ -1,13 +1,14 @@
 //! Inputs of the checks on runs, uncoupled and under load.
 
 use super::{Runs, View, once, per_row};
-use crate::plant::Sheet::{DrivePlate, Further, Load, Motor};
+use crate::plant::Sheet::{DrivePlate, Further, Load, Motor, Site};
 use engineering::checks::{
     current_balance, encoder_scaling, instrument_calibration, load_current, load_profile, no_load_current,
     slip_at_no_load, temperature_rise, vibration,
 };
 use engineering::day::Day;
-use engineering::{Accuracy, Frequency, Length, Outcome, Ratio, Reading, Speed, Torque};
+use engineering::quantity::Quantity;
+use engineering::{Accuracy, Frequency, Outcome, Ratio, Reading, Speed, Torque, VibrationVelocity};
 use std::collections::BTreeMap;
 
 fn uncoupled(view: &View<'_>) -> Option<bool> {
@@ -51,6 +52,7 @@ pub(super) fn current_balance(view: &View<'_>, step: &str) -> Runs {
             v: view.reading_in(items[1], row),
             w: view.reading_in(items[2], row),
             meter: meter(view),
+            maker_maximum: view.plate(Motor, "current-unbalance-maximum"),
         })
     })
 }
@@ -92,6 +94,8 @@ pub(super) fn encoder_scaling(view: &View<'_>) -> Runs {
             measured: view.reading_in("run-rpm", row),
             pulses_set: set.map(Ratio::fraction).filter(|n| (0.0..1e9).contains(n)).map(count),
             pulses_plate: view.count(Further, "encoder-pulses"),
+            own_tolerance: view.plate(Further, "encoder-tolerance"),
+            turns_ratio: view.plate(Further, "encoder-ratio"),
         })
     })
 }
@@ -119,7 +123,7 @@ fn speed_in(view: &View<'_>, row: u16) -> Option<Speed> {
 }
 
 pub(super) fn load_current(view: &View<'_>) -> Runs {
-    per_row(view, "load-i-u", |row| {
+    let by_row = |row| {
         load_current::check(&load_current::Inputs {
             reading: view.reading_in("load-i-u", row),
             load_torque: torque_in(view, row),
@@ -131,7 +135,8 @@ pub(super) fn load_current(view: &View<'_>) -> Runs {
             rated_power: view.motor("power"),
             rated_speed: view.motor("rpm"),
         })
-    })
+    };
+    super::drive_train::told(view, per_row(view, "load-i-u", by_row))
 }
 
 pub(super) fn load_profile(view: &View<'_>) -> Runs {
@@ -156,13 +161,16 @@ pub(super) fn load_profile(view: &View<'_>) -> Runs {
 }
 
 pub(super) fn vibration(view: &View<'_>) -> Runs {
-    use vibration::{Foundation, Group, Inputs, check};
-    let height: Option<Length> = view.plate(Motor, "shaft-height");
-    let group = height.map(|h| match h.metres() {
-        h if h >= 0.315 => Group::Large,
-        h if h >= 0.160 => Group::Medium,
-        _ => Group::Other,
-    });
+    use vibration::{Accepted, Foundation, Inputs, check};
+    let accepted = match view.choice(Site, "vibration-boundary") {
+        Some("a-b") => Some(Accepted::ZoneA),
+        Some("b-c") => Some(Accepted::ZoneB),
+        _ => None,
+    };
+    // Motor and machine stand together: the smaller of their makers' limits holds.
+    let by_motor: Option<VibrationVelocity> = view.plate(Motor, "vibration-maximum");
+    let by_machine: Option<VibrationVelocity> = view.plate(Load, "vibration-limit");
+    let maker_maximum = by_motor.into_iter().chain(by_machine).min_by(|a, b| a.coherent().total_cmp(&b.coherent()));
     let foundation = match view.choice(Load, "foundation") {
         Some("rigid") => Some(Foundation::Rigid),
         Some("flexible") => Some(Foundation::Flexible),
@@ -175,11 +183,12 @@ pub(super) fn vibration(view: &View<'_>) -> Runs {
             .max_by(|a, b| a.number().total_cmp(&b.number()));
         check(&Inputs {
             reading: highest,
-            group,
+            shaft_height: view.plate(Motor, "shaft-height"),
+            accepted,
             foundation,
             rated_power: view.motor("power"),
             speed: view.entered("vibration-hz", row).and_then(|f| super::motion::speed_at(view, f)),
-            maker_maximum: view.plate(Motor, "vibration-maximum").or_else(|| view.plate(Load, "vibration-limit")),
+            maker_maximum,
         })
     })
 }
@@ -200,6 +209,7 @@ pub(super) fn temperature_rise(view: &View<'_>) -> Runs {
         coolant: view.reading("thermal-ambient"),
         conductor: super::supply::metal(view.choice(Motor, "winding-metal")),
         thermal_class: super::windings::thermal_class(view),
+        plate_ambient: view.plate(Motor, "ambient"),
         maker_maximum: view.plate(Motor, "rise-maximum"),
     }))
 }

@@ -1,5 +1,6 @@
 //! Inputs of the checks on the parameter record; each runs for what is intended and for what was left.
 
+use super::drive_train::{Settings, told};
 use super::{Runs, View, both_columns, once};
 use crate::plant::Sheet::{DrivePlate, Further, Load, Motor, Site};
 use crate::record::ParameterColumn;
@@ -80,8 +81,8 @@ pub(super) fn minimum_speed(view: &View<'_>) -> Runs {
 }
 
 pub(super) fn current_limit(view: &View<'_>) -> Runs {
-    let (breakaway_torque, acceleration_torque) = super::motion::torques(view);
-    both_columns(view, &["current-limit"], |c| {
+    let by_column = |c| {
+        let (breakaway_torque, acceleration_torque) = super::motion::torques_by(view, Settings::Column(c));
         current_limit::check(&current_limit::Inputs {
             setting: view.setting("current-limit", c),
             rated_current: view.motor("amps"),
@@ -95,7 +96,8 @@ pub(super) fn current_limit(view: &View<'_>) -> Runs {
             coupling_torque: view.plate(Load, "coupling-torque"),
             gearbox_torque: view.plate(Load, "gear-torque"),
         })
-    })
+    };
+    told(view, both_columns(view, &["current-limit"], by_column))
 }
 
 pub(super) fn overload_setting(view: &View<'_>) -> Runs {
@@ -191,23 +193,31 @@ pub(super) fn loss_of_reference(view: &View<'_>) -> Runs {
         Some("none") => Some(Action::Ignored),
         _ => None,
     };
-    let tried = view.entry("reference-loss-right", 0).map(|_| true);
-    both_columns(view, &["loss-of-reference"], |c| {
-        let signal = match view.set_choice("reference-source", c) {
-            Some("analogue") => match view.choice(Further, "reference-signal") {
+    both_columns(view, &["loss-of-reference", "loss-of-communication"], |c| {
+        let source = view.set_choice("reference-source", c);
+        let signal = match source {
+            // The drive's own controller lives on a measured value that comes the same way.
+            Some("analogue" | "controller") => match view.choice(Further, "reference-signal") {
                 Some("0-20" | "0-10") => Some(Signal::DeadZero),
-                _ => Some(Signal::LiveZero),
+                Some("4-20") => Some(Signal::LiveZero),
+                _ => None,
             },
-            Some("network" | "controller") => Some(Signal::Network),
+            Some("network") => Some(Signal::Network),
             Some("panel" | "fixed") => Some(Signal::Panel),
             _ => None,
         };
+        // A network is watched by another function than a signal, and its loss is tried at another step.
+        let (set, tried) = if source == Some("network") {
+            (view.set_choice("loss-of-communication", c), view.entry("communication-loss-right", 0))
+        } else {
+            (view.set_choice("loss-of-reference", c), view.entry("reference-loss-right", 0))
+        };
         check(&Inputs {
             signal,
-            action: action_of(view.set_choice("loss-of-reference", c)),
+            action: action_of(set),
             specified: action_of(view.choice(Further, "loss-of-reference-action")),
             threshold: view.setting("loss-of-reference-level", c),
-            tried,
+            tried: tried.map(|_| true),
         })
     })
 }
@@ -221,7 +231,18 @@ pub(super) fn reference_scaling(view: &View<'_>) -> Runs {
             .or_else(|| view.entry("ref-hz", row).map(|_| Reading::bare(Current::from_amperes(milliamperes / 1e3)))),
         shown: view.entered("ref-hz", row),
     };
+    let signal = view.choice(Further, "reference-signal");
+    let stated = |milliamperes: [f64; 2], end: usize| {
+        let known = matches!(signal, Some("4-20" | "0-20"));
+        known.then(|| Current::from_amperes(milliamperes[end] / 1e3))
+    };
+    let ends = if signal == Some("0-20") { [0.0, 20.0] } else { [4.0, 20.0] };
+    let low: Option<Current> = view.plate(Further, "reference-low").or_else(|| view.in_force("reference-low"));
+    let high: Option<Current> = view.plate(Further, "reference-high").or_else(|| view.in_force("reference-high"));
     once(check(&Inputs {
+        by_voltage: signal == Some("0-10"),
+        low_current: low.or_else(|| stated(ends, 0)),
+        high_current: high.or_else(|| stated(ends, 1)),
         points: [point(0, 4.0), point(1, 8.0), point(2, 12.0), point(3, 16.0), point(4, 20.0)],
         low: view.plate(Further, "reference-low-hertz").or_else(|| view.in_force("reference-low-frequency")),
         high: view.plate(Further, "reference-high-hertz").or_else(|| view.in_force("reference-high-frequency")),
@@ -230,26 +251,54 @@ pub(super) fn reference_scaling(view: &View<'_>) -> Runs {
 }
 
 pub(super) fn test_settings_restored(view: &View<'_>) -> Runs {
+    use ParameterColumn::{AsFound, AsLeft, Intended};
     use test_settings_restored::{Inputs, TestSetting, check};
-    let rows = [
+    let at = |function: &str, column| view.parameter(function, column).map(comparable);
+    let stands =
+        |row: &str| [AsFound, Intended, AsLeft].into_iter().any(|column| view.parameter(row, column).is_some());
+    let label = |function: &str| crate::record::functions::find(function).map_or("", |f| f.label).to_owned();
+    let mut settings = Vec::new();
+    for (test, function) in [
         ("test-overload-current", "overload-current"),
         ("test-current-limit", "current-limit"),
         ("test-maximum-frequency", "maximum-frequency"),
-    ];
-    let settings: Vec<TestSetting> = rows
-        .into_iter()
-        .filter_map(|(test, function)| {
-            // The column as found of a test row holds what was set for the test.
-            let during = view.parameter(test, ParameterColumn::AsFound)?;
-            Some(TestSetting {
-                what: crate::record::functions::find(function).map_or(function, |f| f.label).to_owned(),
-                during: Some(comparable(during)),
-                intended: view.parameter(function, ParameterColumn::Intended).map(comparable),
-                as_left: view.parameter(function, ParameterColumn::AsLeft).map(comparable),
-            })
-        })
-        .collect();
-    once(check(&Inputs { settings: view.drive.record.as_ref().map(|_| settings) }))
+    ] {
+        if !stands(test) {
+            continue;
+        }
+        // The column as found of a test row holds what was set for the test.
+        let (during, intended, as_left) = (at(test, AsFound), at(function, Intended), at(function, AsLeft));
+        let own = at(test, AsLeft).filter(|own| Some(own) != as_left.as_ref());
+        let of = |what, as_left| TestSetting { what, during: during.clone(), intended: intended.clone(), as_left };
+        settings.push(of(label(function), as_left));
+        settings.extend(own.map(|own| of(format!("{}, by its test row", label(function)), Some(own))));
+    }
+    let other = "test-other";
+    let said_none = [AsFound, Intended, AsLeft].into_iter().any(|c| at(other, c).is_some_and(|text| text == "none"));
+    if stands(other) && !said_none {
+        let (during, intended, as_left) = (at(other, AsFound), at(other, Intended), at(other, AsLeft));
+        settings.push(TestSetting { what: label(other), during, intended, as_left });
+    }
+    let entered = |item: &crate::plant::Recorded<crate::record::Entry>| comparable(&item.value.value);
+    let (trip, restored) = (view.entry("overload-trip-set", 0), view.entry("overload-restored", 0));
+    if trip.is_some() || restored.is_some() {
+        let (during, intended) = (trip.map(entered), at("overload-current", Intended));
+        let of = |what, as_left| TestSetting { what, during: during.clone(), intended: intended.clone(), as_left };
+        settings.push(of(format!("{} after its trip", label("overload-current")), restored.map(entered)));
+        if !stands("test-overload-current") {
+            settings.push(of(label("overload-current"), at("overload-current", AsLeft)));
+        }
+    }
+    let mut unlisted = Vec::new();
+    let listed = stands("test-current-limit") || stands("test-maximum-frequency");
+    if view.entry("limits-lowered", 0).is_some() && !listed {
+        unlisted.push("test settings that were lowered for the first turn".to_owned());
+    }
+    let neither_done = view.drive.record.as_ref().is_some_and(|record| {
+        ["lower-limits", "overload-trip"].into_iter().all(|step| record.otherwise.contains_key(step))
+    });
+    let said = !settings.is_empty() || !unlisted.is_empty() || said_none || neither_done;
+    once(check(&Inputs { settings: said.then_some(settings), unlisted }))
 }
 
 /// Equal values read equal, whatever digits were typed.

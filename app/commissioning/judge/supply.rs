@@ -4,11 +4,11 @@ use super::{Runs, View, once};
 use crate::plant::Sheet::{Cable, Drive, DrivePlate, Further, Site, Supply};
 use engineering::checks::{
     bus_discharged, bus_voltage, disconnection, line_current_balance, pe_conductor, short_circuit_rating,
-    supply_unbalance, supply_voltage,
+    supply_unbalance, supply_voltage, waiting_time,
 };
 use engineering::formulas::copper::Conductor;
 use engineering::quantity::Quantity;
-use engineering::{CrossSection, Current, Ratio, Reading, Voltage};
+use engineering::{CrossSection, Ratio, Reading, Voltage};
 
 fn lines<Q: Quantity>(view: &View<'_>, items: [&str; 3]) -> [Option<Reading<Q>>; 3] {
     items.map(|item| view.reading(item))
@@ -20,9 +20,15 @@ pub(super) fn supply_voltage(view: &View<'_>) -> Runs {
         let share = view.plate::<Ratio>(DrivePlate, tolerance).map_or(0.0, Ratio::fraction);
         Some(Voltage::from_volts(volts.volts() * (1.0 + sign * share)))
     };
+    let site_range = match view.choice(Site, "supply-range") {
+        Some("five-percent") => Some(supply_voltage::Range::FivePercent),
+        Some("ten-percent") => Some(supply_voltage::Range::TenPercent),
+        _ => None,
+    };
     once(supply_voltage::check(&supply_voltage::Inputs {
         lines: lines(view, ["supply-u12", "supply-u23", "supply-u31"]),
         nominal: view.plate(Supply, "volts"),
+        site_range,
         drive_lowest: widened("input-volts-low", "input-tolerance-low", -1.0),
         drive_highest: widened("input-volts-high", "input-tolerance-high", 1.0),
     }))
@@ -32,16 +38,16 @@ pub(super) fn supply_unbalance(view: &View<'_>) -> Runs {
     use supply_unbalance::{Definition, DriveLimit, Inputs, check};
     let definition = match view.choice(DrivePlate, "unbalance-definition") {
         Some("negative-sequence") => Definition::NegativeSequence,
-        _ => Definition::LargestDeviation,
+        Some("largest-deviation") => Definition::LargestDeviation,
+        _ => Definition::Larger,
     };
-    let drive_limit =
-        view.plate(DrivePlate, "unbalance-limit").map(|value| DriveLimit { value, definition }).or_else(|| {
-            let value = view.plate(Further, "unbalance-site-limit")?;
-            Some(DriveLimit { value, definition: Definition::LargestDeviation })
-        });
     once(check(&Inputs {
         lines: lines(view, ["supply-u12", "supply-u23", "supply-u31"]),
-        drive_limit,
+        drive_limit: view.plate(DrivePlate, "unbalance-limit").map(|value| DriveLimit { value, definition }),
+        // Nobody enters by which definition the specification means its figure.
+        specified_limit: view
+            .plate(Further, "unbalance-site-limit")
+            .map(|value| DriveLimit { value, definition: Definition::Larger }),
         bypass: view.flag(Drive, "bypass"),
     }))
 }
@@ -52,8 +58,14 @@ pub(super) fn line_current_balance(view: &View<'_>) -> Runs {
     }))
 }
 
+pub(super) fn waiting_time(view: &View<'_>) -> Runs {
+    once(waiting_time::check(&waiting_time::Inputs {
+        waited: view.entered("waited", 0),
+        label: view.plate(DrivePlate, "waiting-time"),
+    }))
+}
+
 pub(super) fn bus_discharged(view: &View<'_>, step: &str) -> Runs {
-    let maker_limit = view.plate(DrivePlate, "bus-limit").or_else(|| view.plate(Site, "residual-voltage-other"));
     if step == "isolate-for-exchange" && view.chosen("exchange-isolation") == Some("not-needed") {
         return Vec::new();
     }
@@ -68,7 +80,8 @@ pub(super) fn bus_discharged(view: &View<'_>, step: &str) -> Runs {
         plus_to_earth: view.reading("bus-plus-to-earth").filter(|_| first),
         minus_to_earth: view.reading("bus-minus-to-earth").filter(|_| first),
         site_applies_iec_60204: view.choice(Site, "residual-voltage").map(|rule| rule == "60"),
-        maker_limit,
+        maker_limit: view.plate(DrivePlate, "bus-limit"),
+        site_limit: view.plate(Site, "residual-voltage-other"),
     }))
 }
 
@@ -92,49 +105,77 @@ pub(super) fn metal(key: Option<&str>) -> Option<Conductor> {
     }
 }
 
+/// Once for the conductor to the drive, with the rule for touch current, and once for the one on to the motor.
 pub(super) fn pe_conductor(view: &View<'_>) -> Runs {
-    use pe_conductor::{Inputs, Routing, check};
-    let routing = match view.flag(Cable, "pe-in-cable") {
-        Some(true) => Some(Routing::InCable),
-        Some(false) => Some(Routing::SeparateUnprotected),
-        None => None,
-    };
+    use pe_conductor::{Inputs, Leg, Routing, check};
     let parallel = |section: Option<CrossSection>, count: &str| {
         let times = view.count(Cable, count).unwrap_or(1).max(1);
         section.map(|s| CrossSection::from_square_millimetres(s.square_millimetres() * f64::from(times)))
     };
-    // A class of leakage stands for a figure on its side of the threshold where no figure is printed.
-    let by_class = match view.choice(DrivePlate, "touch-current") {
-        Some("above") => Some(Current::from_amperes(0.0036)),
-        Some("below") => Some(Current::from_amperes(0.0)),
-        _ => None,
-    };
-    once(check(&Inputs {
-        phase_section: parallel(view.plate(Cable, "cross-section"), "parallel"),
-        pe_section: parallel(view.plate(Cable, "pe-cross-section"), "pe-parallel"),
-        metal: metal(view.choice(Cable, "pe-metal")),
-        routing,
-        touch_current_ac: view.plate(DrivePlate, "touch-current-ac").or(by_class),
-        touch_current_dc: view.plate(DrivePlate, "touch-current-dc").or(by_class.map(|_| Current::from_amperes(0.0))),
+    let to_drive = check(&Inputs {
+        leg: Leg::ToDrive,
+        phase_section: view.plate(Cable, "supply-cross-section"),
+        phase_metal: metal(view.choice(Supply, "feeder-metal")),
+        pe_section: view.plate(Cable, "supply-pe-cross-section"),
+        metal: metal(view.choice(Cable, "supply-pe-metal")),
+        routing: None,
+        touch_current_above: match view.choice(DrivePlate, "touch-current") {
+            Some("above") => Some(true),
+            Some("below") => Some(false),
+            _ => None,
+        },
+        touch_current_ac: view.plate(DrivePlate, "touch-current-ac"),
+        touch_current_dc: view.plate(DrivePlate, "touch-current-dc"),
         second_pe: view.flag(Cable, "second-pe"),
         disconnects_on_break: view.flag(Cable, "pe-monitored"),
         maker_section: view.plate(DrivePlate, "pe-minimum"),
-    }))
+    });
+    let to_motor = check(&Inputs {
+        leg: Leg::ToMotor,
+        phase_section: parallel(view.plate(Cable, "cross-section"), "parallel"),
+        phase_metal: metal(view.choice(Cable, "metal")),
+        pe_section: parallel(view.plate(Cable, "pe-cross-section"), "pe-parallel"),
+        metal: metal(view.choice(Cable, "pe-metal")),
+        routing: match view.flag(Cable, "pe-in-cable") {
+            Some(true) => Some(Routing::InCable),
+            Some(false) => Some(Routing::SeparateUnprotected),
+            None => None,
+        },
+        ..Inputs::default()
+    });
+    vec![("to the drive".to_owned(), to_drive), ("to the motor".to_owned(), to_motor)]
+}
+
+/// Whether the supply is a star with earthed neutral, by the sheet and by what was found; one word against it is enough.
+fn earthed_star(view: &View<'_>) -> Option<bool> {
+    let says = |key: Option<&str>| match key {
+        Some("tn" | "tn-s" | "tn-c-s" | "tn-c" | "tt") => Some(true),
+        Some("it" | "corner-earthed" | "high-resistance") => Some(false),
+        _ => None,
+    };
+    let sheet = says(view.choice(Supply, "earthing"));
+    let found = says(view.chosen("earthing-found"));
+    if sheet == Some(false) || found == Some(false) { Some(false) } else { sheet.or(found) }
 }
 
 pub(super) fn disconnection(view: &View<'_>) -> Runs {
-    // Line to earth of an earthed star supply; a corner-earthed or IT supply is for the design's own proof.
-    let earthed = !matches!(view.choice(Supply, "earthing"), Some("it" | "corner-earthed" | "high-resistance"));
-    let to_earth = view
-        .plate::<Voltage>(Supply, "volts")
-        .filter(|_| earthed)
-        .map(|v| Voltage::from_volts(v.volts() / 3.0_f64.sqrt()));
+    let accepted_proof = match view.choice(Site, "disconnection-rule") {
+        Some("loop-impedance") => Some(disconnection::Proof::MeasuredLoop),
+        Some("design") => Some(disconnection::Proof::Design),
+        _ => None,
+    };
     once(disconnection::check(&disconnection::Inputs {
         loop_impedance: view.reading("loop-impedance"),
-        voltage_to_earth: to_earth,
+        earthed_star: earthed_star(view),
+        voltage_to_earth: view
+            .plate::<Voltage>(Supply, "volts")
+            .map(|v| Voltage::from_volts(v.volts() / 3.0_f64.sqrt())),
         operating_current: view.plate(Supply, "device-trip-current"),
-        stated_limit: None,
+        operating_time: view.plate(Supply, "device-trip-time"),
+        longest_time: view.plate(Site, "disconnection-time"),
+        design_impedance: view.plate(Supply, "loop-impedance"),
         proved_by_design: view.chosen("disconnection-proof").map(|proof| proof == "design"),
+        accepted_proof,
     }))
 }
 

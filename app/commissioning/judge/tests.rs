@@ -1,5 +1,13 @@
 //! Every key that a check asks for exists; every check is in the list and at a step of the built-in procedure.
 
+mod case;
+mod motion;
+mod plates;
+mod readings;
+mod settings;
+mod supply;
+mod unread;
+
 use super::catalogue::{CATALOGUE, names};
 use crate::plant::fields;
 use crate::plant::{Place, Sheet};
@@ -11,9 +19,11 @@ const SOURCES: &[&str] = &[
     include_str!("supply.rs"),
     include_str!("cable.rs"),
     include_str!("windings.rs"),
+    include_str!("drive_train.rs"),
     include_str!("motion.rs"),
     include_str!("settings.rs"),
     include_str!("runs.rs"),
+    include_str!("take.rs"),
 ];
 
 /// Every literal that follows one of these openings in the sources.
@@ -75,7 +85,16 @@ fn every_field_asked_for_is_in_its_sheet() {
 
 #[test]
 fn every_function_asked_for_is_in_the_parameter_record() {
-    for function in literals(&["view.setting(\"", "view.in_force(\"", "view.set_choice(\"", "view.parameter(\""]) {
+    for function in literals(&[
+        "view.setting(\"",
+        "view.in_force(\"",
+        "view.set_choice(\"",
+        "view.parameter(\"",
+        "set.quantity(view, \"",
+        "set.choice(view, \"",
+        "at(\"",
+        "stands(\"",
+    ]) {
         assert!(crate::record::functions::find(&function).is_some(), "no function `{function}`");
     }
 }

@@ -4,8 +4,9 @@ use super::{Runs, View, once};
 use crate::plant::Sheet::{Cable, DrivePlate, Motor, Site};
 use engineering::checks::insulation_resistance::{Construction, System};
 use engineering::checks::{
-    above_dew_point, brake_resistor_ohms, dielectric_absorption, identified_resistance, insulation_resistance,
-    insulation_test_voltage, joint_resistance, polarization_index, sensor_resistance, winding_balance,
+    above_dew_point, brake_resistor_ohms, dielectric_absorption, discharge_time, identified_resistance,
+    insulation_resistance, insulation_test_voltage, joint_resistance, polarization_index, sensor_resistance,
+    winding_balance,
 };
 use engineering::{Duration, Power, Resistance};
 
@@ -103,6 +104,19 @@ pub(super) fn polarization_index(view: &View<'_>) -> Runs {
     once(outcome)
 }
 
+pub(super) fn discharge_time(view: &View<'_>) -> Runs {
+    // The voltage stood on the winding for one minute, or for ten where the ten-minute run was made.
+    let minutes = match (view.entry("ir-10min", 0), view.entry("ir-60s", 0)) {
+        (Some(_), _) => Some(10.0),
+        (None, Some(_)) => Some(1.0),
+        (None, None) => None,
+    };
+    once(discharge_time::check(&discharge_time::Inputs {
+        earthed: view.entered("discharge-time", 0),
+        test: minutes.map(|m| Duration::from_seconds(m * 60.0)),
+    }))
+}
+
 pub(super) fn winding_balance(view: &View<'_>) -> Runs {
     once(winding_balance::check(&winding_balance::Inputs {
         u_v: view.reading("winding-r-uv"),
@@ -151,6 +165,8 @@ pub(super) fn sensor_resistance(view: &View<'_>) -> Runs {
         in_series: view.count(Motor, "sensor-count"),
         winding_temperature: view.reading("sensor-winding-temperature").or_else(|| view.reading("winding-temperature")),
         lead_resistance: view.plate(Motor, "sensor-lead"),
+        maker_least: view.plate(Motor, "sensor-low"),
+        maker_most: view.plate(Motor, "sensor-high"),
     }))
 }
 

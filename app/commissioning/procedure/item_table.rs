@@ -27,6 +27,8 @@ pub(super) struct ItemTable {
     options: Vec<ChoiceOption>,
     #[serde(default, skip_serializing_if = "is_false")]
     optional: bool,
+    #[serde(default, skip_serializing_if = "is_false")]
+    left_alone_only: bool,
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     when: Vec<String>,
 }
@@ -50,8 +52,11 @@ impl TryFrom<ItemTable> for Item {
     type Error = String;
 
     fn try_from(table: ItemTable) -> Result<Self, String> {
-        let ItemTable { key, label, hint, kind, quantity, unit, instrument, low, high, options, optional, when } =
-            table;
+        let ItemTable { key, label, hint, kind, quantity, unit, instrument, low, high, options, .. } = table;
+        let ItemTable { optional, left_alone_only, when, .. } = table;
+        if left_alone_only && !optional {
+            return Err(format!("item `{key}`: only an optional item can be left_alone_only"));
+        }
         let measures = quantity.is_some() || unit.is_some() || instrument || low.is_some() || high.is_some();
         if measures && kind != KindName::Reading {
             return Err(format!("item `{key}`: only a reading has quantity, unit, instrument, low or high"));
@@ -72,13 +77,13 @@ impl TryFrom<ItemTable> for Item {
             KindName::Note => ItemKind::Note,
             KindName::Photo => ItemKind::Photo,
         };
-        Ok(Self { key, label, hint, kind, optional, when })
+        Ok(Self { key, label, hint, kind, optional, left_alone_only, when })
     }
 }
 
 impl From<Item> for ItemTable {
     fn from(item: Item) -> Self {
-        let Item { key, label, hint, kind, optional, when } = item;
+        let Item { key, label, hint, kind, optional, left_alone_only, when } = item;
         let mut table = Self {
             key,
             label,
@@ -91,6 +96,7 @@ impl From<Item> for ItemTable {
             high: None,
             options: Vec::new(),
             optional,
+            left_alone_only,
             when,
         };
         match kind {
@@ -128,6 +134,7 @@ mod tests {
             (format!("{reading}quantity = 'voltage'\ncolour = 'red'"), "unknown field `colour`"),
             (format!("{reading}quantity = 'voltage'\noptions = [{{ key = 'x', label = 'X' }}]"), "only a choice"),
             ("key = 'a'\nlabel = 'A'\nkind = 'note'\nlow = 1.0".to_owned(), "only a reading"),
+            ("key = 'a'\nlabel = 'A'\nkind = 'note'\nleft_alone_only = true".to_owned(), "only an optional"),
             ("key = 'a'\nlabel = 'A'\nkind = 'choice'".to_owned(), "two options"),
             ("key = 'a'\nlabel = 'A'\nkind = 'drawing'".to_owned(), "unknown variant"),
         ] {

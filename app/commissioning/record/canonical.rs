@@ -1,6 +1,7 @@
 //! The canonical record: what a signature's digest covers, and what record.json holds.
 
 mod contradiction;
+mod numbers;
 mod parts;
 mod rebuild;
 #[cfg(test)]

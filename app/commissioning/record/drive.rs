@@ -1,7 +1,7 @@
 //! A drive and its record, as they stand after the last event of the drive's chain.
 
 use super::canonical::SitePart;
-use super::entry::{Entry, EntryPlace, Isolation, Release, SettledOtherwise};
+use super::entry::{Entry, EntryPlace, Isolation, OnceOtherwise, Release, SettledOtherwise};
 use super::finding::Finding;
 use super::parameter::ParameterPlace;
 use super::sign::Signature;
@@ -50,6 +50,8 @@ pub struct Record {
     pub entries: BTreeMap<EntryPlace, Slot<Entry>>,
     /// Steps settled otherwise, with the reason as value.
     pub otherwise: BTreeMap<String, Recorded<(SettledOtherwise, String)>>,
+    /// Steps that were settled otherwise once and no longer are so, oldest first.
+    pub once_otherwise: Vec<OnceOtherwise>,
     /// Every stretch of isolation, oldest first; in force when the last is not lifted.
     pub isolations: Vec<Isolation>,
     /// Hold points released, by phase.
@@ -156,6 +158,7 @@ impl Record {
             status: Status::InProgress { returned: None },
             entries: BTreeMap::new(),
             otherwise: BTreeMap::new(),
+            once_otherwise: Vec::new(),
             isolations: Vec::new(),
             releases: BTreeMap::new(),
             directions_void_before: None,

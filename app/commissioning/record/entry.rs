@@ -1,6 +1,7 @@
 //! What is recorded at a step: entries, isolation, releases, steps settled otherwise.
 
 use crate::people::Instrument;
+use crate::plant::Recorded;
 use crate::{Timestamp, Typed};
 use serde::{Deserialize, Serialize};
 
@@ -15,10 +16,10 @@ pub struct EntryPlace {
 }
 
 impl EntryPlace {
-    /// Whether it is a direction seen: its item's key begins with `direction-`.
+    /// Whether it is a direction seen, or the encoder's sign, which was judged against one.
     #[must_use]
     pub fn is_direction(&self) -> bool {
-        self.item.starts_with("direction-")
+        self.item.starts_with("direction-") || self.item == "encoder-sign"
     }
 
     /// Outside a table.
@@ -114,6 +115,18 @@ pub enum ReleaseRole {
     Engineer,
     /// A witness from the client, printed name recorded by the engineer.
     Witness,
+}
+
+/// How a step was once settled without its entries, and who ended that: reasons once given stay readable.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct OnceOtherwise {
+    /// Which step.
+    pub step: String,
+    /// How and why, by whom and when.
+    pub settled: Recorded<(SettledOtherwise, String)>,
+    /// By whom and when it was resumed, or settled otherwise anew.
+    pub ended: Recorded<()>,
 }
 
 /// A step settled without its entries.

@@ -2,6 +2,20 @@
 
 use engineering::Kind;
 
+/// The unit in which a typed prefix counts.
+pub const OHM: &str = "Ω";
+/// What may be typed after a resistance: as typed, the prefix it means, and its factor.
+const PREFIXES: [(char, &str, f64); 8] = [
+    ('k', "k", 1e3),
+    ('K', "k", 1e3),
+    ('M', "M", 1e6),
+    ('G', "G", 1e9),
+    ('T', "T", 1e12),
+    ('m', "m", 1e-3),
+    ('µ', "µ", 1e-6),
+    ('u', "µ", 1e-6),
+];
+
 /// Longest text that can be a number.
 const LONGEST: usize = 40;
 
@@ -9,7 +23,7 @@ const LONGEST: usize = 40;
 ///
 /// A single comma or point is the decimal sign, except where exactly three digits follow one to three others with a
 /// comma (`1,234`): that is ambiguous and refused. Blanks and apostrophes group digits. A trailing `k`, `M`, `G`, `T`,
-/// `m`, `µ` or `u` multiplies, for resistances only.
+/// `m`, `µ` or `u` multiplies, for resistances only: such a number counts in ohms, whatever unit stands beside it.
 ///
 /// # Errors
 /// When the text is empty, no number, or ambiguous.
@@ -30,17 +44,27 @@ pub fn understand(text: &str, kind: Kind) -> Result<f64, String> {
     if result.is_finite() { Ok(result) } else { Err("This number is too large.".to_owned()) }
 }
 
-fn split_multiplier(text: &str, kind: Kind) -> (&str, f64) {
-    if kind == Kind::Resistance {
-        for (suffix, factor) in
-            [('k', 1e3), ('K', 1e3), ('M', 1e6), ('G', 1e9), ('T', 1e12), ('m', 1e-3), ('µ', 1e-6), ('u', 1e-6)]
-        {
-            if let Some(rest) = text.strip_suffix(suffix) {
-                return (rest.trim_end(), factor);
-            }
-        }
+/// The prefix that a text carries at its end (`k` in `500k`); only resistances are typed so.
+#[must_use]
+pub fn prefix(text: &str, kind: Kind) -> Option<&'static str> {
+    if kind != Kind::Resistance {
+        return None;
     }
-    (text, 1.0)
+    Some(parted(text.trim()).1).filter(|prefix| !prefix.is_empty())
+}
+
+/// A resistance's text without its prefix, and the prefix; an empty one where there is none.
+pub(super) fn parted(text: &str) -> (&str, &'static str) {
+    let found = PREFIXES.iter().find_map(|(typed, prefix, _)| Some((text.strip_suffix(*typed)?.trim_end(), *prefix)));
+    found.unwrap_or((text, ""))
+}
+
+fn split_multiplier(text: &str, kind: Kind) -> (&str, f64) {
+    if prefix(text, kind).is_none() {
+        return (text, 1.0);
+    }
+    let (rest, prefix) = parted(text);
+    (rest, PREFIXES.iter().find(|(_, known, _)| *known == prefix).map_or(1.0, |(.., factor)| *factor))
 }
 
 /// Rewrites what was typed with a decimal point and no grouping, or says why it cannot.

@@ -71,7 +71,7 @@ fn fold(chain: &[Sealed]) -> Option<Drive> {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig { cases: 24, failure_persistence: None, ..ProptestConfig::default() })]
+    #![proptest_config(ProptestConfig { cases: 16, failure_persistence: None, ..ProptestConfig::default() })]
 
     #[test]
     fn the_chain_alone_gives_the_same_state(complete in any::<bool>(), acts in proptest::collection::vec(any::<(u8, u8, u8, u8)>(), 1..24)) {

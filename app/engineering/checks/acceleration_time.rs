@@ -13,10 +13,10 @@ use crate::decision::Measured;
 use crate::formulas::plausible;
 use crate::limit_rule::LimitRule;
 use crate::motion::machine::newton_metres;
-use crate::motion::ramp_up::RampUp;
+use crate::motion::ramp_up::{RampUp, asked};
 use crate::motion::{End, Machine, Trace};
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Duration, Speed};
+use crate::quantity::{Duration, Speed, Torque};
 use crate::rounding::significant;
 use crate::sources::motion::{RM_01, RM_08, VF_04};
 
@@ -45,6 +45,18 @@ pub fn trace(inputs: &Inputs) -> Option<Trace> {
     let run = run_up(&mut b, inputs)?;
     let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
     Some(run.on_ramp(set))
+}
+
+/// The largest torque at the motor's shaft that the set ramp asks, not cut by the current limit: what a current limit
+/// is to be judged by. None while an input is missing.
+#[must_use]
+pub fn torque_asked(inputs: &Inputs) -> Option<Torque> {
+    let mut b = OutcomeBuilder::new(NAME);
+    let train = inputs.machine.train(&mut b)?;
+    let from = plausible::not_negative(&mut b, inputs.from_speed.or(Some(Speed::from_rpm(0.0))), "speed at the start")?;
+    let to = plausible::positive(&mut b, inputs.to_speed.or(inputs.machine.rated_speed), "speed at the end")?;
+    let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
+    (to.rpm() > from.rpm()).then(|| asked(&train, from, to, set)).filter(|t| t.newton_metres().is_finite())
 }
 
 /// Runs the check.
@@ -255,6 +267,17 @@ mod tests {
         let outcome = check(&inputs);
         assert!((figure(&outcome, "least time") - 3.216).abs() < 0.011, "{outcome:?}");
         assert!((figure(&outcome, "shortest even ramp") - 3.216).abs() < 0.011);
+    }
+
+    /// Row RM-01: J·Δω/t + T_L = 4 kg·m² × 153.94 rad/s/10 s + 70 N·m = 131.6 N·m, whatever the current limit is.
+    #[test]
+    fn the_torque_that_a_ramp_asks_does_not_know_the_limit() {
+        for limit in [Some(12.0), Some(31.0), None] {
+            let mut inputs = set(10.0);
+            inputs.machine.current_limit = limit.map(Current::from_amperes);
+            assert!((torque_asked(&inputs).expect("complete").newton_metres() - 131.575).abs() < 0.01);
+        }
+        assert!(torque_asked(&Inputs::default()).is_none());
     }
 
     #[test]

@@ -32,7 +32,7 @@ pub struct Inputs {
     pub to_speed: Option<Speed>,
     /// Set time for this very change of speed.
     pub set_time: Option<Duration>,
-    /// Time in each cycle during which an overhauling load is held at the first speed.
+    /// Time in each cycle during which an overhauling load is held at the first speed; asked only of such a load.
     pub holding_time: Option<Duration>,
     /// From one braking to the next.
     pub cycle_time: Option<Duration>,
@@ -104,7 +104,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
 }
 
 fn ramp(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<(Train, Speed, Speed, Duration)> {
-    let train = inputs.machine.train(b);
+    let train = inputs.machine.braked_train(b);
     let from = match (inputs.from_speed, inputs.machine.rated_speed) {
         (None, Some(rated)) => Some(b.assume(None, rated, "speed at the start", "the motor's rated speed")),
         (given, _) => given,

@@ -2,7 +2,8 @@
 //!
 //! Volts left on the DC bus after the waiting time: between its poles and, where entered, from each pole to earth.
 //!
-//! Limit 50 V; 60 V where the site applies IEC 60204-1; a lower one of the drive's maker goes first. A reading that,
+//! Limit 50 V; 60 V where the site applies IEC 60204-1; the lowest of that, of the drive's manual and of the site's own
+//! counts. A reading that,
 //! with its instrument's doubt, can lie above the limit is outside. Below it the check gives a figure and never a
 //! verdict: waiting and one measurement do not prove a circuit dead. Measure by the drive's manual and local rules.
 
@@ -39,6 +40,8 @@ pub struct Inputs {
     pub site_applies_iec_60204: Option<bool>,
     /// Limit of the drive's manual.
     pub maker_limit: Option<Voltage>,
+    /// A limit that the site names itself.
+    pub site_limit: Option<Voltage>,
 }
 
 /// Whether IEC 60204-1 asks for a durable warning with the waiting time: volts five seconds after switching off above
@@ -60,14 +63,20 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.cite(rule.source);
     let mut limit = rule.value;
     let mut words = rule.source.text;
-    if let Some(own) = inputs.maker_limit {
-        let Some(own) = positive(&mut b, Some(own), "limit of the drive's manual") else { return b.not_assessed() };
-        // The maker may ask for less than the site's rule, never allow more.
+    let own_limits =
+        [(inputs.maker_limit, "limit of the drive's manual"), (inputs.site_limit, "limit named by the site")];
+    for (own, whose) in own_limits {
+        let Some(own) = own else { continue };
+        let Some(own) = positive(&mut b, Some(own), whose) else { return b.not_assessed() };
+        // Whoever names one may ask for less than the rule, never allow more.
         if own.volts() < limit {
             limit = own.volts();
-            words = "the maker's";
+            words = whose;
         } else {
-            b.note("The drive's manual names a higher limit; the site's lower one stands.");
+            b.note(format!(
+                "The {whose}, {} V, is not below another one; the lowest stands.",
+                significant(own.volts(), 3)
+            ));
         }
     }
     let limit_shown = significant(limit, 3);
@@ -169,6 +178,17 @@ mod tests {
         let maker = |volts| Inputs { maker_limit: Some(Voltage::from_volts(volts)), ..left(45.0) };
         assert_eq!(check(&maker(42.0)).verdict, Verdict::Outside);
         assert_eq!(check(&maker(75.0)).limit, "not above 50.0 V");
+        let both = |maker, site| {
+            let outcome = check(&Inputs {
+                maker_limit: Some(Voltage::from_volts(maker)),
+                site_limit: Some(Voltage::from_volts(site)),
+                ..left(28.0)
+            });
+            (outcome.verdict, outcome.limit, outcome.working[0].formula.clone())
+        };
+        let said = |words: &str| (Verdict::Outside, "not above 25.0 V".to_owned(), words.to_owned());
+        assert_eq!(both(30.0, 25.0), said("limit named by the site"));
+        assert_eq!(both(25.0, 30.0), said("limit of the drive's manual"));
     }
 
     /// C-DC-008 and C-DC-009 (IEC 60204-1:2016 clause 6.2.4).

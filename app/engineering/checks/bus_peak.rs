@@ -51,7 +51,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let (Some(trip), Some(limit), Some(peak)) = (trip, limit, peak) else { return b.not_assessed() };
     let measured = Measured::direct(&peak);
     if measured.doubt.is_none() {
-        b.needed(format!("with this meter {} V is within", significant(limit - measured.expanded, 3)));
+        b.needed(format!("With this meter {} V is within", significant(limit - measured.expanded, 3)));
     }
     let verdict =
         if measured.value >= trip.volts() { Verdict::Outside } else { marking::hint(measured.at_most(limit)) };

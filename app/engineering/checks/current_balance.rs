@@ -3,13 +3,13 @@
 //! The three motor currents at the drive output against their mean.
 //!
 //! d = max |I_i − Ī|/Ī, as NEMA MG 1 defines unbalance (row UB-01). Up to 5 % within, beyond 10 % outside, between
-//! marginal: common practice, no source. On a pulsed output a meter for the fundamental is needed (row TF-03).
+//! marginal: common practice, no source. A limit of the motor's maker replaces both. On a pulsed output a meter for the fundamental is needed (row TF-03).
 
 use crate::formulas::{marking, plausible, triple};
 use crate::limit::Limit;
 use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::Current;
+use crate::quantity::{Current, Ratio};
 use crate::reading::Reading;
 use crate::rounding::significant;
 use crate::sources::runs::{CURRENT_BALANCE, TF_03, UB_01};
@@ -48,6 +48,8 @@ pub struct Inputs {
     pub w: Option<Reading<Current>>,
     /// What the meter shows on a pulsed output.
     pub meter: Option<Meter>,
+    /// Largest unbalance by the motor's maker.
+    pub maker_maximum: Option<Ratio>,
 }
 
 /// Runs the check.
@@ -57,8 +59,24 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.cite(UB_01);
     b.cite(CURRENT_BALANCE);
     b.cite(TF_03);
-    b.limit("at most 5 % off the mean; beyond 10 % is outside (common practice)");
-    b.rule(LimitRule::linear("%").at_most(GOOD.value, "≤ 5 %").tick(FAULT.value, "10 %"));
+    let own = match inputs.maker_maximum {
+        Some(own) => {
+            let Some(own) = plausible::positive(&mut b, Some(own), "the maker's largest current unbalance") else {
+                return b.not_assessed();
+            };
+            Some(own.fraction() * 100.0)
+        }
+        None => None,
+    };
+    let (good, fault) = own.map_or((GOOD.value, FAULT.value), |own| (own, own));
+    let good_shown = significant(good, 3);
+    if own.is_some() {
+        b.limit(format!("at most {good_shown} % off the mean, the maker's"));
+        b.rule(LimitRule::linear("%").at_most(good, format!("≤ {good_shown} %")));
+    } else {
+        b.limit("at most 5 % off the mean; beyond 10 % is outside (common practice)");
+        b.rule(LimitRule::linear("%").at_most(GOOD.value, "≤ 5 %").tick(FAULT.value, "10 %"));
+    }
     b.note(match inputs.meter {
         Some(Meter::TrueRms) => "A true r.m.s. meter reads high on a pulsed output; it reads all three phases alike.",
         Some(Meter::Fundamental) => "The meter gives the fundamental, as a pulsed output asks for.",
@@ -93,7 +111,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     );
     b.figure("current unbalance", spread.largest.value, 3, "%");
     b.figure("mean motor current", spread.mean, 3, "A");
-    let verdict = marking::graded(&spread.largest, GOOD.value, FAULT.value);
+    let verdict = marking::graded(&spread.largest, good, fault);
     marking::mark(&mut b, &spread.largest, format!("{deviation} %"), verdict);
     b.judged(
         verdict,
@@ -119,7 +137,7 @@ mod tests {
             full_scale: 0.0,
         };
         let [u, v, w] = amperes.map(|i| Some(Reading::with(Current::from_amperes(i), clamp)));
-        Inputs { u, v, w, meter: Some(Meter::Fundamental) }
+        Inputs { u, v, w, meter: Some(Meter::Fundamental), maker_maximum: None }
     }
 
     /// Limits: common practice, no source. Definition: NEMA MG 1 (row UB-01), here Hubert Ex. 5.14 as currents.
@@ -132,6 +150,18 @@ mod tests {
         assert_eq!(check(&of([8.95, 10.0, 11.05])).verdict, Verdict::Outside);
         assert_eq!(check(&of([0.0, 10.0, 10.0])).verdict, Verdict::Outside);
         assert_eq!(check(&of([46.0, 45.5, 44.0])).figures[0].value, "2.58");
+    }
+
+    /// The maker's own limit goes first, in either direction (standing rule of every check).
+    #[test]
+    fn the_makers_limit_replaces_practice() {
+        let own = |percent: f64, amperes| {
+            check(&Inputs { maker_maximum: Some(Ratio::from_fraction(percent / 100.0)), ..of(amperes) })
+        };
+        assert_eq!(own(3.0, [9.6, 10.0, 10.4]).verdict, Verdict::Outside);
+        assert_eq!(own(3.0, [9.6, 10.0, 10.4]).limit, "at most 3.00 % off the mean, the maker's");
+        assert_eq!(own(8.0, [9.4, 10.0, 10.6]).verdict, Verdict::Within);
+        assert_eq!(own(0.0, [10.0; 3]).verdict, Verdict::NotAssessed);
     }
 
     #[test]

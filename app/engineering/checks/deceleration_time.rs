@@ -2,7 +2,8 @@
 //!
 //! Whether the set ramp down can be followed: braking torque within the current limit, bus volts below the trip.
 //!
-//! Braking torque J·dω/dt less what the load does; the load helps less by the gear's losses (row RM-02). What comes
+//! Braking torque J·dω/dt less what the load does; the load helps less by the gear's losses (row RM-02). A load that
+//! can drive the motor does not help: it is judged pulling all the way, with the torque that its sheet gives. What comes
 //! back fills the bus capacitors: V₂ = √(V₁² + 2·E/C) (row DC-09). What motor and inverter lose on the way is a
 //! bracket unless it is entered: nothing, to 15 % of rated power (common practice). With a chopper the bus is held at
 //! its voltage; what the resistor has to stand is the check `braking`. Within: the limit does not act, and the bus
@@ -167,7 +168,7 @@ fn limits(b: &mut OutcomeBuilder, inputs: &Inputs, run: &RampDown, ends: Option<
 }
 
 fn run_down(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<RampDown> {
-    let (motor, train, limit) = (inputs.machine.motor(b), inputs.machine.train(b), inputs.machine.limit(b));
+    let (motor, train, limit) = (inputs.machine.motor(b), inputs.machine.braked_train(b), inputs.machine.limit(b));
     let to = b.assume(inputs.to_speed, Speed::from_rpm(0.0), "speed at the end", "standstill");
     let to = plausible::not_negative(b, Some(to), "speed at the end");
     let motor = motor?;
@@ -353,5 +354,20 @@ mod tests {
         let mut inputs = example(10.0);
         inputs.machine.load = Some(LoadTorque::Constant(Torque::from_newton_metres(-300.0)));
         assert_eq!(check(&inputs).verdict, Verdict::Outside);
+    }
+
+    /// The load of C-RM-008 helps to stop; the same one pulling fills the bus (rows RM-05, DC-09).
+    #[test]
+    fn a_load_that_can_drive_the_motor_never_helps_to_stop() {
+        assert_eq!(check(&example(24.0)).verdict, Verdict::Within);
+        let mut inputs = example(24.0);
+        inputs.machine.overhauling = true;
+        assert_eq!(check(&inputs).missing[0].what, "torque of the load when it drives the motor");
+        inputs.machine.overhauling_torque = Some(Torque::from_newton_metres(10.0));
+        assert_eq!(check(&inputs).verdict, Verdict::Outside);
+        inputs.chopper_voltage = Some(Voltage::from_volts(750.0));
+        let held = check(&inputs);
+        assert_eq!(held.verdict, Verdict::Within, "{}", held.summary);
+        assert!(held.notes.iter().any(|n| n.contains("pulling")));
     }
 }

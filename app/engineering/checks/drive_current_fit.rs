@@ -4,8 +4,9 @@
 //! current: I_drive·k ≥ I_motor.
 //!
 //! The maker's reduction goes first. Otherwise (common practice, row DR-02) 1 % for each 100 m above 1000 m and 2.5 %
-//! for each kelvin above 40 °C, the stricter end of what is usual; beyond 4000 m or 50 °C only the maker's figure
-//! counts. Place not stated: assumed up to 1000 m and 40 °C.
+//! for each kelvin above 40 °C, the stricter end of what is usual, from the altitude and air of the drive's rating where
+//! they are entered; beyond 4000 m, or 50 °C and the rating, only the maker's figure counts. Place not stated: assumed up
+//! to 1000 m and 40 °C.
 
 use crate::decision::Measured;
 use crate::formulas::derating;
@@ -40,6 +41,10 @@ pub struct Inputs {
     pub altitude: Option<Length>,
     /// Hottest air at the drive.
     pub ambient: Option<Temperature>,
+    /// Altitude up to which the drive has its full current; 1000 m is usual.
+    pub altitude_rated: Option<Length>,
+    /// Hottest air in which the drive has its full current; 40 °C is usual.
+    pub ambient_rated: Option<Temperature>,
     /// Part of the current lost for every 100 m above 1000 m.
     pub lost_per_hundred_metres: Option<Ratio>,
     /// Part of the current lost for every kelvin above 40 °C.
@@ -117,44 +122,52 @@ fn reduction(b: &mut OutcomeBuilder, inputs: &Inputs) -> Result<Option<f64>, Str
             (Some(altitude), Some(ambient)) => (altitude, ambient),
             _ => return Ok(None),
         };
-    if altitude.metres() > HIGHEST_METRES || ambient.celsius() > HOTTEST_CELSIUS {
+    let high = inputs.altitude_rated.unwrap_or(derating::FREE_ALTITUDE);
+    let hot = inputs.ambient_rated.unwrap_or(derating::FREE_AMBIENT);
+    let (Some(high), Some(hot)) =
+        (finite(b, Some(high), "altitude of the drive's rating"), finite(b, Some(hot), "air of the drive's rating"))
+    else {
+        return Ok(None);
+    };
+    let (high_shown, hot_shown) = (significant(high.metres(), 4), significant(hot.celsius(), 3));
+    if altitude.metres() > HIGHEST_METRES.max(high.metres()) || ambient.celsius() > HOTTEST_CELSIUS.max(hot.celsius()) {
         return Err("Not assessed: above 4000 m or 50 °C only the drive maker's reduction counts. Enter it.".to_owned());
     }
     let mut factor = 1.0;
-    if altitude.metres() > 1000.0 {
+    if altitude.metres() > high.metres() {
         b.cite(DR_02);
         let rate = b.assume(
             inputs.lost_per_hundred_metres,
             Ratio::from_fraction(0.01),
             "loss for each 100 m",
-            "1 % above 1000 m, common practice",
+            "1 % above the altitude of the rating, common practice",
         );
         let Some(rate) = proper_fraction(b, Some(rate), "loss for each 100 m") else { return Ok(None) };
-        factor *= derating::by_altitude(altitude, rate).fraction();
+        factor *= derating::by_altitude(altitude, high, rate).fraction();
         b.line(
             "altitude",
-            "1 − (h − 1000 m)/100 m·a",
+            &format!("1 − (h − {high_shown} m)/100 m·a"),
             format!("h = {} m, a = {} %", significant(altitude.metres(), 4), significant(rate.fraction() * 100.0, 3)),
             significant(factor, 4),
         );
     }
-    if ambient.celsius() > 40.0 {
+    if ambient.celsius() > hot.celsius() {
         b.cite(DR_02);
         let rate = b.assume(
             inputs.lost_per_kelvin,
             Ratio::from_fraction(0.025),
             "loss for each kelvin",
-            "2.5 % above 40 °C, the strict end of common practice",
+            "2.5 % above the air of the rating, the strict end of common practice",
         );
         let Some(rate) = proper_fraction(b, Some(rate), "loss for each kelvin") else { return Ok(None) };
-        let hot = derating::by_ambient(ambient, rate).fraction();
+        let left = derating::by_ambient(ambient, hot, rate).fraction();
         b.line(
             "heat",
-            "1 − (T − 40 °C)·a",
+            &format!("1 − (T − {hot_shown} °C)·a"),
             format!("T = {} °C, a = {} %", significant(ambient.celsius(), 3), significant(rate.fraction() * 100.0, 3)),
-            significant(hot, 4),
+            significant(left, 4),
         );
-        factor *= hot;
+        factor *= left;
     }
     Ok(Some(factor))
 }
@@ -177,6 +190,8 @@ mod tests {
             ambient: Some(Temperature::from_celsius(45.0)),
             lost_per_hundred_metres: Some(Ratio::from_fraction(0.01)),
             lost_per_kelvin: Some(Ratio::from_fraction(0.01)),
+            altitude_rated: None,
+            ambient_rated: None,
             maker_reduction: None,
         }
     }
@@ -187,6 +202,21 @@ mod tests {
         assert_eq!(check(&fit(100.0, 87.4)).verdict, Verdict::Within);
         assert_eq!(check(&fit(100.0, 87.39)).verdict, Verdict::Within);
         assert_eq!(check(&fit(100.0, 87.41)).verdict, Verdict::Outside);
+    }
+
+    /// Row DR-02 (common practice) from another foot: a drive rated for 30 °C loses 15 K at 45 °C, one for 50 °C none.
+    #[test]
+    fn the_drives_own_rating_is_where_the_reduction_begins() {
+        let rated = |metres: f64, celsius: f64| {
+            check(&Inputs {
+                altitude_rated: Some(Length::from_metres(metres)),
+                ambient_rated: Some(Temperature::from_celsius(celsius)),
+                ..fit(100.0, 80.0)
+            })
+            .limit
+        };
+        assert_eq!(rated(2000.0, 50.0), "motor current at most 100.0 A");
+        assert_eq!(rated(1000.0, 30.0), "motor current at most 78.20 A");
     }
 
     #[test]

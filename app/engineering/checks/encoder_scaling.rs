@@ -2,7 +2,7 @@
 //!
 //! The speed that the drive makes of its encoder, against an independent measurement of the shaft.
 //!
-//! |n_drive/n − 1| ≤ 0.5 % (common practice, row EN-04). n = 60·f_pulse/PPR (row EN-01); a wrong count shows as the
+//! |n_drive/n − 1| ≤ 0.5 % (common practice, row EN-04), or the site's own tolerance. n = 60·f_pulse/PPR (row EN-01); a wrong count shows as the
 //! ratio of pulse numbers, a missing or doubled edge count as 2 or 4. Direction belongs to the rotation check.
 
 use crate::decision::Measured;
@@ -10,7 +10,7 @@ use crate::formulas::{marking, plausible};
 use crate::limit::Limit;
 use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Frequency, Speed};
+use crate::quantity::{Frequency, Ratio, Speed};
 use crate::reading::Reading;
 use crate::rounding::significant;
 use crate::sources::sensors::{EN_01, ENCODER_AGREEMENT};
@@ -33,6 +33,10 @@ pub struct Inputs {
     pub pulses_set: Option<u32>,
     /// Pulses a revolution on the encoder's plate.
     pub pulses_plate: Option<u32>,
+    /// Largest error that the site allows.
+    pub own_tolerance: Option<Ratio>,
+    /// Turns of the encoder for one turn of the motor.
+    pub turns_ratio: Option<Ratio>,
 }
 
 /// n = 60·f_pulse/PPR; `None` without pulses.
@@ -54,8 +58,24 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let mut b = OutcomeBuilder::new(NAME);
     b.cite(EN_01);
     b.cite(ENCODER_AGREEMENT);
-    b.limit("at most 0.5 % apart (common practice)");
-    b.rule(LimitRule::linear("%").between(-ERROR.value, "−0.5 %", ERROR.value, "+0.5 %"));
+    let allowed = match inputs.own_tolerance {
+        Some(own) => {
+            let Some(own) = plausible::positive(&mut b, Some(own), "scaling error allowed") else {
+                return b.not_assessed();
+            };
+            own.fraction() * 100.0
+        }
+        None => ERROR.value,
+    };
+    let allowed_shown = significant(allowed, 2);
+    let whose = if inputs.own_tolerance.is_some() { "as entered" } else { "common practice" };
+    b.limit(format!("at most {allowed_shown} % apart ({whose})"));
+    b.rule(LimitRule::linear("%").between(
+        -allowed,
+        format!("−{allowed_shown} %"),
+        allowed,
+        format!("+{allowed_shown} %"),
+    ));
     if let (Some(set), Some(plate)) = (inputs.pulses_set, inputs.pulses_plate) {
         b.line(
             "pulses a revolution",
@@ -79,14 +99,14 @@ pub fn check(inputs: &Inputs) -> Outcome {
     );
     b.figure("encoder speed off", error, 2, "%");
     let measured = Measured { value: error, ..Measured::scaled(&reading, 100.0 * ratio / reading.number()) };
-    let verdict = measured.between(-ERROR.value, ERROR.value);
+    let verdict = measured.between(-allowed, allowed);
     marking::mark(&mut b, &measured, format!("{off} %"), verdict);
     let cause = cause(ratio, inputs);
     b.judged(
         verdict,
         match verdict {
             Verdict::Outside => format!("The encoder's speed is {off} % off: {cause}. Correct it before closing the speed loop."),
-            Verdict::Marginal => format!("The encoder's speed is {off} % off: the tachometer cannot tell it from 0.5 %, or its word does not count."),
+            Verdict::Marginal => format!("The encoder's speed is {off} % off: the tachometer cannot tell it from {allowed_shown} %, or its word does not count."),
             _ => format!("The encoder's speed is {off} % off the measured one."),
         },
     )
@@ -104,6 +124,14 @@ fn cause(ratio: f64, inputs: &Inputs) -> String {
         && near(f64::from(plate) / f64::from(set))
     {
         return format!("{set} pulses set, {plate} on the plate");
+    }
+    if let Some(turns) = inputs.turns_ratio.map(Ratio::fraction).filter(|r| (r - 1.0).abs() > 0.01)
+        && near(turns)
+    {
+        return format!(
+            "the encoder turns {} times for one turn of the motor, which the drive does not reckon with",
+            significant(turns, 3)
+        );
     }
     match [
         (2.0, "edges counted twice"),
@@ -137,6 +165,7 @@ mod tests {
             measured: Some(Reading::with(Speed::from_rpm(measured), tachometer)),
             pulses_set: Some(1024),
             pulses_plate: Some(1024),
+            ..Inputs::default()
         }
     }
 
@@ -171,6 +200,12 @@ mod tests {
         assert!(check(&of(0.0, 1000.0)).summary.contains("no pulses"));
         let wrong = Inputs { pulses_plate: Some(2500), ..of(2441.4, 1000.0) };
         assert!(check(&wrong).summary.contains("1024 pulses set, 2500 on the plate"));
+        let geared = Inputs { turns_ratio: Some(Ratio::from_fraction(2.5)), ..of(2500.0, 1000.0) };
+        assert!(check(&geared).summary.contains("turns 2.50 times"), "{}", check(&geared).summary);
+        let own =
+            |percent: f64| Inputs { own_tolerance: Some(Ratio::from_fraction(percent / 100.0)), ..of(1003.0, 1000.0) };
+        assert_eq!((check(&own(0.1)).verdict, check(&own(1.0)).verdict), (Verdict::Outside, Verdict::Within));
+        assert_eq!(check(&own(0.1)).limit, "at most 0.10 % apart (as entered)");
     }
 
     #[test]

@@ -4,10 +4,12 @@
 //!
 //! Total demand distortion TDD = THD·I₁/I_L and each order I_h/I_L = (I_h/I₁)·I₁/I_L, I_L the maximum demand current,
 //! limits by Isc/I_L (120 V to 69 kV). Even orders: edition not stated, assumed 2014, the stricter. At a drive's own
-//! terminals IEEE 519 does not apply: THD is shown beside the 30.0 % of an ideal six-pulse bridge (orders to the 50th).
+//! terminals IEEE 519 does not apply: THD is shown beside the 30.0 % of an ideal six-pulse bridge (orders to the 50th) and
+//! judged by the specification where that names a limit.
 
 use crate::decision::Measured;
 use crate::formulas::distortion_limit::{Edition, of_order, short_circuit_ratio, total};
+use crate::formulas::marking::mark;
 use crate::formulas::plausible::{positive, positive_reading, reading_not_negative};
 use crate::formulas::rectifier::ideal_distortion;
 use crate::limit_rule::LimitRule;
@@ -46,6 +48,8 @@ pub struct Inputs {
     pub short_circuit: Option<Current>,
     /// Edition of IEEE 519 in force.
     pub edition: Option<Edition>,
+    /// Largest distortion at the drive's input by the specification.
+    pub specified_maximum: Option<Ratio>,
 }
 
 /// Runs the check.
@@ -162,8 +166,23 @@ pub fn check(inputs: &Inputs) -> Outcome {
 
 /// Away from the point of common coupling: what was read, beside the ideal bridge.
 fn at_the_drive(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
-    b.limit("no limit at the drive's own terminals");
     b.note("IEEE 519 applies at the point of common coupling, not at one drive's terminals.");
+    let specified = match inputs.specified_maximum {
+        Some(specified) => {
+            let Some(specified) = positive(&mut b, Some(specified), "distortion by the specification") else {
+                return b.not_assessed();
+            };
+            Some(specified.fraction() * 100.0)
+        }
+        None => None,
+    };
+    if let Some(limit) = specified {
+        let shown = significant(limit, 3);
+        b.limit(format!("total harmonic distortion at most {shown} %, by the specification"));
+        b.rule(LimitRule::linear("%").at_most(limit, format!("≤ {shown} %")));
+    } else {
+        b.limit("no limit at the drive's own terminals");
+    }
     let Some(distortion) =
         reading_not_negative(&mut b, inputs.distortion.as_ref(), "total harmonic distortion of the current")
     else {
@@ -184,7 +203,19 @@ fn at_the_drive(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
         let Some(part) = reading_not_negative(&mut b, Some(&harmonic.part), &name) else { return b.not_assessed() };
         b.figure(&name, part.number() * 100.0, 3, "%");
     }
-    b.as_figure(format!("Input current distortion {shown} %."))
+    let Some(limit) = specified else { return b.as_figure(format!("Input current distortion {shown} %.")) };
+    let measured = Measured::scaled(&distortion, 100.0);
+    let verdict = measured.at_most(limit);
+    mark(&mut b, &measured, format!("{shown} %"), verdict);
+    let limit = significant(limit, 3);
+    b.judged(
+        verdict,
+        match verdict {
+            Verdict::Outside => format!("Input current distortion {shown} %, above the {limit} % of the specification. Consider a line reactor or a filter, and measure at full load."),
+            Verdict::Marginal => format!("Input current distortion {shown} %: the instrument cannot tell it from {limit} %, or its word does not count."),
+            _ => format!("Input current distortion {shown} %, at most the {limit} % of the specification."),
+        },
+    )
 }
 
 #[cfg(test)]
@@ -254,6 +285,12 @@ mod tests {
     fn at_the_drive_it_is_a_figure() {
         let outcome = check(&Inputs { at_common_coupling: None, ..coupling(45.0, 20.0, 1.0) });
         assert_eq!((outcome.verdict, outcome.figures[1].value.as_str()), (Verdict::Figure, "30.0"));
+        let specified = |percent: f64| {
+            let maximum = Some(Ratio::from_fraction(percent / 100.0));
+            check(&Inputs { at_common_coupling: None, specified_maximum: maximum, ..coupling(45.0, 20.0, 1.0) })
+        };
+        assert_eq!((specified(48.0).verdict, specified(40.0).verdict), (Verdict::Within, Verdict::Outside));
+        assert_eq!(specified(40.0).limit, "total harmonic distortion at most 40.0 %, by the specification");
     }
 
     #[test]

@@ -4,7 +4,8 @@
 //!
 //! R₄₀ = R·K. Thermoplastic: K = 0.5^((40 − T)/10). Thermosetting, 10 to 85 °C only:
 //! K = exp(−4230·(1/(T + 273) − 1/313)) from 40 °C up, K = exp(−1245·(1/(T + 273) − 1/313)) below.
-//! System unknown: the smaller of the two factors; outside 10 to 85 °C the halving rule, and only below 10 °C.
+//! System unknown: the smaller of the two factors; outside 10 to 85 °C the halving rule, and only below 10 °C. The
+//! thermometer counts as an instrument: without its word the verdict is marginal at best.
 //! Minimum: 5 MΩ random-wound or below 1 kV; 100 MΩ most form-wound windings after about 1970;
 //! kV + 1 for older ones. Measured with its cable, the limit is the pair's. The motor maker's limit goes first.
 
@@ -72,6 +73,14 @@ pub fn correction(system: Option<System>, celsius: f64) -> Option<(f64, &'static
     }
 }
 
+/// How much the factor changes for one kelvin; zero where no rule corrects on both sides.
+pub(crate) fn slope(system: Option<System>, celsius: f64) -> f64 {
+    match (correction(system, celsius + 0.5), correction(system, celsius - 0.5)) {
+        (Some((above, _)), Some((below, _))) => (above - below).abs(),
+        _ => 0.0,
+    }
+}
+
 /// Runs the check.
 #[must_use]
 pub fn check(inputs: &Inputs) -> Outcome {
@@ -115,23 +124,21 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let Some(reading) = reading else { return b.not_assessed() };
 
     let megohms = reading.number() / 1e6;
-    // The thermometer's doubt moves K: sensitivity by a one-kelvin step on each side.
-    let slope = match (correction(inputs.system, celsius + 0.5), correction(inputs.system, celsius - 0.5)) {
-        (Some((above, _)), Some((below, _))) => above - below,
-        _ => 0.0,
-    };
+    // The thermometer's doubt moves K, so its word counts as much as the tester's.
+    let slope = slope(inputs.system, celsius);
     let measured = Measured::combined(
         megohms * k,
         &[
             (reading.standard_uncertainty().map(|u| u / 1e6 * k), reading.doubt()),
-            (temperature.standard_uncertainty().map(|u| u * slope.abs() * megohms), None),
+            (temperature.standard_uncertainty().map(|u| u * slope * megohms), temperature.doubt()),
         ],
     );
     if let Some(doubt) = &measured.doubt {
         b.note(format!("Marginal at best: {doubt}."));
-    } else {
+    } else if measured.value > 0.0 {
+        // Nothing can be said of the tester from a reading of zero.
         b.needed(format!(
-            "with this tester {} MΩ is within",
+            "With this tester {} MΩ is within",
             significant(at_this * (1.0 + measured.expanded / measured.value), 3)
         ));
     }
@@ -201,7 +208,10 @@ mod tests {
         };
         Inputs {
             reading: Some(Reading::with(Resistance::from_ohms(megohms * 1e6), tester)),
-            winding_temperature: Some(Reading::bare(Temperature::from_celsius(celsius))),
+            winding_temperature: Some(Reading::with(
+                Temperature::from_celsius(celsius),
+                Accuracy { percent_of_reading: 0.0, digits: 5.0, resolution: 0.1, ..tester },
+            )),
             rated_voltage: Some(Voltage::from_volts(400.0)),
             ..Inputs::default()
         }
@@ -231,6 +241,24 @@ mod tests {
         assert_eq!(check(&reading(40.0, 20.0)).verdict, Verdict::Within);
         assert_eq!(check(&reading(20.5, 20.0)).verdict, Verdict::Marginal);
         assert_eq!(check(&reading(12.0, 20.0)).verdict, Verdict::Outside);
+    }
+
+    #[test]
+    fn a_thermometer_that_nobody_named_makes_it_marginal_at_best() {
+        let bare = |megohms| Inputs {
+            winding_temperature: Some(Reading::bare(Temperature::from_celsius(20.0))),
+            ..reading(megohms, 20.0)
+        };
+        assert_eq!(check(&bare(400.0)).verdict, Verdict::Marginal);
+        assert!(check(&bare(400.0)).notes.iter().any(|n| n.contains("no instrument is named")));
+        assert_eq!(check(&bare(12.0)).verdict, Verdict::Outside);
+    }
+
+    #[test]
+    fn a_reading_of_zero_is_outside_and_says_no_number_that_is_none() {
+        let outcome = check(&reading(0.0, 20.0));
+        assert_eq!((outcome.verdict, outcome.needed.as_str()), (Verdict::Outside, ""));
+        assert!(!format!("{outcome:?}").contains("not a number"));
     }
 
     #[test]

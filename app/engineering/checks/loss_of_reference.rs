@@ -24,7 +24,7 @@ pub enum Signal {
     LiveZero,
     /// 0 to 10 V or 0 to 20 mA.
     DeadZero,
-    /// Over a network, which supervises itself.
+    /// Over a network: lost when it falls silent.
     Network,
     /// From the drive's own panel.
     Panel,
@@ -91,12 +91,20 @@ pub fn check(inputs: &Inputs) -> Outcome {
     if signal == Some(Signal::Panel) {
         return b.judged(Verdict::Within, "The reference comes from the drive's own panel: no signal can be lost.");
     }
-    let action = b.need(inputs.action, "what the drive does when the reference is lost");
+    let (lost, follows) = match signal {
+        Some(Signal::Network) => ("network", "goes on with the last command"),
+        _ => ("reference", "follows the dead signal"),
+    };
+    let action = b.need(inputs.action, &format!("what the drive does when the {lost} is lost"));
     let Some(action) = action else { return b.not_assessed() };
-    b.text_figure("when the reference is lost", action.words());
     if action == Action::Ignored {
-        return b.judged(Verdict::Outside, "Nothing is set for a lost reference: the drive follows the dead signal. Decide with the operator what it has to do, and set that.");
+        b.text_figure(&format!("when the {lost} is lost"), "nothing");
+        return b.judged(
+            Verdict::Outside,
+            format!("Nothing is set for a lost {lost}: the drive {follows}. Decide with the operator what it has to do, and set that."),
+        );
     }
+    b.text_figure(&format!("when the {lost} is lost"), action.words());
     if let Some(specified) = inputs.specified.filter(|s| *s != action) {
         return b.judged(
             Verdict::Outside,
@@ -107,7 +115,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             ),
         );
     }
-    let tried = b.need(inputs.tried, "whether the loss was tried");
+    let tried = b.need(inputs.tried, &format!("whether the loss of the {lost} was tried"));
     let (Some(signal), Some(tried)) = (signal, tried) else { return b.not_assessed() };
     let mut doubts = Vec::new();
     if signal == Signal::DeadZero {
@@ -132,12 +140,11 @@ pub fn check(inputs: &Inputs) -> Outcome {
         doubts.push("the loss was not tried".to_owned());
     }
     if doubts.is_empty() {
-        return b
-            .judged(Verdict::Within, format!("When the reference is lost the drive does this: {}.", action.words()));
+        return b.judged(Verdict::Within, format!("When the {lost} is lost the drive does this: {}.", action.words()));
     }
     b.judged(
         Verdict::Marginal,
-        format!("When the reference is lost the drive is set to {}, but {}.", action.words(), doubts.join(", and ")),
+        format!("When the {lost} is lost the drive is set to {}, but {}.", action.words(), doubts.join(", and ")),
     )
 }
 
@@ -183,6 +190,15 @@ mod tests {
         );
         assert_eq!(check(&of(Signal::Network, Action::HoldLast)).verdict, Verdict::Within);
         assert_eq!(check(&Inputs { action: None, ..of(Signal::Panel, Action::Trip) }).verdict, Verdict::Within);
+        let silent = check(&of(Signal::Network, Action::Ignored));
+        assert!(silent.verdict == Verdict::Outside && silent.summary.contains("last command"), "{}", silent.summary);
+        let outcome = check(&Inputs { tried: None, ..of(Signal::Network, Action::Trip) });
+        assert_eq!(outcome.missing[0].what, "whether the loss of the network was tried");
+        let outcome = check(&Inputs { signal: None, ..of(Signal::LiveZero, Action::Trip) });
+        assert_eq!(
+            (outcome.verdict, outcome.missing[0].what.as_str()),
+            (Verdict::NotAssessed, "kind of speed reference")
+        );
         let outcome = check(&Inputs { action: None, ..of(Signal::LiveZero, Action::Trip) });
         assert_eq!(outcome.missing[0].what, "what the drive does when the reference is lost");
         assert!(outcome.rule.is_some());

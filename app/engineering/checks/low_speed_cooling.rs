@@ -2,9 +2,11 @@
 //!
 //! Continuous torque of a self-cooled motor at its lowest working speed against what the load asks there.
 //!
-//! The motor maker's curve goes first. Without it common practice (row VF-07): 75 to 85 % at half speed, 50 to 70 % at a
-//! fifth, straight lines between. Up to the lower line within, above the upper line outside, between them marginal.
-//! Below a fifth of rated speed only the maker's figure counts. Load torque not stated: assumed rated torque throughout.
+//! The motor maker's curve goes first, then the speed range at rated torque that the maker prints. Without either, and
+//! below that range, common practice (row VF-07): 75 to 85 % at half speed, 50 to 70 % at a fifth, straight lines
+//! between. Up to the lower line within, above the upper line outside, between them marginal. Below a fifth of rated
+//! speed and below the maker's curve nothing is judged. A motor without a fan or in the load's air stream counts as
+//! self-cooled. Load torque not stated: assumed rated torque throughout.
 
 use crate::decision::Measured;
 use crate::formulas::marking::{graded, mark, up_to};
@@ -26,6 +28,8 @@ const PRACTICE: [(f64, f64, f64); 3] = [(0.2, 0.50, 0.70), (0.5, 0.75, 0.85), (1
 pub enum Cooling {
     /// By a fan on its own shaft.
     SelfCooled,
+    /// By its surface alone, or by air that the load moves.
+    ByItsPlace,
     /// By a fan with a drive of its own, or by water.
     Separate,
 }
@@ -41,8 +45,10 @@ pub struct Inputs {
     pub rated_frequency: Option<Frequency>,
     /// Continuous load torque there over rated torque.
     pub load_torque: Option<Ratio>,
-    /// Continuous torque there over rated torque by the motor's maker.
-    pub maker_torque: Option<Ratio>,
+    /// The motor maker's continuous torque: speed over rated speed, torque over rated torque, speeds rising.
+    pub maker_curve: Vec<(Ratio, Ratio)>,
+    /// The motor maker's speed range at rated torque: 10 for 10:1.
+    pub turndown: Option<Ratio>,
 }
 
 /// Continuous torque by common practice, lower and upper line; `None` below a fifth of rated speed.
@@ -53,6 +59,24 @@ pub fn usual_torque(speed: Ratio) -> Option<(Ratio, Ratio)> {
     let along = (part - pair[0].0) / (pair[1].0 - pair[0].0);
     let between = |a: f64, b: f64| Ratio::from_fraction(a + along * (b - a));
     Some((between(pair[0].1, pair[1].1), between(pair[0].2, pair[1].2)))
+}
+
+/// Continuous torque on the maker's curve: between its points on straight lines, above its last point as there;
+/// `None` below its first.
+#[must_use]
+pub fn on_curve(curve: &[(Ratio, Ratio)], speed: Ratio) -> Option<Ratio> {
+    let part = speed.fraction();
+    let along = |pair: &[(Ratio, Ratio)]| {
+        let (low, high) = (pair.first()?, pair.get(1)?);
+        let span = high.0.fraction() - low.0.fraction();
+        let share = if span > 0.0 { (part - low.0.fraction()) / span } else { 0.0 };
+        Some(Ratio::from_fraction(low.1.fraction() + share * (high.1.fraction() - low.1.fraction())))
+    };
+    let between = curve.windows(2).find(|pair| pair[0].0.fraction() <= part && part <= pair[1].0.fraction());
+    match between {
+        Some(pair) => along(pair),
+        None => curve.last().filter(|last| part >= last.0.fraction()).map(|last| last.1),
+    }
 }
 
 /// Runs the check.
@@ -66,6 +90,9 @@ pub fn check(inputs: &Inputs) -> Outcome {
         return b.as_figure(
             "Cooled apart from its speed: no reduction at low speed, as long as that cooling runs and is interlocked.",
         );
+    }
+    if cooling == Cooling::ByItsPlace {
+        b.note("Without a fan of its own, or in air that the load moves, it counts as cooled by its shaft; the maker's word on that place goes first.");
     }
     let lowest = positive(&mut b, inputs.lowest_frequency, "lowest working frequency");
     let rated = positive(&mut b, inputs.rated_frequency, "rated motor frequency");
@@ -82,10 +109,21 @@ pub fn check(inputs: &Inputs) -> Outcome {
         format!("{} Hz/{} Hz", significant(lowest.hertz(), 3), significant(rated.hertz(), 3)),
         format!("{part_shown} %"),
     );
-    let (low, high) = if let Some(own) = inputs.maker_torque {
+    let (low, high) = if !inputs.maker_curve.is_empty() {
+        let Some(own) = on_curve(&inputs.maker_curve, Ratio::from_fraction(part)) else {
+            return b.not_judged(format!("Not assessed: {part_shown} % speed lies below the motor maker's curve. Ask the maker, or raise the minimum speed."));
+        };
         let Some(own) = positive(&mut b, Some(own), "the maker's continuous torque") else { return b.not_assessed() };
-        b.line("limit", "the maker's", String::new(), format!("{} %", significant(own.fraction() * 100.0, 3)));
+        b.line("limit", "the maker's curve", String::new(), format!("{} %", significant(own.fraction() * 100.0, 3)));
         (own.fraction(), own.fraction())
+    } else if let Some(range) = inputs.turndown.filter(|range| part * range.fraction() >= 1.0 - 1e-9) {
+        b.line(
+            "limit",
+            "rated torque over the maker's speed range",
+            format!("{}:1", significant(range.fraction(), 3)),
+            "100 %",
+        );
+        (1.0, 1.0)
     } else {
         let Some((low, high)) = usual_torque(Ratio::from_fraction(part)) else {
             return b.not_judged(format!("Not assessed: at {part_shown} % speed only the motor maker's figure counts. Enter it, or fit a separate fan."));
@@ -138,7 +176,7 @@ mod tests {
             lowest_frequency: Some(Frequency::from_hertz(hertz)),
             rated_frequency: Some(Frequency::from_hertz(50.0)),
             load_torque: Some(Ratio::from_fraction(load)),
-            maker_torque: None,
+            ..Inputs::default()
         }
     }
 
@@ -161,8 +199,18 @@ mod tests {
 
     #[test]
     fn the_maker_goes_first_and_a_separate_fan_is_a_figure() {
-        let own = |part| Inputs { maker_torque: Some(Ratio::from_fraction(part)), ..run(5.0, 0.6) };
-        assert_eq!((check(&own(0.6)).verdict, check(&own(0.59)).verdict), (Verdict::Within, Verdict::Outside));
+        let curve =
+            [(0.1, 0.5), (0.5, 0.9), (1.0, 1.0)].map(|(n, t)| (Ratio::from_fraction(n), Ratio::from_fraction(t)));
+        let own = |hertz, load| check(&Inputs { maker_curve: curve.to_vec(), ..run(hertz, load) });
+        // Straight between its points: 0.7 at 0.3 of rated speed.
+        assert_eq!((own(15.0, 0.70).verdict, own(15.0, 0.701).verdict), (Verdict::Within, Verdict::Outside));
+        assert_eq!(own(15.0, 0.5).limit, "at most 70.0 % of rated torque at 30.0 % speed");
+        assert_eq!((own(60.0, 1.0).verdict, own(4.9, 0.1).verdict), (Verdict::Within, Verdict::NotAssessed));
+        let range = |hertz| check(&Inputs { turndown: Some(Ratio::from_fraction(4.0)), ..run(hertz, 1.0) }).verdict;
+        assert_eq!((range(12.5), range(12.0)), (Verdict::Within, Verdict::Outside));
+        let by_place = check(&Inputs { cooling: Some(Cooling::ByItsPlace), ..run(10.0, 1.0) });
+        assert_eq!(by_place.verdict, Verdict::Outside);
+        assert!(by_place.notes.iter().any(|n| n.contains("air that the load moves")));
         assert_eq!(check(&Inputs { cooling: Some(Cooling::Separate), ..run(2.0, 1.0) }).verdict, Verdict::Figure);
     }
 

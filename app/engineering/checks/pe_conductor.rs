@@ -1,13 +1,15 @@
 //! # pe-conductor
 //!
-//! Section of the drive's protective conductor, S_PE, against its phase section S.
+//! Section of the protective conductor to the drive or to the motor, S_PE, against its phase section S.
 //!
-//! S up to 16 mm²: S; above 16 to 35: 16 mm²; above 35: S/2 (IEC 61800-5-1 table 2, same metal). A separate conductor at
-//! least 2.5 mm² protected, 4 mm² not. Touch current of 3.5 mA ac or 10 mA dc and more (assumed of every drive):
-//! besides 10 mm² copper or 16 mm² aluminium, unless a second PE of the same section runs to a terminal of its own or
-//! the supply disconnects when the PE breaks. Short-circuit withstand of the conductor is not part of this check.
+//! S up to 16 mm²: S; above 16 to 35: 16 mm²; above 35: S/2 (IEC 61800-5-1 table 2, same metal; aluminium beside copper
+//! phases is enlarged to the same conductance). A separate conductor at least 2.5 mm² protected, 4 mm² not. To the drive,
+//! with a touch current of 3.5 mA ac or 10 mA dc and more (assumed unless the manual says otherwise in full): besides
+//! 10 mm² copper or 16 mm² aluminium, unless a second PE of the same section runs to a terminal of its own or the supply
+//! disconnects when the PE breaks. Short-circuit withstand of the conductor is not part of this check.
 
 use crate::decision::Measured;
+use crate::formulas::conductor::per_kilometre;
 use crate::formulas::copper::Conductor;
 use crate::formulas::plausible::{not_negative, positive};
 use crate::limit::Limit;
@@ -36,17 +38,33 @@ pub enum Routing {
     SeparateUnprotected,
 }
 
+/// What the protective conductor earths.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub enum Leg {
+    /// The drive, at its input: it carries the touch current of the whole.
+    #[default]
+    ToDrive,
+    /// The motor, from the drive: the table by phase section alone.
+    ToMotor,
+}
+
 /// What the check takes.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Inputs {
-    /// Section of a phase conductor of the drive's supply.
+    /// What the conductor earths.
+    pub leg: Leg,
+    /// Section of a phase conductor beside it.
     pub phase_section: Option<CrossSection>,
+    /// Metal of the phase conductors; that of the protective conductor where not entered.
+    pub phase_metal: Option<Conductor>,
     /// Section of the protective conductor found.
     pub pe_section: Option<CrossSection>,
     /// Its metal.
     pub metal: Option<Conductor>,
     /// Its routing.
     pub routing: Option<Routing>,
+    /// Whether the manual calls the touch current above 3.5 mA ac or 10 mA dc.
+    pub touch_current_above: Option<bool>,
     /// Touch current of the drive, ac, by its maker.
     pub touch_current_ac: Option<Current>,
     /// Touch current of the drive, dc, by its maker.
@@ -117,6 +135,22 @@ fn smallest(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
         format!("S = {} mm²", significant(phase.square_millimetres(), 3)),
         format!("{} mm²", significant(section, 3)),
     );
+    match (inputs.phase_metal, metal) {
+        (Some(Conductor::Copper), Conductor::Aluminium) => {
+            let one = CrossSection::from_square_millimetres(1.0);
+            let ratio = per_kilometre(one, Conductor::Aluminium).ohms() / per_kilometre(one, Conductor::Copper).ohms();
+            b.note("The table holds for one metal; the phases are copper and the protective conductor aluminium, so it is enlarged to the same conductance.");
+            b.line(
+                "aluminium beside copper",
+                "S·ρ_Al/ρ_Cu",
+                format!("{} mm² × {}", significant(section, 3), significant(ratio, 3)),
+                format!("{} mm²", significant(section * ratio, 3)),
+            );
+            section *= ratio;
+        }
+        (Some(Conductor::Aluminium), Conductor::Copper) => b.note("The table holds for one metal; the phases are aluminium and the protective conductor copper, and nothing is taken off for that."),
+        _ => {}
+    }
     let own = match b.assume(
         inputs.routing,
         Routing::InCable,
@@ -131,16 +165,45 @@ fn smallest(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
         section = own;
         b.line("on its own", "2.5 mm² protected, 4 mm² not", String::new(), format!("{} mm²", significant(own, 2)));
     }
-    let stated = inputs.touch_current_ac.is_some() || inputs.touch_current_dc.is_some();
+    if inputs.leg == Leg::ToDrive {
+        section = with_touch_current(b, inputs, metal, section)?;
+    }
+    if let Some(own) = inputs.maker_section {
+        let own = positive(b, Some(own), "section that the drive's manual asks for")?.square_millimetres();
+        // The manual may ask for more than the standard, not for less.
+        section = section.max(own);
+        b.line(
+            "limit",
+            "the larger of the standard's and the maker's",
+            format!("the maker's {} mm²", significant(own, 3)),
+            format!("{} mm²", significant(section, 3)),
+        );
+    }
+    Some(section)
+}
+
+/// Whether the touch current is high: any word of the manual that says so counts, a low one only when it is complete.
+fn touch_is_high(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<bool> {
     let zero = Current::from_amperes(0.0);
     let ac = not_negative(b, Some(inputs.touch_current_ac.unwrap_or(zero)), "touch current, ac")?;
     let dc = not_negative(b, Some(inputs.touch_current_dc.unwrap_or(zero)), "touch current, dc")?;
-    let high = b.assume(
-        stated.then(|| high_leakage(ac, dc)),
+    let complete = inputs.touch_current_ac.is_some() && inputs.touch_current_dc.is_some();
+    let stated = match inputs.touch_current_above {
+        _ if high_leakage(ac, dc) => Some(true),
+        Some(above) => Some(above),
+        None => complete.then_some(false),
+    };
+    Some(b.assume(
+        stated,
         true,
         "touch current of the drive",
-        "3.5 mA ac or more, as of every drive with a filter",
-    );
+        "3.5 mA ac or more, as of every drive with a filter, until the manual's class or both figures are entered",
+    ))
+}
+
+/// The section after the rule for the touch current.
+fn with_touch_current(b: &mut OutcomeBuilder, inputs: &Inputs, metal: Conductor, mut section: f64) -> Option<f64> {
+    let high = touch_is_high(b, inputs)?;
     let relieved = if inputs.second_pe == Some(true) {
         Some("a second PE of the same section")
     } else if inputs.disconnects_on_break == Some(true) {
@@ -172,17 +235,6 @@ fn smallest(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
             }
         }
     }
-    if let Some(own) = inputs.maker_section {
-        let own = positive(b, Some(own), "section that the drive's manual asks for")?.square_millimetres();
-        // The manual may ask for more than the standard, not for less.
-        section = section.max(own);
-        b.line(
-            "limit",
-            "the larger of the standard's and the maker's",
-            format!("the maker's {} mm²", significant(own, 3)),
-            format!("{} mm²", significant(section, 3)),
-        );
-    }
     Some(section)
 }
 
@@ -197,6 +249,7 @@ mod tests {
             metal: Some(Conductor::Copper),
             routing: Some(Routing::InCable),
             touch_current_ac: Some(Current::from_amperes(milliamperes / 1000.0)),
+            touch_current_dc: Some(Current::from_amperes(0.0)),
             ..Inputs::default()
         }
     }
@@ -213,6 +266,25 @@ mod tests {
             assert_eq!(check(&conductor(phase, milliamperes, smallest - 0.01)).verdict, Verdict::Outside);
             assert_eq!(check(&conductor(phase, milliamperes, smallest + 0.01)).verdict, Verdict::Within);
         }
+    }
+
+    /// IEC 61800-5-1 table 2 (row PE-04) holds for one metal; the touch current's rule (row PE-03) for the drive's input.
+    #[test]
+    fn to_the_motor_and_with_two_metals() {
+        let motor = |found| check(&Inputs { leg: Leg::ToMotor, ..conductor(2.5, 5.0, found) });
+        assert_eq!((motor(2.5).verdict, motor(2.4).verdict), (Verdict::Within, Verdict::Outside));
+        assert!(motor(2.5).figures.iter().all(|f| f.name != "special measure required"));
+        let mixed = |phase, found| {
+            check(&Inputs {
+                phase_metal: Some(phase),
+                metal: Some(Conductor::Aluminium),
+                ..conductor(25.0, 1.0, found)
+            })
+        };
+        assert_eq!(mixed(Conductor::Aluminium, 16.0).verdict, Verdict::Within);
+        assert_eq!(mixed(Conductor::Copper, 16.0).verdict, Verdict::Outside);
+        assert_eq!(mixed(Conductor::Copper, 26.3).verdict, Verdict::Within);
+        assert!(mixed(Conductor::Copper, 26.3).notes.iter().any(|n| n.contains("one metal")));
     }
 
     #[test]
@@ -234,8 +306,18 @@ mod tests {
 
     #[test]
     fn unstated_touch_current_is_assumed_high_and_the_maker_goes_first() {
-        let unstated = check(&Inputs { touch_current_ac: None, ..conductor(2.5, 0.0, 2.5) });
+        let bare = Inputs { touch_current_ac: None, touch_current_dc: None, ..conductor(2.5, 0.0, 2.5) };
+        let unstated = check(&bare);
         assert_eq!((unstated.verdict, unstated.assumed.len()), (Verdict::Outside, 1));
+        // One figure of the two is not the whole, and the manual's class is not talked down by a printed figure.
+        let half = check(&Inputs { touch_current_dc: None, ..conductor(2.5, 2.0, 2.5) });
+        assert_eq!((half.verdict, half.assumed.len()), (Verdict::Outside, 1));
+        let above = Inputs { touch_current_above: Some(true), ..conductor(2.5, 2.0, 2.5) };
+        assert_eq!((check(&above).verdict, check(&above).limit.as_str()), (Verdict::Outside, "at least 10.0 mm²"));
+        let class_only = Inputs { touch_current_above: Some(false), ..bare };
+        assert_eq!(check(&class_only).verdict, Verdict::Within);
+        let figure_over = Inputs { touch_current_above: Some(false), ..conductor(2.5, 4.0, 2.5) };
+        assert_eq!(check(&figure_over).verdict, Verdict::Outside);
         let maker =
             Inputs { maker_section: Some(CrossSection::from_square_millimetres(16.0)), ..conductor(2.5, 1.0, 10.0) };
         assert_eq!(check(&maker).verdict, Verdict::Outside);

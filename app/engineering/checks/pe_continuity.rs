@@ -3,8 +3,9 @@
 //! Resistance of a protective conductor from end to end against what its length, section and metal make.
 //!
 //! Up to ρ·l/A at its temperature + 0.05 Ω for clamps and joints (common practice) within; beyond twice that outside;
-//! between marginal. IEC 60204-1 asks for the expected range and names no fixed figure. Temperature not stated: assumed
-//! 20 °C, which gives the smaller limit in a warm plant. Compensate the test leads first.
+//! between marginal. IEC 60204-1 asks for the expected range and names no fixed figure. A limit of the design counts
+//! besides: beyond it is outside. Temperature not stated: assumed 20 °C, which gives the smaller limit in a warm plant.
+//! Compensate the test leads first.
 
 use crate::decision::Measured;
 use crate::formulas::conductor::{at_temperature, of_length, per_kilometre};
@@ -39,6 +40,8 @@ pub struct Inputs {
     pub metal: Option<Conductor>,
     /// Its temperature.
     pub temperature: Option<Temperature>,
+    /// Largest resistance by the design.
+    pub design_maximum: Option<Resistance>,
 }
 
 /// Runs the check.
@@ -64,8 +67,21 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let expected = at_temperature(of_length(per_kilometre(section, metal), length), temperature).ohms();
     let expected = positive(&mut b, Some(Resistance::from_ohms(expected)), "expected resistance");
     let Some(expected) = expected.map(Resistance::ohms) else { return b.not_assessed() };
-    let limit = expected + ALLOWANCE.value;
-    let (limit_shown, twice) = (significant(limit, 3), significant(2.0 * limit, 3));
+    let (mut limit, mut fault) = (expected + ALLOWANCE.value, 2.0 * (expected + ALLOWANCE.value));
+    let made = significant(limit, 3);
+    if let Some(design) = inputs.design_maximum {
+        let Some(design) = positive(&mut b, Some(design), "largest resistance by the design") else {
+            return b.not_assessed();
+        };
+        b.line(
+            "limit of the design",
+            "beyond it outside",
+            String::new(),
+            format!("{} Ω", significant(design.ohms(), 3)),
+        );
+        (limit, fault) = (limit.min(design.ohms()), fault.min(design.ohms()));
+    }
+    let (limit_shown, fault_shown) = (significant(limit, 3), significant(fault, 3));
     let resistivity = match metal {
         Conductor::Copper => "17.241",
         Conductor::Aluminium => "28.264",
@@ -81,22 +97,22 @@ pub fn check(inputs: &Inputs) -> Outcome {
         ),
         format!("{} Ω", significant(expected, 3)),
     );
-    b.line("limit", "R + 0.05 Ω", format!("{} Ω + 0.05 Ω", significant(expected, 3)), format!("{limit_shown} Ω"));
+    b.line("limit", "R + 0.05 Ω", format!("{} Ω + 0.05 Ω", significant(expected, 3)), format!("{made} Ω"));
     b.figure("expected resistance", expected, 3, "Ω");
-    b.limit(format!("at most {limit_shown} Ω; beyond {twice} Ω outside"));
-    b.rule(LimitRule::linear("Ω").at_most(limit, format!("≤ {limit_shown} Ω")).tick(2.0 * limit, format!("{twice} Ω")));
+    b.limit(format!("at most {limit_shown} Ω; beyond {fault_shown} Ω outside"));
+    b.rule(LimitRule::linear("Ω").at_most(limit, format!("≤ {limit_shown} Ω")).tick(fault, format!("{fault_shown} Ω")));
     let Some(reading) = reading_not_negative(&mut b, inputs.reading.as_ref(), "resistance of the protective conductor")
     else {
         return b.not_assessed();
     };
     let measured = Measured::direct(&reading);
-    let verdict = graded(&measured, limit, 2.0 * limit);
+    let verdict = graded(&measured, limit, fault);
     let shown = significant(measured.value, 3);
     mark(&mut b, &measured, format!("{shown} Ω"), verdict);
     b.judged(
         verdict,
         match verdict {
-            Verdict::Outside => format!("{shown} Ω, more than twice what this conductor makes ({limit_shown} Ω with joints). Do not energise; look for a loose, painted or broken joint."),
+            Verdict::Outside => format!("{shown} Ω, beyond {fault_shown} Ω; with joints this conductor makes {made} Ω. Do not energise; look for a loose, painted or broken joint."),
             Verdict::Marginal => format!("{shown} Ω against {limit_shown} Ω: higher than expected, or the instrument's word does not settle it. Clean and tighten the joints, compensate the leads, measure again."),
             _ => format!("{shown} Ω, at most {limit_shown} Ω."),
         },
@@ -122,6 +138,7 @@ mod tests {
             section: Some(CrossSection::from_square_millimetres(10.0)),
             metal: Some(Conductor::Copper),
             temperature: Some(Temperature::from_celsius(20.0)),
+            design_maximum: None,
         }
     }
 
@@ -140,6 +157,17 @@ mod tests {
         }
         let bare = Inputs { reading: Some(Reading::bare(Resistance::from_ohms(0.01))), ..measured(0.0) };
         assert_eq!(check(&bare).verdict, Verdict::Marginal);
+    }
+
+    /// C-PE-005: 30 m of 10 mm² copper; the design's own figure goes first where it is smaller.
+    #[test]
+    fn the_designs_limit_counts_besides() {
+        let design = |limit, ohms| {
+            check(&Inputs { design_maximum: Some(Resistance::from_ohms(limit)), ..measured(ohms) }).verdict
+        };
+        assert_eq!((design(0.08, 0.078), design(0.08, 0.09)), (Verdict::Within, Verdict::Outside));
+        assert_eq!((design(0.15, 0.12), design(0.15, 0.16)), (Verdict::Marginal, Verdict::Outside));
+        assert_eq!((design(1.0, 0.15), design(1.0, 0.25)), (Verdict::Marginal, Verdict::Outside));
     }
 
     #[test]

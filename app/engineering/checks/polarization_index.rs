@@ -3,10 +3,10 @@
 //! Insulation resistance after ten minutes over that after one, against the minimum of the thermal class.
 //!
 //! PI = R(10 min)/R(1 min), no temperature correction. Minimum 1.5 in class A, 2.0 in classes B, F, H (row IR-06).
-//! Above 5000 MΩ at 40 °C after one minute it is not judged (IR-07). Random-wound: a figure, since absorption
-//! dies away within minutes (IR-08). Both tests must be met (IR-11). The motor maker's minimum goes first.
+//! Above 5000 MΩ at 40 °C after one minute it is not judged (IR-07); marginal where tester and thermometer cannot tell
+//! on which side of that the winding is. Random-wound: a figure, since absorption dies away within minutes (IR-08). Both tests must be met (IR-11). The motor maker's minimum goes first.
 
-use crate::checks::insulation_resistance::{Construction, System, correction};
+use crate::checks::insulation_resistance::{Construction, System, correction, slope};
 use crate::decision::Measured;
 use crate::formulas::{marking, plausible};
 use crate::limit::Limit;
@@ -123,10 +123,37 @@ pub fn check(inputs: &Inputs) -> Outcome {
             format!("{r1} MΩ × {}", significant(k, 3)),
             format!("{} MΩ", significant(corrected, 3)),
         );
-        if corrected > NOT_JUDGED_ABOVE.value {
-            b.cite(IR_07);
-            return b
-                .as_figure(format!("Polarization index {shown}, not judged: above 5000 MΩ at 40 °C it means little."));
+        let edge = Measured::combined(
+            corrected,
+            &[
+                (one.standard_uncertainty().map(|u| u / 1e6 * k), one.doubt()),
+                (
+                    temperature.standard_uncertainty().map(|u| u * slope(inputs.system, celsius) * one.number() / 1e6),
+                    temperature.doubt(),
+                ),
+            ],
+        );
+        match edge.at_least(NOT_JUDGED_ABOVE.value) {
+            Verdict::Within => {
+                b.cite(IR_07);
+                return b.as_figure(format!(
+                    "Polarization index {shown}, not judged: above 5000 MΩ at 40 °C it means little."
+                ));
+            }
+            Verdict::Marginal => {
+                b.cite(IR_07);
+                if let Some(doubt) = &edge.doubt {
+                    b.note(format!("Marginal at best: {doubt}."));
+                }
+                marking::mark(&mut b, &Measured::exact(index), format!("PI {shown}"), Verdict::Marginal);
+                return b.judged(
+                    Verdict::Marginal,
+                    format!(
+                        "Polarization index {shown}: tester and thermometer cannot tell whether the winding is above 5000 MΩ at 40 °C, where the index is not judged."
+                    ),
+                );
+            }
+            _ => {}
         }
     }
     let relative = |r: &Reading<Resistance>| (r.standard_uncertainty().map(|u| index * u / r.number()), r.doubt());
@@ -179,7 +206,10 @@ mod tests {
         Inputs {
             one_minute: Some(Reading::with(Resistance::from_ohms(one * 1e6), tester)),
             ten_minutes: Some(Reading::with(Resistance::from_ohms(ten * 1e6), tester)),
-            winding_temperature: Some(Reading::bare(Temperature::from_celsius(40.0))),
+            winding_temperature: Some(Reading::with(
+                Temperature::from_celsius(40.0),
+                Accuracy { percent_of_reading: 0.0, digits: 5.0, resolution: 0.1, ..tester },
+            )),
             construction: Some(Construction::FormWound),
             thermal_class: Some(class),
             ..Inputs::default()
@@ -202,7 +232,20 @@ mod tests {
         assert_eq!(check(&of(100.0, 200.0, ThermalClass::F)).verdict, Verdict::Marginal);
         assert_eq!(check(&of(100.0, 190.0, ThermalClass::F)).verdict, Verdict::Outside);
         assert_eq!(check(&of(100.0, 160.0, ThermalClass::A)).verdict, Verdict::Within);
-        assert_eq!(check(&of(5000.0, 5500.0, ThermalClass::F)).verdict, Verdict::Outside);
+        assert_eq!(check(&of(4600.0, 5060.0, ThermalClass::F)).verdict, Verdict::Outside);
+        assert_eq!(check(&of(5000.0, 5500.0, ThermalClass::F)).verdict, Verdict::Marginal);
+    }
+
+    #[test]
+    fn without_a_thermometer_nobody_knows_that_it_is_above_the_edge() {
+        let bare = |one: f64| Inputs {
+            winding_temperature: Some(Reading::bare(Temperature::from_celsius(40.0))),
+            ..of(one, one * 1.1, ThermalClass::F)
+        };
+        let outcome = check(&bare(6000.0));
+        assert_eq!(outcome.verdict, Verdict::Marginal);
+        assert!(outcome.notes.iter().any(|n| n.contains("no instrument is named")));
+        assert_eq!(check(&bare(300.0)).verdict, Verdict::Outside);
     }
 
     #[test]

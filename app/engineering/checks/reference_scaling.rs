@@ -2,12 +2,13 @@
 //!
 //! The reference that the drive shows at 4, 8, 12, 16 and 20 mA, against the linear scale it should follow.
 //!
-//! ideal = low + (I − 4)/16·(high − low) (row AN-01); error = (shown − ideal)/(high − low). At most 0.5 % of span at
-//! every point: common practice (row AN-03). The maker's or the site's own limit goes first. The instrument is the
-//! loop source; its accuracy becomes an uncertainty of the ideal value.
+//! ideal = low + (I − 4)/16·(high − low) (row AN-01), or between the signal's own ends where these are other than 4 and
+//! 20 mA; error = (shown − ideal)/(high − low). At most 0.5 % of span at every point: common practice (row AN-03). The
+//! maker's or the site's own limit goes first. The instrument is the loop source; its accuracy becomes an uncertainty of
+//! the ideal value. A voltage signal is not assessed: the points are loop currents.
 
 use crate::decision::Measured;
-use crate::formulas::loop_signal::{POINTS, value};
+use crate::formulas::loop_signal::{POINTS, value_between};
 use crate::formulas::{marking, plausible};
 use crate::limit::Limit;
 use crate::limit_rule::LimitRule;
@@ -37,9 +38,15 @@ pub struct Point {
 pub struct Inputs {
     /// The points at 4, 8, 12, 16 and 20 mA.
     pub points: [Point; 5],
-    /// Reference that belongs to 4 mA.
+    /// Whether the reference comes as a voltage.
+    pub by_voltage: bool,
+    /// Loop current at the low end; 4 mA is assumed.
+    pub low_current: Option<Current>,
+    /// Loop current at the high end; 20 mA is assumed.
+    pub high_current: Option<Current>,
+    /// Reference that belongs to the low end.
     pub low: Option<Frequency>,
-    /// Reference that belongs to 20 mA.
+    /// Reference that belongs to the high end.
     pub high: Option<Frequency>,
     /// The maker's or the site's own limit, as a share of the span.
     pub own_limit: Option<Ratio>,
@@ -62,8 +69,20 @@ pub fn check(inputs: &Inputs) -> Outcome {
         if own.is_some() { "" } else { " (common practice)" }
     ));
     b.rule(LimitRule::linear("%").between(-limit, format!("−{words} %"), limit, format!("+{words} %")));
-    let low = plausible::finite(&mut b, inputs.low, "reference at 4 mA");
-    let high = plausible::finite(&mut b, inputs.high, "reference at 20 mA");
+    if inputs.by_voltage {
+        return b.not_judged(
+            "Not assessed: the reference comes as a voltage, and the points of this check are loop currents. Compare it at five voltages and note what the drive shows.",
+        );
+    }
+    let milliampere = |n: f64| Current::from_amperes(n / 1e3);
+    let from = b.assume(inputs.low_current, milliampere(4.0), "loop current at the low end", "4 mA, the usual one");
+    let to = b.assume(inputs.high_current, milliampere(20.0), "loop current at the high end", "20 mA, the usual one");
+    if !(to.amperes() - from.amperes() >= 1e-3) {
+        return b.not_judged("Not assessed: the loop current at the high end is not above the one at the low end.");
+    }
+    let [from_shown, to_shown] = [from, to].map(|i| significant(i.amperes() * 1e3, 2));
+    let low = plausible::finite(&mut b, inputs.low, &format!("reference at {from_shown} mA"));
+    let high = plausible::finite(&mut b, inputs.high, &format!("reference at {to_shown} mA"));
     let shown = [0, 1, 2, 3, 4].map(|i| {
         let what = format!("reference shown at {} mA", significant(POINTS[i], 2));
         plausible::finite(&mut b, inputs.points[i].shown, &what)
@@ -71,7 +90,8 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let (Some(low), Some(high)) = (low, high) else { return b.not_assessed() };
     let span = high.hertz() - low.hertz();
     if span.abs() < 1e-9 {
-        return b.not_judged("Not assessed: the references at 4 mA and at 20 mA are the same, so there is no span.");
+        return b
+            .not_judged("Not assessed: the references at both ends of the signal are the same, so there is no span.");
     }
 
     let mut verdict = Verdict::Within;
@@ -79,7 +99,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     for ((point, shown), nominal) in inputs.points.iter().zip(shown).zip(POINTS) {
         let Some(shown) = shown else { continue };
         let injected = point.injected.clone().unwrap_or_else(|| Reading::bare(Current::from_amperes(nominal / 1e3)));
-        let error = judge_point(&mut b, &injected, shown, low, high);
+        let error = judge_point(&mut b, &injected, shown, (from, to), (low, high));
         let this = error.between(-limit, limit);
         verdict = verdict.worse(this);
         marking::mark(
@@ -119,21 +139,21 @@ fn judge_point(
     b: &mut OutcomeBuilder,
     injected: &Reading<Current>,
     shown: Frequency,
-    low: Frequency,
-    high: Frequency,
+    ends: (Current, Current),
+    (low, high): (Frequency, Frequency),
 ) -> Measured {
     let span = high.hertz() - low.hertz();
-    let ideal = value(injected.value, low, high).hertz();
+    let ideal = value_between(injected.value, ends, low, high).hertz();
     let error = (shown.hertz() - ideal) / span * 100.0;
     let milliamperes = significant(injected.number() * 1e3, 4);
     b.line(
         &format!("at {milliamperes} mA"),
-        "(shown − (low + (I − 4)/16·span))/span",
+        "(shown − (low + (I − I_low)/(I_high − I_low)·span))/span",
         format!("({} − {}) Hz / {} Hz", significant(shown.hertz(), 4), significant(ideal, 4), significant(span, 4)),
         format!("{} %", significant(error, 2)),
     );
-    // 16 mA are the whole span: a doubt of the current is a doubt of the error.
-    let own = Measured::scaled(injected, 100.0 / 0.016);
+    // The two ends are the whole span: a doubt of the current is a doubt of the error.
+    let own = Measured::scaled(injected, 100.0 / (ends.1.amperes() - ends.0.amperes()));
     Measured { value: error, expanded: own.expanded, doubt: own.doubt }
 }
 
@@ -156,6 +176,9 @@ mod tests {
         };
         Inputs {
             points: [0, 1, 2, 3, 4].map(point),
+            by_voltage: false,
+            low_current: None,
+            high_current: None,
             low: Some(Frequency::from_hertz(0.0)),
             high: Some(Frequency::from_hertz(50.0)),
             own_limit: None,
@@ -180,6 +203,20 @@ mod tests {
         assert_eq!(check(&of([0.0, 12.5, 25.25, 37.5, 50.0])).verdict, Verdict::Marginal);
         assert_eq!(check(&of([0.0, 12.5, 25.26, 37.5, 50.0])).verdict, Verdict::Outside);
         assert_eq!(check(&of([-0.26, 12.5, 25.0, 37.5, 50.0])).verdict, Verdict::Outside);
+    }
+
+    /// Arithmetic of row AN-01 with other ends: on 0 to 20 mA, 4 mA are a fifth of the span, 10 Hz of 50.
+    #[test]
+    fn other_ends_have_another_scale_and_a_voltage_none() {
+        let shown = [10.0, 20.0, 30.0, 40.0, 50.0];
+        assert_eq!(check(&of(shown)).verdict, Verdict::Outside);
+        let zero = Inputs { low_current: Some(Current::from_amperes(0.0)), ..of(shown) };
+        let outcome = check(&zero);
+        assert_eq!(outcome.verdict, Verdict::Within, "{}", outcome.summary);
+        assert_eq!(outcome.assumed.len(), 1, "only the high end is assumed");
+        assert_eq!(check(&Inputs { high_current: zero.low_current, ..zero }).verdict, Verdict::NotAssessed);
+        let volts = check(&Inputs { by_voltage: true, ..of(shown) });
+        assert!(volts.verdict == Verdict::NotAssessed && volts.summary.contains("voltage"));
     }
 
     #[test]

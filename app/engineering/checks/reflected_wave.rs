@@ -6,7 +6,7 @@
 //! reflection only: double pulses can exceed it, so measure where it matters. Limits: NEMA MG 1 part 30 1000 V with
 //! 2 µs, part 31 3.1·U_N with 0.1 µs (both to 600 V rated), IEC 60034-18-41 overshoot factor of U_dc, or the maker's.
 //! A rise faster than the limit's is marginal. A dv/dt filter slows the rise by its data; a sine filter ends it.
-//! Not stated: assumed 0.1 µs, 150 m/µs, G of row CB-04, bus √2·U + 10 %.
+//! Beyond the longest cable that the drive's manual allows it is outside, whatever the wave does. Not stated: assumed 0.1 µs, 150 m/µs, G of row CB-04, bus √2·U + 10 %.
 
 use crate::decision::Measured;
 use crate::formulas::marking::{mark, up_to};
@@ -76,6 +76,8 @@ pub struct Inputs {
     pub cable_impedance: Option<Resistance>,
     /// Output filter.
     pub filter: Option<Filter>,
+    /// Longest cable of this kind, with this filter, by the drive's manual or the filter's sheet.
+    pub longest_cable: Option<Length>,
 }
 
 /// Peak volts, and shortest rise time where there is one, that a winding stands; `None` where NEMA sets none.
@@ -105,6 +107,20 @@ pub fn check(inputs: &Inputs) -> Outcome {
         b.cite(source);
     }
     b.note("First reflection only; double pulses can exceed it, and only a measurement at the motor terminals tells. The motor maker's word goes first.");
+    if let Some(longest) = inputs.longest_cable {
+        let Some(longest) = positive(&mut b, Some(longest), "longest cable by the maker") else {
+            return b.not_assessed();
+        };
+        let Some(length) = not_negative(&mut b, inputs.cable_length, "length of the motor cable") else {
+            return b.not_assessed();
+        };
+        let (shown, limit) = (significant(length.metres(), 3), significant(longest.metres(), 3));
+        b.line("longest cable", "l ≤ the maker's", format!("{shown} m against {limit} m"), "");
+        if !up_to(length.metres(), longest.metres()) {
+            b.limit(format!("cable at most {limit} m, by the maker"));
+            return b.judged(Verdict::Outside, format!("The motor cable is {shown} m long, the maker allows {limit} m. Shorten it, or fit an output filter that allows this length."));
+        }
+    }
     let withstand = b.need(inputs.withstand, "voltage stress that the motor is made for");
     match withstand {
         Some(Withstand::GeneralPurpose) => b.cite(CB_06),
@@ -262,6 +278,17 @@ mod tests {
             filter: Some(Filter::None),
             ..Inputs::default()
         }
+    }
+
+    /// The maker goes first (standing rule): 50 m is within by MG 1 part 31 here.
+    #[test]
+    fn a_cable_longer_than_the_maker_allows_is_outside() {
+        let allowed = |metres| {
+            let longest = Some(Length::from_metres(metres));
+            check(&Inputs { longest_cable: longest, ..cable(565.0, 80.0, 1500.0, 0.1, 50.0) })
+        };
+        assert_eq!((allowed(50.0).verdict, allowed(49.0).verdict), (Verdict::Within, Verdict::Outside));
+        assert_eq!(allowed(49.0).limit, "cable at most 49.0 m, by the maker");
     }
 
     /// C-CB-002 and C-CB-003 (rows CB-01 to CB-03): 1073 V on 50 m, 734 V on 5 m; C-CB-006: 3.1·460 = 1426 V, C-CB-005.

@@ -6,8 +6,9 @@
 //! not follow the order of its supply leads; a bypass does follow it (row UB-07). Wrong on both: two leads at the motor.
 //! On the drive only: two at the drive's output. On the bypass only: two at the bypass's own input, not ahead of it,
 //! where fans and pumps fed from the line would turn too. Put right by a parameter alone: marginal, since a replaced or
-//! reset drive turns the wrong way again; outside when the bypass is wrong as well. The encoder's sign is compared
-//! with the shaft last, in open loop. Direction as seen from the drive end.
+//! reset drive turns the wrong way again; outside when the bypass is wrong as well. Wrong with that parameter in
+//! force: outside; taken back, the drive turns as required. The encoder's sign is compared with the shaft last, in
+//! open loop. Direction as seen from the drive end.
 
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
 use crate::sources::motion::{EN_03, UB_06, UB_07};
@@ -103,13 +104,13 @@ impl Exchange {
 pub struct Inputs {
     /// The way the load has to turn.
     pub required: Option<Direction>,
-    /// The way it turned on the drive, before anything was corrected.
+    /// The way it turns on the drive, with leads and settings as they are.
     pub on_drive: Option<Direction>,
     /// Whether there is a bypass.
     pub has_bypass: Option<bool>,
     /// The way it turned on the bypass.
     pub on_bypass: Option<Direction>,
-    /// Whether a parameter of the drive, not an exchange of leads, put the direction right.
+    /// Whether a parameter of the drive exchanges its output sequence, so that it and not the leads makes the direction.
     pub corrected_by_parameter: Option<bool>,
     /// Whether there is an encoder.
     pub has_encoder: Option<bool>,
@@ -193,20 +194,23 @@ fn leads(
     required: Direction,
 ) -> (Verdict, String) {
     if by_parameter {
-        // With a parameter in play a bypass that is wrong means that the motor's own sequence is.
-        let (verdict, place) = match (has_bypass, bypass_wrong) {
-            (true, true) => (Verdict::Outside, Exchange::AtMotor),
-            _ => (Verdict::Marginal, Exchange::AtDriveOutput),
+        // Without the parameter the drive turns the other way: that, and the bypass, say which leads to exchange.
+        let exchange = match remedy(!drive_wrong, bypass_wrong) {
+            Some(place) => format!("Isolated and proved dead, {}, and take the parameter back.", place.instruction()),
+            None => "Take the parameter back and look at the shaft again; no lead is exchanged.".to_owned(),
         };
-        let why = if bypass_wrong {
-            "The parameter hides it on the drive, and the bypass turns the wrong way"
-        } else {
-            "It turns as required only as long as a parameter says so; a replaced or reset drive turns the wrong way"
+        let (verdict, why) = match (drive_wrong, bypass_wrong) {
+            (true, true) => (Verdict::Outside, "Turns the wrong way on drive and bypass, with the parameter in force"),
+            (true, false) => (Verdict::Outside, "Turns the wrong way on the drive, with the parameter in force"),
+            (false, true) => {
+                (Verdict::Outside, "The parameter hides it on the drive, and the bypass turns the wrong way")
+            }
+            (false, false) => (
+                Verdict::Marginal,
+                "It turns as required only as long as a parameter says so; a replaced or reset drive turns the wrong way",
+            ),
         };
-        return (
-            verdict,
-            format!("{why}. Isolated and proved dead, {}, and take the parameter back.", place.instruction()),
-        );
+        return (verdict, format!("{why}. {exchange}"));
     }
     let Some(place) = remedy(drive_wrong, bypass_wrong) else {
         let feeds = if has_bypass { "on drive and bypass" } else { "on the drive" };
@@ -272,9 +276,12 @@ mod tests {
             (seen(CounterClockwise, Some(Clockwise), false), Verdict::Outside, "U and V at the drive's output"),
             (seen(CounterClockwise, None, false), Verdict::Outside, "U and V at the drive's output"),
             (seen(Clockwise, Some(CounterClockwise), false), Verdict::Outside, "L1 and L2 at the input of the bypass"),
-            (seen(CounterClockwise, Some(CounterClockwise), true), Verdict::Outside, "take the parameter back"),
-            (seen(CounterClockwise, Some(Clockwise), true), Verdict::Marginal, "replaced or reset"),
-            (seen(CounterClockwise, None, true), Verdict::Marginal, "replaced or reset"),
+            (seen(Clockwise, None, true), Verdict::Marginal, "U and V at the drive's output"),
+            (seen(Clockwise, Some(Clockwise), true), Verdict::Marginal, "replaced or reset"),
+            (seen(Clockwise, Some(CounterClockwise), true), Verdict::Outside, "U and V in the motor's terminal box"),
+            (seen(CounterClockwise, None, true), Verdict::Outside, "no lead is exchanged"),
+            (seen(CounterClockwise, Some(Clockwise), true), Verdict::Outside, "no lead is exchanged"),
+            (seen(CounterClockwise, Some(CounterClockwise), true), Verdict::Outside, "L1 and L2 at the input"),
         ] {
             let outcome = check(&inputs);
             assert_eq!(outcome.verdict, verdict, "{inputs:?}");

@@ -5,7 +5,8 @@
 //! Thermistors: in total below 20 Ω a short, above 250 Ω each too high or open, 20 to 250 Ω each as it should be
 //! (rows TH-02, TH-04); measure with 2.5 V at most (TH-01). Pt100, Pt1000: temperature by IEC 60751 (TH-05), within
 //! 5 K of a thermometer on the resting motor (common practice, TH-07; a two-wire lead adds a kelvin for each 0.385 Ω,
-//! TH-06). Switch that opens when hot: at most 10 Ω closed, more than 100 Ω open (common practice, TH-08).
+//! TH-06). Switch that opens when hot: at most 10 Ω closed, more than 100 Ω open (common practice, TH-08). Where the
+//! maker gives the cold resistance, its ends replace those of the span and bound a platinum sensor besides.
 
 use crate::decision::Measured;
 use crate::formulas::{marking, platinum, plausible};
@@ -60,6 +61,10 @@ pub struct Inputs {
     pub winding_temperature: Option<Reading<Temperature>>,
     /// Resistance of both leads together, for a two-wire platinum sensor.
     pub lead_resistance: Option<Resistance>,
+    /// Least cold resistance in total by the maker.
+    pub maker_least: Option<Resistance>,
+    /// Largest cold resistance in total by the maker.
+    pub maker_most: Option<Resistance>,
 }
 
 /// Largest resistance of cold thermistors in series.
@@ -82,6 +87,13 @@ pub fn check(inputs: &Inputs) -> Outcome {
         let _ = b.need(inputs.reading.as_ref(), "sensor resistance");
         return b.not_assessed();
     };
+    for (own, what) in [(inputs.maker_least, "least cold resistance"), (inputs.maker_most, "largest cold resistance")] {
+        let Some(own) = own else { continue };
+        let Some(own) = plausible::positive(&mut b, Some(own), &format!("{what} by the maker")) else {
+            return b.not_assessed();
+        };
+        b.line(what, "the maker's", String::new(), format!("{} Ω", significant(own.ohms(), 3)));
+    }
     match sensor {
         Sensor::Thermistor => thermistor(b, inputs),
         Sensor::Pt100 => platinum_sensor(b, inputs, 100.0),
@@ -99,7 +111,13 @@ fn thermistor(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
     if !(1..=12).contains(&count) {
         return b.not_judged("Not assessed: between 1 and 12 thermistors in series make sense.");
     }
-    let (low, high) = (COLD_LEAST.value * f64::from(count), cold_most(count).ohms());
+    let low = inputs.maker_least.map_or(COLD_LEAST.value * f64::from(count), Resistance::ohms);
+    let high = inputs.maker_most.map_or(cold_most(count).ohms(), Resistance::ohms);
+    if low >= high {
+        return b.not_judged(
+            "Not assessed: the maker's cold resistance does not meet the count of thermistors. Check both.",
+        );
+    }
     let (l, h) = (significant(low, 3), significant(high, 3));
     b.limit(format!("{l} to {h} Ω cold for {count} in series; below 20 Ω in total a short"));
     b.rule(
@@ -178,6 +196,10 @@ fn platinum_sensor(mut b: OutcomeBuilder, inputs: &Inputs, ohms_at_zero: f64) ->
     );
     b.figure("temperature of the sensor", found, 3, "°C");
     b.figure("tolerance of class B", platinum::class_b(Temperature::from_celsius(found)).kelvins(), 2, "K");
+    let by_maker = maker_span(inputs, &reading);
+    if by_maker == Verdict::Outside {
+        return b.judged(Verdict::Outside, format!("{shown} Ω is not the cold resistance that the maker gives. Check the kind of sensor, its leads and its wiring."));
+    }
     let Some(other) = other else { return b.not_assessed() };
     let apart = found - other.number();
     let off = decimals(apart, 1);
@@ -195,36 +217,50 @@ fn platinum_sensor(mut b: OutcomeBuilder, inputs: &Inputs, ohms_at_zero: f64) ->
             (other.standard_uncertainty(), other.doubt()),
         ],
     );
-    let verdict = marking::hint(measured.between(-AGREEMENT.value, AGREEMENT.value));
+    let verdict = marking::hint(measured.between(-AGREEMENT.value, AGREEMENT.value)).worse(by_maker);
     marking::mark(&mut b, &measured, format!("{off} K"), verdict);
     let summary = match verdict {
         Verdict::Within => format!("The sensor says {} °C, {off} K off the thermometer.", decimals(found, 1)),
         _ => format!(
-            "The sensor says {} °C, {off} K off the thermometer: more than 5 K, close to it, or an instrument's word does not count. Check leads and wiring, and let the motor rest.",
+            "The sensor says {} °C, {off} K off the thermometer: more than 5 K, close to it or to the maker's ends, or an instrument's word does not count. Check leads and wiring, and let the motor rest.",
             decimals(found, 1)
         ),
     };
     b.judged(verdict, summary)
 }
 
+/// A platinum sensor against the maker's cold resistance; within where the maker gives none.
+fn maker_span(inputs: &Inputs, reading: &Reading<Resistance>) -> Verdict {
+    let measured = Measured::direct(reading);
+    let low = inputs.maker_least.map_or(Verdict::Within, |least| measured.at_least(least.ohms()));
+    low.worse(inputs.maker_most.map_or(Verdict::Within, |most| measured.at_most(most.ohms())))
+}
+
 fn switch(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
     b.cite(SENSOR_SWITCH);
-    b.limit("at most 10 Ω cold with its leads; above 100 Ω is open (common practice)");
-    b.rule(LimitRule::logarithmic("Ω").at_most(CLOSED.value, "≤ 10 Ω").tick(OPEN.value, "open"));
+    let (closed, open) = inputs.maker_most.map_or((CLOSED.value, OPEN.value), |most| (most.ohms(), most.ohms()));
+    if inputs.maker_most.is_some() {
+        let shown = significant(closed, 3);
+        b.limit(format!("at most {shown} Ω cold, the maker's"));
+        b.rule(LimitRule::logarithmic("Ω").at_most(closed, format!("≤ {shown} Ω")));
+    } else {
+        b.limit("at most 10 Ω cold with its leads; above 100 Ω is open (common practice)");
+        b.rule(LimitRule::logarithmic("Ω").at_most(CLOSED.value, "≤ 10 Ω").tick(OPEN.value, "open"));
+    }
     let Some(reading) = plausible::reading_not_negative(&mut b, inputs.reading.as_ref(), "sensor resistance") else {
         return b.not_assessed();
     };
     let measured = Measured::direct(&reading);
     let shown = significant(measured.value, 3);
-    let verdict = marking::graded(&measured, CLOSED.value, OPEN.value);
+    let verdict = marking::graded(&measured, closed, open);
     b.figure("sensor resistance", measured.value, 3, "Ω");
     b.line(
         "closed when cold",
-        "R ≤ 10 Ω",
+        &format!("R ≤ {} Ω", significant(closed, 3)),
         format!("{shown} Ω"),
-        if measured.value <= CLOSED.value {
+        if measured.value <= closed {
             "closed"
-        } else if measured.value > OPEN.value {
+        } else if measured.value > open {
             "open"
         } else {
             "neither"
@@ -276,6 +312,8 @@ mod tests {
                 Accuracy { percent_of_reading: 0.0, digits: 1.0, resolution: 0.1, ..meter },
             )),
             lead_resistance: Some(Resistance::from_ohms(0.0)),
+            maker_least: None,
+            maker_most: None,
         }
     }
 
@@ -331,6 +369,21 @@ mod tests {
         ] {
             assert_eq!(check(&of(Sensor::Switch, ohms)).verdict, verdict, "{ohms}");
         }
+    }
+
+    /// The maker's figures go first (standing rule); 200 Ω would pass by DIN 44081 (row TH-02).
+    #[test]
+    fn the_makers_cold_resistance_replaces_the_span() {
+        let ohms = |r| Some(Resistance::from_ohms(r));
+        let own = |sensor, r, least, most| {
+            check(&Inputs { maker_least: ohms(least), maker_most: ohms(most), ..of(sensor, r) })
+        };
+        assert_eq!(own(Sensor::Thermistor, 200.0, 90.0, 180.0).verdict, Verdict::Outside);
+        assert!(own(Sensor::Thermistor, 200.0, 90.0, 180.0).limit.starts_with("90.0 to 180 Ω"));
+        assert_eq!(own(Sensor::Thermistor, 150.0, 90.0, 180.0).verdict, Verdict::Within);
+        assert_eq!(own(Sensor::Pt100, 107.79, 100.0, 105.0).verdict, Verdict::Outside);
+        assert_eq!(own(Sensor::Switch, 3.0, 0.1, 2.0).verdict, Verdict::Outside);
+        assert_eq!(own(Sensor::Thermistor, 150.0, 180.0, 90.0).verdict, Verdict::NotAssessed);
     }
 
     #[test]

@@ -54,7 +54,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     for band in bands {
         let (low, high) = (band.low.hertz(), band.high.hertz());
         if !(low.is_finite() && high.is_finite()) {
-            return b.not_judged("Not assessed: an edge of a skip band is not a number.");
+            return b.not_judged("Not assessed: an edge of a skip band is no number.");
         }
         if low < 0.0 || low >= high {
             return b.judged(

@@ -54,7 +54,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         return b.as_figure(format!("{shown} s from command to standstill; no time is specified to compare it with."));
     };
     if measured.doubt.is_none() {
-        b.needed(format!("with this stop-watch {} s is within", significant(limit - measured.expanded, 3)));
+        b.needed(format!("With this stop-watch {} s is within", significant(limit - measured.expanded, 3)));
     }
     let verdict = measured.at_most(limit);
     b.line(

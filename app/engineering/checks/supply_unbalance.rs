@@ -1,10 +1,11 @@
 //! # supply-unbalance
 //!
-//! Unbalance of three line volts, by both definitions, against the limit of the drive's manual.
+//! Unbalance of three line volts, by both definitions, against the limits of the drive's manual and the specification.
 //!
 //! Largest deviation from the mean over the mean (NEMA MG 1); negative over positive sequence (IEC 61000-4-30):
 //! √((1 − √(3 − 6β))/(1 + √(3 − 6β))), β = ΣU⁴/(ΣU²)². The two differ by up to 15.5 % and are never compared with each
-//! other's limit. No limit from the manual: assumed 1 % negative sequence, the lowest published (IEC 60034-1).
+//! other's limit; a limit that does not say which it means is compared with the larger. Of two limits the worse verdict
+//! counts. Neither limit: assumed 1 % negative sequence, the lowest published (IEC 60034-1).
 //! With a bypass: the load factor of the line-fed motor after MG 1, and outside beyond 5 %.
 
 use crate::decision::Measured;
@@ -38,6 +39,8 @@ pub enum Definition {
     LargestDeviation,
     /// Negative over positive sequence (IEC).
     NegativeSequence,
+    /// Not said: the larger of the two is compared.
+    Larger,
 }
 
 /// A limit of the drive's manual.
@@ -56,6 +59,8 @@ pub struct Inputs {
     pub lines: [Option<Reading<Voltage>>; 3],
     /// The limit of the drive's manual.
     pub drive_limit: Option<DriveLimit>,
+    /// The limit of the specification.
+    pub specified_limit: Option<DriveLimit>,
     /// Whether the motor can run straight from the line.
     pub bypass: Option<bool>,
 }
@@ -66,23 +71,16 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let mut b = OutcomeBuilder::new(NAME);
     b.cite(UB_01);
     b.cite(UB_02);
-    if inputs.drive_limit.is_none() {
-        b.cite(UB_08);
+    let Some(limits) = limits(&mut b, inputs) else { return b.not_assessed() };
+    let said: Vec<String> = limits
+        .iter()
+        .map(|(l, percent)| format!("{} at most {} %", words(l.definition), significant(*percent, 3)))
+        .collect();
+    b.limit(said.join("; "));
+    // Until the volts are read the smaller number is the one to keep.
+    if let Some((_, percent)) = limits.iter().min_by(|a, b| a.1.total_cmp(&b.1)) {
+        b.rule(ruler(*percent));
     }
-    let usual = DriveLimit { value: Ratio::from_fraction(USUAL.value), definition: Definition::NegativeSequence };
-    let limit = b.assume(
-        inputs.drive_limit,
-        usual,
-        "unbalance limit of the drive's manual",
-        "1 % negative sequence, the lowest published (IEC 60034-1, long run)",
-    );
-    let Some(allowed) = positive(&mut b, Some(limit.value), "unbalance limit of the drive's manual") else {
-        return b.not_assessed();
-    };
-    let allowed = allowed.fraction() * 100.0;
-    let (words, allowed_shown) = (words(limit.definition), significant(allowed, 3));
-    b.limit(format!("{words} at most {allowed_shown} %"));
-    b.rule(LimitRule::linear("%").at_most(allowed, format!("≤ {allowed_shown} %")));
     let mut readings = Vec::new();
     for (reading, name) in inputs.lines.iter().zip(LINES) {
         readings.extend(positive_reading(&mut b, reading.as_ref(), name));
@@ -112,10 +110,21 @@ pub fn check(inputs: &Inputs) -> Outcome {
     );
     b.figure("largest deviation (NEMA)", found.largest.value, 3, "%");
     b.figure("negative sequence (IEC)", negative.value, 3, "%");
-    let measured = match limit.definition {
+    let by = |definition| match definition {
         Definition::LargestDeviation => found.largest.clone(),
-        Definition::NegativeSequence => negative,
+        Definition::NegativeSequence => negative.clone(),
+        Definition::Larger if negative.value > found.largest.value => negative.clone(),
+        Definition::Larger => found.largest.clone(),
     };
+    let worst = limits.iter().max_by(|(one, a), (other, b)| {
+        let (one, other) = (by(one.definition), by(other.definition));
+        let verdicts = one.at_most(*a).cmp(&other.at_most(*b));
+        verdicts.then((one.value / a).total_cmp(&(other.value / b)))
+    });
+    let Some((limit, allowed)) = worst else { return b.not_assessed() };
+    let (measured, allowed) = (by(limit.definition), *allowed);
+    let (words, allowed_shown) = (words(limit.definition), significant(allowed, 3));
+    b.rule(ruler(allowed));
     if let Some(doubt) = &measured.doubt {
         b.note(format!("Marginal at best: {doubt}."));
     }
@@ -155,10 +164,34 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.judged(verdict, summary)
 }
 
+/// The limits that hold, each with its percent; the assumed one where neither manual nor specification names any.
+fn limits(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<Vec<(DriveLimit, f64)>> {
+    let mut entered: Vec<DriveLimit> = inputs.drive_limit.into_iter().chain(inputs.specified_limit).collect();
+    if entered.is_empty() {
+        b.cite(UB_08);
+        let usual = DriveLimit { value: Ratio::from_fraction(USUAL.value), definition: Definition::NegativeSequence };
+        entered.push(b.assume(
+            None,
+            usual,
+            "unbalance limit of the drive's manual",
+            "1 % negative sequence, the lowest published (IEC 60034-1, long run)",
+        ));
+    }
+    entered
+        .into_iter()
+        .map(|l| Some((l, positive(b, Some(l.value), "unbalance limit above zero")?.fraction() * 100.0)))
+        .collect()
+}
+
+fn ruler(percent: f64) -> LimitRule {
+    LimitRule::linear("%").at_most(percent, format!("≤ {} %", significant(percent, 3)))
+}
+
 const fn words(definition: Definition) -> &'static str {
     match definition {
         Definition::LargestDeviation => "Largest deviation from the mean",
         Definition::NegativeSequence => "Negative sequence",
+        Definition::Larger => "Unbalance by the larger of both definitions",
     }
 }
 
@@ -225,6 +258,27 @@ mod tests {
         assert_eq!(measured(2.4, Definition::LargestDeviation), Verdict::Outside);
         assert_eq!(measured(2.65, Definition::NegativeSequence), Verdict::Marginal);
         assert_eq!(check(&lines([400.0; 3])).verdict, Verdict::Within);
+    }
+
+    /// Hubert, Ex. 5.14 (C-UB-001): 2.58 % largest deviation, 2.65 % negative sequence.
+    #[test]
+    fn the_specification_counts_beside_the_manual() {
+        let both = |drive: f64, specified: f64| {
+            check(&Inputs {
+                drive_limit: manual(drive, Definition::LargestDeviation),
+                specified_limit: manual(specified, Definition::Larger),
+                ..lines([460.0, 455.0, 440.0])
+            })
+        };
+        assert_eq!(both(3.0, 4.0).verdict, Verdict::Within);
+        for (drive, specified) in [(3.0, 2.0), (2.0, 3.0)] {
+            let outcome = both(drive, specified);
+            assert_eq!(outcome.verdict, Verdict::Outside);
+            assert!(outcome.summary.contains("above 2.00 %"), "{}", outcome.summary);
+        }
+        assert!(both(3.0, 2.0).limit.contains("at most 3.00 %") && both(3.0, 2.0).limit.contains("at most 2.00 %"));
+        let unsaid = Inputs { drive_limit: manual(2.62, Definition::Larger), ..lines([460.0, 455.0, 440.0]) };
+        assert!(check(&unsaid).summary.contains("2.65 %"), "{}", check(&unsaid).summary);
     }
 
     /// C-UB-008 and C-UB-009 (NEMA MG 1 figure 14-1): 0.88 at 3 %, not to run beyond 5 %.

@@ -1,7 +1,8 @@
 //! # supply-voltage
 //!
-//! Three line-to-line volts of the supply against nominal ±10 % (IEC 60038, EN 50160) and the range of the drive's
-//! manual: the narrower end of both counts. Without a nominal voltage the drive's range stands alone.
+//! Three line-to-line volts of the supply against nominal ±10 % (IEC 60038, EN 50160), or ±5 % where the site has chosen
+//! that (ANSI C84.1), and the range of the drive's manual: the narrower end of both counts. Without a nominal voltage
+//! the drive's range stands alone.
 
 use crate::decision::Measured;
 use crate::formulas::plausible::{positive, positive_reading};
@@ -11,7 +12,7 @@ use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
 use crate::quantity::{Ratio, Voltage};
 use crate::reading::Reading;
 use crate::rounding::significant;
-use crate::sources::supply::SP_04;
+use crate::sources::supply::{SP_04, SUPPLY_RANGE_A};
 
 /// Name in the catalogue.
 pub const NAME: &str = "supply-voltage";
@@ -19,6 +20,19 @@ pub const NAME: &str = "supply-voltage";
 /// Deviation from nominal.
 pub const DEVIATION: Limit =
     Limit { name: "deviation from nominal supply voltage", value: 0.10, unit: "1", source: SP_04 };
+
+/// Deviation from nominal where the site has chosen the narrower range.
+pub const NARROW: Limit =
+    Limit { name: "deviation from nominal supply voltage, range A", value: 0.05, unit: "1", source: SUPPLY_RANGE_A };
+
+/// By which published range the site judges its supply.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Range {
+    /// ±10 %.
+    TenPercent,
+    /// ±5 %.
+    FivePercent,
+}
 
 /// Names of the three readings.
 pub const LINES: [&str; 3] = ["supply volts L1-L2", "supply volts L2-L3", "supply volts L3-L1"];
@@ -30,6 +44,8 @@ pub struct Inputs {
     pub lines: [Option<Reading<Voltage>>; 3],
     /// Nominal line volts.
     pub nominal: Option<Voltage>,
+    /// Range chosen by the site; ±10 % until it has chosen.
+    pub site_range: Option<Range>,
     /// Lowest line volts by the drive's manual.
     pub drive_lowest: Option<Voltage>,
     /// Highest line volts by the drive's manual.
@@ -99,18 +115,23 @@ pub fn check(inputs: &Inputs) -> Outcome {
     )
 }
 
-/// The narrower ends of nominal ±10 % and of the drive's range.
+/// The narrower ends of the site's range around nominal and of the drive's range.
 fn limits(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<(f64, f64)> {
     let drive_only = inputs.drive_lowest.is_some() && inputs.drive_highest.is_some();
     let mut span = (f64::NEG_INFINITY, f64::INFINITY);
     if inputs.nominal.is_some() || !drive_only {
-        b.cite(SP_04);
+        let allowed = match inputs.site_range {
+            Some(Range::FivePercent) => NARROW,
+            Some(Range::TenPercent) | None => DEVIATION,
+        };
+        b.cite(allowed.source);
         let nominal = positive(b, inputs.nominal, "nominal supply voltage")?.volts();
-        span = (nominal * (1.0 - DEVIATION.value), nominal * (1.0 + DEVIATION.value));
+        span = (nominal * (1.0 - allowed.value), nominal * (1.0 + allowed.value));
+        let percent = significant(allowed.value * 100.0, 2);
         b.line(
             "supply",
-            "U_N ± 10 %",
-            format!("{} V ± 10 %", significant(nominal, 4)),
+            &format!("U_N ± {percent} %"),
+            format!("{} V ± {percent} %", significant(nominal, 4)),
             format!("{} to {} V", significant(span.0, 4), significant(span.1, 4)),
         );
     }
@@ -170,6 +191,16 @@ mod tests {
         ] {
             assert_eq!(check(&supply(400.0, [400.0, 400.0, volts])).verdict, verdict, "{volts}");
         }
+    }
+
+    /// ANSI C84.1, range A (from memory): 375 V on 400 V is −6.25 %, which ±10 % lets pass.
+    #[test]
+    fn the_range_that_the_site_has_chosen_counts() {
+        let low = supply(400.0, [400.0, 400.0, 375.0]);
+        assert_eq!(check(&low).verdict, Verdict::Within);
+        let narrow = check(&Inputs { site_range: Some(Range::FivePercent), ..low });
+        assert_eq!((narrow.verdict, narrow.limit.as_str()), (Verdict::Outside, "380.0 to 420.0 V between lines"));
+        assert!(narrow.sources.iter().any(|s| s.text.contains("C84.1")));
     }
 
     #[test]

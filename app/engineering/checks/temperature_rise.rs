@@ -4,7 +4,9 @@
 //!
 //! By resistance: T₂ = R₂/R₁·(k + T₁) − k, k = 235 copper, 225 aluminium (row MN-19); rise = T₂ − T_coolant. Limit at a
 //! coolant of 40 °C at most: class B 80 K, F 105 K, H 125 K (row MN-18, resistance method; taken for a sensor too,
-//! which is cautious). A surface thermometer tells nothing about the winding. The motor maker's limit goes first.
+//! which is cautious); lower by as many kelvins as the plate's ambient or the coolant lies above 40 °C (from memory). A
+//! surface thermometer tells nothing about the winding. The motor maker's limit goes first; it holds up to the plate's
+//! ambient.
 
 use crate::checks::polarization_index::ThermalClass;
 use crate::decision::Measured;
@@ -27,6 +29,9 @@ pub const CLASS_B: Limit = Limit { name: "rise, class B", value: 80.0, unit: "K"
 pub const CLASS_F: Limit = Limit { name: "rise, class F", value: 105.0, unit: "K", source: MN_18 };
 /// Class H (180).
 pub const CLASS_H: Limit = Limit { name: "rise, class H", value: 125.0, unit: "K", source: MN_18 };
+
+/// Ambient for which a plate holds that names none.
+const USUAL_AMBIENT: f64 = 40.0;
 
 /// How the winding's temperature was found.
 #[derive(Clone, Debug, PartialEq)]
@@ -58,6 +63,8 @@ pub struct Inputs {
     pub conductor: Option<Conductor>,
     /// Thermal class, or the lower one to which the motor is used.
     pub thermal_class: Option<ThermalClass>,
+    /// Ambient for which the motor's plate holds; 40 °C where it is silent.
+    pub plate_ambient: Option<Temperature>,
     /// The motor maker's own maximum.
     pub maker_maximum: Option<TemperatureRise>,
 }
@@ -103,9 +110,15 @@ pub fn check(inputs: &Inputs) -> Outcome {
     );
     b.figure("winding temperature", winding.celsius, 3, "°C");
     b.figure("temperature rise", rise, 3, "K");
-    let allowed = limit - (coolant.number() - 40.0).max(0.0);
+    let plate = inputs.plate_ambient.map_or(USUAL_AMBIENT, Temperature::celsius);
+    // The class's rise is reckoned from 40 °C; a plate for a hotter place has the lower limit built in already.
+    let from = if inputs.maker_maximum.is_some() { plate } else { plate.max(USUAL_AMBIENT) };
+    let allowed = limit - (coolant.number() - from).max(0.0);
     if allowed < limit {
-        b.note("The coolant is above 40 °C: the limit falls by as many kelvins (from memory); ask the motor maker.");
+        b.note(format!(
+            "The coolant is above {} °C: the limit falls by as many kelvins (from memory); ask the motor maker.",
+            significant(from, 3)
+        ));
         let shown = significant(allowed, 3);
         b.limit(format!("at most {shown} K at a coolant of {} °C", significant(coolant.number(), 3)));
         b.rule(LimitRule::linear("K").at_most(allowed, format!("≤ {shown} K")));
@@ -190,7 +203,24 @@ fn limit(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
         format!("class {class:?}"),
         format!("{} K", significant(limit.value, 3)),
     );
+    let hotter = finite_or_usual(b, inputs.plate_ambient)? - USUAL_AMBIENT;
+    if hotter > 0.0 {
+        b.line(
+            "limit of this plate",
+            "ΔT − (T_plate − 40 °C)",
+            format!("{} K − {} K", significant(limit.value, 3), significant(hotter, 3)),
+            format!("{} K", significant(limit.value - hotter, 3)),
+        );
+        b.note("The plate holds for air above 40 °C: the class's rise is lower by as many kelvins (from memory).");
+        let left = TemperatureRise::from_kelvins(limit.value - hotter);
+        return plausible::positive(b, Some(left), "rise left by the plate's ambient").map(TemperatureRise::kelvins);
+    }
     Some(limit.value)
+}
+
+fn finite_or_usual(b: &mut OutcomeBuilder, plate: Option<Temperature>) -> Option<f64> {
+    let plate = plate.unwrap_or(Temperature::from_celsius(USUAL_AMBIENT));
+    plausible::finite(b, Some(plate), "ambient on the motor's plate").map(Temperature::celsius)
 }
 
 #[cfg(test)]
@@ -213,6 +243,7 @@ mod tests {
             coolant: celsius(20.0),
             conductor: Some(Conductor::Copper),
             thermal_class: Some(ThermalClass::B),
+            plate_ambient: None,
             maker_maximum: None,
         }
     }
@@ -237,6 +268,9 @@ mod tests {
         assert_eq!(check(&f).verdict, Verdict::Within);
         let own = Inputs { maker_maximum: Some(TemperatureRise::from_kelvins(70.0)), ..of(0.65) };
         assert_eq!(check(&own).verdict, Verdict::Outside);
+        // A plate for 50 °C leaves class B 70 K; the 76.5 K of this winding are then too many (row MN-18, from memory).
+        let hot_place = Inputs { plate_ambient: Some(Temperature::from_celsius(50.0)), ..of(0.65) };
+        assert_eq!((check(&hot_place).verdict, check(&hot_place).limit.as_str()), (Verdict::Outside, "at most 70.0 K"));
     }
 
     #[test]

@@ -3,7 +3,7 @@
 //! Whatever was changed for a test, against what it should be at handover.
 //!
 //! As left equals intended: within. As left still the test value, or anything else: outside. Numbers are compared as
-//! numbers, words as words. Common practice (row TS-01).
+//! numbers, words as words. What was changed and written down nowhere is missing by name. Common practice (row TS-01).
 
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
 use crate::sources::settings::RESTORED;
@@ -29,6 +29,8 @@ pub struct TestSetting {
 pub struct Inputs {
     /// Settings changed for tests; an empty list when none was; `None` when nobody said.
     pub settings: Option<Vec<TestSetting>>,
+    /// What was changed by what the record says, and written down nowhere: each by name.
+    pub unlisted: Vec<String>,
 }
 
 /// Runs the check.
@@ -42,6 +44,10 @@ pub fn check(inputs: &Inputs) -> Outcome {
     };
     let mut wrong = Vec::new();
     let mut open = false;
+    for what in &inputs.unlisted {
+        let _ = b.need(None::<()>, what);
+        open = true;
+    }
     for setting in settings {
         let intended = b.need(filled(setting.intended.as_deref()), &format!("{} as intended", setting.what));
         let left = b.need(filled(setting.as_left.as_deref()), &format!("{} as left", setting.what));
@@ -102,7 +108,7 @@ mod tests {
             intended: text(intended),
             as_left: text(left),
         };
-        Inputs { settings: Some(vec![setting]) }
+        Inputs { settings: Some(vec![setting]), ..Inputs::default() }
     }
 
     /// Common practice, no source (row TS-01).
@@ -118,7 +124,12 @@ mod tests {
 
     #[test]
     fn none_and_missing() {
-        assert_eq!(check(&Inputs { settings: Some(Vec::new()) }).verdict, Verdict::Within);
+        let none = Inputs { settings: Some(Vec::new()), ..Inputs::default() };
+        assert_eq!(check(&none).verdict, Verdict::Within);
+        let unlisted = vec!["settings lowered for the first turn".to_owned()];
+        let outcome = check(&Inputs { unlisted: unlisted.clone(), ..none });
+        assert_eq!((outcome.verdict, &outcome.missing[0].what), (Verdict::NotAssessed, &unlisted[0]));
+        assert_eq!(check(&Inputs { unlisted, ..of("50", "110", "50") }).verdict, Verdict::Outside);
         assert_eq!(check(&Inputs::default()).verdict, Verdict::NotAssessed);
         let outcome = check(&of("50", "110", " "));
         assert_eq!(

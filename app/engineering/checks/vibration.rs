@@ -3,14 +3,15 @@
 //! Broadband vibration velocity on a bearing housing against the zones of ISO 20816-3 (row VB-01).
 //!
 //! Group 1: above 300 kW, or shaft height 315 mm and more. Group 2: 15 to 300 kW. Foundation rigid or flexible. Up to
-//! zone boundary B/C within, to C/D marginal, beyond outside. Below 15 kW, below 120 rpm or for other machines: a
-//! figure. 10 to 1000 Hz, from 2 Hz below 600 rpm. The machine maker's own limit goes first.
+//! zone boundary B/C within, to C/D marginal, beyond outside; where the site accepts up to A/B only, to A/B within, to
+//! B/C marginal. Below 15 kW whatever the height, below 120 rpm or for other machines: a figure. 10 to 1000 Hz, from
+//! 2 Hz below 600 rpm. The machine maker's own limit goes first.
 
 use crate::decision::Measured;
 use crate::formulas::{marking, plausible};
 use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Power, Speed, VibrationVelocity};
+use crate::quantity::{Length, Power, Speed, VibrationVelocity};
 use crate::reading::Reading;
 use crate::rounding::significant;
 use crate::sources::sensors::VB_01;
@@ -38,6 +39,15 @@ pub enum Foundation {
     Flexible,
 }
 
+/// Up to which boundary the site accepts.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Accepted {
+    /// Zone A only.
+    ZoneA,
+    /// Zones A and B.
+    ZoneB,
+}
+
 /// Zone of ISO 20816-3.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub enum Zone {
@@ -56,8 +66,10 @@ pub enum Zone {
 pub struct Inputs {
     /// Highest reading on the bearing housings, r.m.s.
     pub reading: Option<Reading<VibrationVelocity>>,
-    /// Machine group; from the rated power when not entered.
-    pub group: Option<Group>,
+    /// Shaft height: it makes a machine of 15 kW and more a large one.
+    pub shaft_height: Option<Length>,
+    /// Up to which boundary the site accepts; zone B until it has chosen.
+    pub accepted: Option<Accepted>,
     /// Foundation.
     pub foundation: Option<Foundation>,
     /// Rated power.
@@ -106,7 +118,8 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.cite(VB_01);
     b.note("The machine maker's own limit goes first where there is one.");
     let own = inputs.maker_maximum.map(VibrationVelocity::millimetres_per_second).filter(|m| m.is_finite() && *m > 0.0);
-    let group = inputs.group.or_else(|| by_power(inputs.rated_power?));
+    let group = group(inputs.rated_power, inputs.shaft_height);
+    let strict = inputs.accepted == Some(Accepted::ZoneA);
     let slow = inputs.speed.is_some_and(|n| n.rpm() < 120.0);
     let figure_only = own.is_none() && (group == Some(Group::Other) || slow);
     let mut edges = None;
@@ -120,9 +133,16 @@ pub fn check(inputs: &Inputs) -> Outcome {
         let foundation = b.need(inputs.foundation, "foundation, rigid or flexible");
         edges = group.zip(foundation).and_then(|(g, f)| boundaries(g, f));
         let numbers = edges.map(|e| e.map(VibrationVelocity::millimetres_per_second));
-        if let Some([a, c, d]) = numbers {
-            b.limit(format!("at most {c} mm/s (zones A and B); beyond {d} mm/s is outside"));
-            b.rule(LimitRule::linear("mm/s").at_most(c, format!("≤ {c} mm/s")).tick(a, "A/B").tick(d, "C/D"));
+        match numbers {
+            Some([a, c, d]) if strict => {
+                b.limit(format!("at most {a} mm/s (zone A, as the site accepts); beyond {c} mm/s is outside"));
+                b.rule(LimitRule::linear("mm/s").at_most(a, format!("≤ {a} mm/s")).tick(c, "B/C").tick(d, "C/D"));
+            }
+            Some([a, c, d]) => {
+                b.limit(format!("at most {c} mm/s (zones A and B); beyond {d} mm/s is outside"));
+                b.rule(LimitRule::linear("mm/s").at_most(c, format!("≤ {c} mm/s")).tick(a, "A/B").tick(d, "C/D"));
+            }
+            None => {}
         }
     }
     let reading = plausible::reading_not_negative(&mut b, inputs.reading.as_ref(), "vibration velocity");
@@ -138,6 +158,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     }
     let (good, bad) = match (own, edges.map(|e| e.map(VibrationVelocity::millimetres_per_second))) {
         (Some(own), _) => (own, own),
+        (None, Some([a, c, _])) if strict => (a, c),
         (None, Some([_, c, d])) => (c, d),
         (None, None) => return b.not_assessed(),
     };
@@ -165,14 +186,19 @@ pub fn check(inputs: &Inputs) -> Outcome {
     )
 }
 
-/// Group by rated power alone; below 15 kW the standard does not apply.
-fn by_power(power: Power) -> Option<Group> {
-    let kilowatts = power.watts() / 1e3;
-    (kilowatts.is_finite() && kilowatts > 0.0).then_some(match kilowatts {
-        k if k > 300.0 => Group::Large,
-        k if k >= 15.0 => Group::Medium,
-        _ => Group::Other,
-    })
+/// Group by rated power and shaft height. Below 15 kW the standard does not apply, however tall the machine.
+fn group(power: Option<Power>, height: Option<Length>) -> Option<Group> {
+    let kilowatts = power.map(|p| p.watts() / 1e3).filter(|k| k.is_finite() && *k > 0.0);
+    let metres = height.map(Length::metres).filter(|h| h.is_finite() && *h > 0.0);
+    match (kilowatts, metres) {
+        (Some(k), _) if k < 15.0 => Some(Group::Other),
+        (Some(k), _) if k > 300.0 => Some(Group::Large),
+        (_, Some(h)) if h >= 0.315 => Some(Group::Large),
+        (Some(_), _) => Some(Group::Medium),
+        (None, Some(h)) if h >= 0.160 => Some(Group::Medium),
+        // A small frame alone does not tell whether 15 kW are reached.
+        (None, _) => None,
+    }
 }
 
 #[cfg(test)]
@@ -231,6 +257,30 @@ mod tests {
             ..of(2.0, 5.5, Foundation::Rigid)
         };
         assert_eq!(check(&own).verdict, Verdict::Outside);
+    }
+
+    /// ISO 20816-3:2022 (row VB-01): group 2 on a rigid foundation has A/B at 1.4 mm/s, which a new machine is to keep.
+    #[test]
+    fn a_site_that_accepts_zone_a_only_has_the_lower_limits() {
+        let strict = |v| check(&Inputs { accepted: Some(Accepted::ZoneA), ..of(v, 75.0, Foundation::Rigid) });
+        for (v, verdict) in [(1.3, Verdict::Within), (2.0, Verdict::Marginal), (2.9, Verdict::Outside)] {
+            assert_eq!(strict(v).verdict, verdict, "{v}");
+        }
+        assert_eq!(strict(1.0).limit, "at most 1.4 mm/s (zone A, as the site accepts); beyond 2.8 mm/s is outside");
+        assert_eq!(check(&of(2.0, 75.0, Foundation::Rigid)).verdict, Verdict::Within);
+    }
+
+    /// ISO 20816-3:2022 (row VB-01) holds above 15 kW; 315 mm and more make group 1.
+    #[test]
+    fn the_shaft_height_never_takes_a_small_motor_into_the_standard() {
+        let tall = |kilowatts, millimetres: f64| Inputs {
+            shaft_height: Some(Length::from_metres(millimetres / 1e3)),
+            ..of(6.0, kilowatts, Foundation::Rigid)
+        };
+        assert_eq!(check(&tall(11.0, 160.0)).verdict, Verdict::Figure);
+        assert_eq!(check(&tall(14.9, 400.0)).verdict, Verdict::Figure);
+        assert_eq!(check(&tall(15.0, 132.0)).verdict, Verdict::Outside);
+        assert_eq!(check(&tall(110.0, 315.0)).verdict, Verdict::Marginal);
     }
 
     #[test]

@@ -38,7 +38,14 @@ pub fn state(current: Current) -> State {
 /// value = low + (I − 4)/16·(high − low).
 #[must_use]
 pub fn value<Q: Quantity>(current: Current, low: Q, high: Q) -> Q {
-    let share = (current.amperes() * 1e3 - 4.0) / 16.0;
+    value_between(current, (Current::from_amperes(4e-3), Current::from_amperes(20e-3)), low, high)
+}
+
+/// value = low + (I − I_low)/(I_high − I_low)·(high − low), for a signal with other ends.
+#[must_use]
+pub fn value_between<Q: Quantity>(current: Current, ends: (Current, Current), low: Q, high: Q) -> Q {
+    let span = ends.1.amperes() - ends.0.amperes();
+    let share = (current.amperes() - ends.0.amperes()) / span;
     Q::from_coherent(low.coherent() + share * (high.coherent() - low.coherent()))
 }
 

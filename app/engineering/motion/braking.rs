@@ -88,7 +88,7 @@ mod tests {
 
     #[test]
     fn an_overhauling_load_returns_more_and_a_lossy_gear_less_of_it() {
-        let lossy = Gear { efficiency: Ratio::from_fraction(0.8), ..Gear::DIRECT };
+        let lossy = Gear { efficiency: Some(Ratio::from_fraction(0.8)), ..Gear::DIRECT };
         let torque = |load: f64, gear: Gear| {
             even_ramp(&train(load, gear), Speed::from_rpm(1480.0), Speed::from_rpm(0.0), Duration::from_seconds(5.0))
                 .torque

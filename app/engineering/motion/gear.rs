@@ -1,7 +1,16 @@
 //! Gears and hoists: what the motor's shaft feels of a load that turns at another speed (row RM-02).
 
 use super::available_torque::angular;
+use crate::limit::Limit;
 use crate::quantity::{Inertia, LinearSpeed, Mass, Ratio, Speed, Torque};
+use crate::sources::motion::GEAR_LOSSES;
+
+/// Efficiency of a gear whose maker's figure nobody entered, where losses weigh against the motor.
+pub const USUAL_EFFICIENCY: Limit =
+    Limit { name: "gear efficiency, when not stated", value: 0.85, unit: "1", source: GEAR_LOSSES };
+/// What is said where it stands in.
+pub const EFFICIENCY_TAKEN: &str =
+    "85 % where losses weigh against the motor, no losses where the load drives it (common practice)";
 
 /// Which way power goes through the gear.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -17,18 +26,19 @@ pub enum Flow {
 pub struct Gear {
     /// Motor speed over load speed.
     pub ratio: Ratio,
-    /// Output over input power; the same both ways.
-    pub efficiency: Ratio,
+    /// Output over input power, the same both ways; not stated, each flow takes the end that is harder on the motor.
+    pub efficiency: Option<Ratio>,
 }
 
 impl Gear {
     /// A direct coupling.
-    pub const DIRECT: Self = Self { ratio: Ratio::from_fraction(1.0), efficiency: Ratio::from_fraction(1.0) };
+    pub const DIRECT: Self = Self { ratio: Ratio::from_fraction(1.0), efficiency: Some(Ratio::from_fraction(1.0)) };
 
     /// Whether it can be calculated with.
     #[must_use]
     pub fn is_sound(&self) -> bool {
-        let (ratio, efficiency) = (self.ratio.fraction(), self.efficiency.fraction());
+        let ratio = self.ratio.fraction();
+        let efficiency = self.efficiency.map_or(USUAL_EFFICIENCY.value, Ratio::fraction);
         ratio.is_finite() && ratio > 0.0 && efficiency > 0.0 && efficiency <= 1.0
     }
 
@@ -48,7 +58,10 @@ impl Gear {
     /// T/(i·η) while the motor drives, T·η/i while the load does.
     #[must_use]
     pub fn reflected_torque(&self, load: Torque, flow: Flow) -> Torque {
-        let efficiency = self.efficiency.fraction();
+        // A load that drives the motor through a gear of unknown losses is taken to lose nothing on the way.
+        let drives = flow == Flow::Regenerating && load.newton_metres() < 0.0;
+        let unknown = if drives { 1.0 } else { USUAL_EFFICIENCY.value };
+        let efficiency = self.efficiency.map_or(unknown, Ratio::fraction);
         let share = if flow == Flow::Motoring { 1.0 / efficiency } else { efficiency };
         Torque::from_newton_metres(load.newton_metres() * share / self.ratio.fraction())
     }
@@ -79,7 +92,7 @@ mod tests {
     #[test]
     fn a_gear_and_a_hoist_as_published() {
         let motor = Speed::from_rpm(1420.0);
-        let gear = Gear { ratio: Ratio::from_fraction(10.0), efficiency: Ratio::from_fraction(0.9) };
+        let gear = Gear { ratio: Ratio::from_fraction(10.0), efficiency: Some(Ratio::from_fraction(0.9)) };
         let (mass, speed) = (Mass::from_kilograms(1000.0), LinearSpeed::from_metres_per_second(1.5));
         let inertia = 0.2
             + gear.reflected_inertia(Inertia::from_kilogram_square_metres(10.0)).kilogram_square_metres()
@@ -92,9 +105,20 @@ mod tests {
 
     #[test]
     fn losses_help_to_brake() {
-        let gear = Gear { ratio: Ratio::from_fraction(20.0), efficiency: Ratio::from_fraction(0.8) };
+        let gear = Gear { ratio: Ratio::from_fraction(20.0), efficiency: Some(Ratio::from_fraction(0.8)) };
         let load = Torque::from_newton_metres(200.0);
         assert!((gear.reflected_torque(load, Flow::Motoring).newton_metres() - 12.5).abs() < 1e-9);
         assert!((gear.reflected_torque(load, Flow::Regenerating).newton_metres() - 8.0).abs() < 1e-9);
+    }
+
+    /// Common practice, no source: what nobody entered is taken where it is harder on the motor.
+    #[test]
+    fn unknown_losses_never_help() {
+        let gear = Gear { ratio: Ratio::from_fraction(20.0), efficiency: None };
+        let (drags, pulls) = (Torque::from_newton_metres(200.0), Torque::from_newton_metres(-200.0));
+        assert!((gear.reflected_torque(drags, Flow::Motoring).newton_metres() - 10.0 / 0.85).abs() < 1e-9);
+        assert!((gear.reflected_torque(drags, Flow::Regenerating).newton_metres() - 8.5).abs() < 1e-9);
+        assert!((gear.reflected_torque(pulls, Flow::Regenerating).newton_metres() + 10.0).abs() < 1e-9);
+        assert!(gear.is_sound() && !Gear { efficiency: Some(Ratio::from_fraction(1.2)), ..gear }.is_sound());
     }
 }

@@ -21,6 +21,17 @@ pub enum LoadTorque {
         /// Speed at which it is known.
         speed: Speed,
     },
+    /// What stays at standstill, and on top of it what rises with speed: a pump against a static head.
+    Lifted {
+        /// Torque that stays at very low speed.
+        at_rest: Torque,
+        /// Torque at that speed.
+        torque: Torque,
+        /// Speed at which it is known.
+        speed: Speed,
+        /// Whether the rest rises with the square of speed; otherwise in proportion.
+        square: bool,
+    },
     /// The same power from a speed up, and below it the torque of that speed: winders, spindles.
     ConstantPower {
         /// The power.
@@ -41,6 +52,12 @@ impl LoadTorque {
             Self::Constant(torque) => torque.newton_metres(),
             Self::Linear { torque, speed } => torque.newton_metres() * n / speed.rpm(),
             Self::Quadratic { torque, speed } => torque.newton_metres() * (n / speed.rpm()) * (n / speed.rpm()),
+            Self::Lifted { at_rest, torque, speed, square } => {
+                let part = n / speed.rpm();
+                let share = if *square { part * part } else { part };
+                let rest = at_rest.newton_metres();
+                (rest + (torque.newton_metres() - rest) * share).max(0.0)
+            }
             Self::ConstantPower { power, from } => {
                 power.watts() / super::available_torque::angular(Speed::from_rpm(n.max(from.rpm())))
             }
@@ -56,6 +73,12 @@ impl LoadTorque {
             Self::Linear { torque, speed } | Self::Quadratic { torque, speed } => {
                 torque.newton_metres().is_finite() && speed.rpm().is_finite() && speed.rpm() > 0.0
             }
+            Self::Lifted { at_rest, torque, speed, .. } => {
+                at_rest.newton_metres().is_finite()
+                    && torque.newton_metres().is_finite()
+                    && speed.rpm().is_finite()
+                    && speed.rpm() > 0.0
+            }
             Self::ConstantPower { power, from } => {
                 power.watts().is_finite() && from.rpm().is_finite() && from.rpm() > 0.0
             }
@@ -70,6 +93,8 @@ impl LoadTorque {
             Self::Constant(_) => "constant torque",
             Self::Linear { .. } => "torque proportional to speed",
             Self::Quadratic { .. } => "torque with the square of speed",
+            Self::Lifted { square: true, .. } => "torque at standstill, the rest with the square of speed",
+            Self::Lifted { .. } => "torque at standstill, the rest proportional to speed",
             Self::ConstantPower { .. } => "constant power",
             Self::Table(_) => "torque by table",
         }
@@ -116,6 +141,12 @@ mod tests {
         assert!((at(&LoadTorque::Constant(torque), 10.0) - 90.0).abs() < 1e-12);
         assert!((at(&LoadTorque::Linear { torque, speed }, 740.0) - 45.0).abs() < 1e-12);
         assert!((at(&LoadTorque::Quadratic { torque, speed }, 740.0) - 22.5).abs() < 1e-12);
+        let at_rest = Torque::from_newton_metres(30.0);
+        for (square, half) in [(true, 45.0), (false, 60.0)] {
+            let load = LoadTorque::Lifted { at_rest, torque, speed, square };
+            assert!((at(&load, 0.0) - 30.0).abs() < 1e-12 && (at(&load, 740.0) - half).abs() < 1e-12);
+            assert!((at(&load, 1480.0) - 90.0).abs() < 1e-12);
+        }
         let power = LoadTorque::ConstantPower { power: Power::from_watts(15e3), from: Speed::from_rpm(735.0) };
         // T = P/ω (row MN-04): 97.44 N·m at 1470 rpm, twice that at half the speed and no more below.
         assert!((at(&power, 1470.0) - 97.441_802).abs() < 0.01);

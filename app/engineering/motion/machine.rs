@@ -1,15 +1,15 @@
 //! What the record knows of motor, load and gear: each figure optional, each missing one named where it is missed.
 
 use super::available_torque::Motor;
-use super::gear::Gear;
+use super::gear::{EFFICIENCY_TAKEN, Gear, mass_as_inertia};
 use super::load_torque::LoadTorque;
 use super::train::Train;
 use crate::formulas::magnetising::{self, Bracket};
 use crate::formulas::plausible;
 use crate::outcome::OutcomeBuilder;
-use crate::quantity::{Current, Inertia, Power, Ratio, Speed, Torque};
+use crate::quantity::{Current, Inertia, LinearSpeed, Mass, Power, Ratio, Speed, Torque};
 use crate::rounding::significant;
-use crate::sources::motion::{RATED_TORQUE, RM_02, VF_02, VF_03};
+use crate::sources::motion::{GEAR_LOSSES, RATED_TORQUE, RM_02, VF_02, VF_03};
 
 /// Everything about the drive train that ramps need; nothing is required until a check asks for it.
 #[derive(Clone, Debug, Default, PartialEq)]
@@ -38,6 +38,23 @@ pub struct Machine {
     pub breakaway: Option<Torque>,
     /// What stands between motor and load; a direct coupling is assumed.
     pub gear: Option<Gear>,
+    /// A mass moved in a straight line.
+    pub linear: Option<Linear>,
+    /// Whether the load can drive the motor: a falling load, a downhill belt.
+    pub overhauling: bool,
+    /// Torque at the load's own shaft when it does; how large, not which way.
+    pub overhauling_torque: Option<Torque>,
+}
+
+/// A mass that the train moves in a straight line.
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
+pub struct Linear {
+    /// The mass.
+    pub mass: Option<Mass>,
+    /// Its speed.
+    pub speed: Option<LinearSpeed>,
+    /// Speed of the motor that belongs to it.
+    pub motor: Option<Speed>,
 }
 
 impl Machine {
@@ -71,12 +88,28 @@ impl Machine {
         Some(Bracket { low: known, high: known })
     }
 
+    /// The train for a ramp down: a load that can drive the motor is taken at its worst, pulling all the way.
+    pub fn braked_train(&self, b: &mut OutcomeBuilder) -> Option<Train> {
+        if !self.overhauling {
+            return self.train(b);
+        }
+        b.note("The load can drive the motor: judged with it pulling all the way down.");
+        let pull = plausible::positive(b, self.overhauling_torque, "torque of the load when it drives the motor");
+        let load = pull.map(|t| LoadTorque::Constant(Torque::from_newton_metres(-t.newton_metres())));
+        self.train_with(b, load)
+    }
+
     /// Inertia and load at the motor's shaft, with their lines of working.
     pub fn train(&self, b: &mut OutcomeBuilder) -> Option<Train> {
+        let load = b.need(self.load.clone(), "load torque");
+        self.train_with(b, load)
+    }
+
+    fn train_with(&self, b: &mut OutcomeBuilder, load: Option<LoadTorque>) -> Option<Train> {
         b.cite(RM_02);
         let motor = plausible::positive(b, self.motor_inertia, "motor inertia");
         let driven = plausible::not_negative(b, self.load_inertia, "load inertia");
-        let load = b.need(self.load.clone(), "load torque");
+        let linear = self.linear(b);
         let load =
             load.and_then(|l| b.need(Some(l).filter(LoadTorque::is_sound), "load torque with a speed above zero"));
         let breakaway = match self.breakaway {
@@ -86,19 +119,53 @@ impl Machine {
         let gear = b.assume(self.gear, Gear::DIRECT, "gear", "direct coupling, ratio 1, no losses");
         let gear =
             b.need(Some(gear).filter(Gear::is_sound), "gear with a ratio above zero and an efficiency from 0 to 1")?;
-        let train = Train::new(motor?, driven?, load?, breakaway, gear);
+        if gear.efficiency.is_none() {
+            b.cite(GEAR_LOSSES);
+            b.assume(None, (), "gear efficiency", EFFICIENCY_TAKEN);
+        }
+        let (motor, driven, linear) = (motor?, driven?, linear?);
+        let turning = motor.kilogram_square_metres() + linear.kilogram_square_metres();
+        let train = Train::new(Inertia::from_kilogram_square_metres(turning), driven, load?, breakaway, gear);
+        let (own, in_a_line) = (significant(motor.kilogram_square_metres(), 4), linear.kilogram_square_metres());
+        let (formula, in_a_line) = if in_a_line > 0.0 {
+            ("J = J_M + m·(v/ω)² + J_L/i²", format!(" + {} kg·m²", significant(in_a_line, 4)))
+        } else {
+            ("J = J_M + J_L/i²", String::new())
+        };
         b.line(
             "inertia at the motor's shaft",
-            "J = J_M + J_L/i²",
+            formula,
             format!(
-                "{} kg·m² + {} kg·m²/{}²",
-                significant(motor?.kilogram_square_metres(), 4),
-                significant(driven?.kilogram_square_metres(), 4),
+                "{own} kg·m²{in_a_line} + {} kg·m²/{}²",
+                significant(driven.kilogram_square_metres(), 4),
                 significant(gear.ratio.fraction(), 4)
             ),
             format!("{} kg·m²", significant(train.inertia.kilogram_square_metres(), 4)),
         );
         Some(train)
+    }
+
+    /// The mass in a straight line as inertia at the motor's shaft; nothing where there is none.
+    fn linear(&self, b: &mut OutcomeBuilder) -> Option<Inertia> {
+        let none = Inertia::from_kilogram_square_metres(0.0);
+        let Some(linear) = self.linear else { return Some(none) };
+        let mass = plausible::not_negative(b, linear.mass, "mass moved in a line");
+        let speed = plausible::not_negative(b, linear.speed, "speed of the mass moved in a line");
+        let motor = plausible::positive(b, linear.motor, "motor speed that goes with the mass moved in a line");
+        let (mass, speed, motor) = (mass?, speed?, motor?);
+        let inertia = mass_as_inertia(mass, speed, motor);
+        b.line(
+            "mass moved in a line, as inertia at the motor's shaft",
+            "J = m·(60·v/(2π·n))²",
+            format!(
+                "{} kg × (60 × {} m/s/(2π × {} rpm))²",
+                significant(mass.kilograms(), 4),
+                significant(speed.metres_per_second(), 3),
+                significant(motor.rpm(), 4)
+            ),
+            format!("{} kg·m²", significant(inertia.kilogram_square_metres(), 4)),
+        );
+        Some(inertia)
     }
 
     /// The current limit.
@@ -134,7 +201,44 @@ pub(crate) mod tests {
             }),
             breakaway: Some(Torque::from_newton_metres(10.0)),
             gear: Some(Gear::DIRECT),
+            linear: None,
+            overhauling: false,
+            overhauling_torque: None,
         }
+    }
+
+    /// Dubey, Fundamentals of Electrical Drives, Ex. 2.1 (C-RM-001): 1000 kg at 1.5 m/s and 1420 rpm are 0.1018 kg·m².
+    #[test]
+    fn a_mass_in_a_line_counts_as_inertia_and_names_what_it_lacks() {
+        let linear = Linear {
+            mass: Some(Mass::from_kilograms(1000.0)),
+            speed: Some(LinearSpeed::from_metres_per_second(1.5)),
+            motor: Some(Speed::from_rpm(1420.0)),
+        };
+        let mut b = OutcomeBuilder::new("x");
+        let train = Machine { linear: Some(linear), ..fan() }.train(&mut b).expect("complete");
+        assert!((train.inertia.kilogram_square_metres() - 4.0 - 0.101_75).abs() < 1e-4, "{train:?}");
+        assert!(Machine { linear: Some(Linear { speed: None, ..linear }), ..fan() }.train(&mut b).is_none());
+        assert_eq!(b.not_assessed().missing[0].what, "speed of the mass moved in a line");
+    }
+
+    #[test]
+    fn an_overhauling_load_pulls_on_the_way_down_and_says_when_nobody_knows_how_hard() {
+        let mut b = OutcomeBuilder::new("x");
+        let hoist = Machine { overhauling: true, overhauling_torque: Some(Torque::from_newton_metres(20.0)), ..fan() };
+        let n = Speed::from_rpm(700.0);
+        assert!((hoist.braked_train(&mut b).expect("complete").slowing(n).newton_metres() + 20.0).abs() < 1e-9);
+        assert!(fan().braked_train(&mut b).expect("complete").slowing(n).newton_metres() > 0.0);
+        assert!(Machine { overhauling_torque: None, ..hoist }.braked_train(&mut b).is_none());
+        assert_eq!(b.not_assessed().missing[0].what, "torque of the load when it drives the motor");
+    }
+
+    #[test]
+    fn a_gear_efficiency_that_nobody_stated_is_said_openly() {
+        let mut b = OutcomeBuilder::new("x");
+        let gear = Some(Gear { ratio: Ratio::from_fraction(10.0), efficiency: None });
+        assert!(Machine { gear, ..fan() }.train(&mut b).is_some());
+        assert_eq!(b.not_assessed().assumed[0].what, "gear efficiency");
     }
 
     #[test]

@@ -1,10 +1,11 @@
 //! Whatever is typed, no check of this area panics, hangs, or judges with a number that is none.
 
 use crate::checks::{acceleration_time, braking, bus_peak, deceleration_time, measured_acceleration, stop_time};
-use crate::motion::{Gear, LoadTorque, Machine, TorqueTable};
+use crate::motion::{Gear, Linear, LoadTorque, Machine, TorqueTable};
 use crate::outcome::{Outcome, Verdict};
 use crate::quantity::{
-    Capacitance, Current, Duration, Inertia, Power, Quantity, Ratio, Resistance, Speed, Torque, Voltage,
+    Capacitance, Current, Duration, Inertia, LinearSpeed, Mass, Power, Quantity, Ratio, Resistance, Speed, Torque,
+    Voltage,
 };
 use crate::reading::Reading;
 use proptest::prelude::*;
@@ -58,8 +59,15 @@ fn any_machine() -> impl Strategy<Value = Machine> {
         (any::<Current>(1.0, 50.0), any::<Current>(1.0, 300.0), any::<Inertia>(1e-3, 5.0), any::<Inertia>(0.0, 100.0)),
         (any_load(), any::<Torque>(0.0, 100.0), any::<Ratio>(0.2, 40.0), any::<Ratio>(0.3, 1.0)),
         prop::bool::ANY,
+        (
+            prop::bool::ANY,
+            any::<Mass>(0.0, 1e4),
+            any::<LinearSpeed>(0.0, 10.0),
+            any::<Speed>(100.0, 3000.0),
+            prop::bool::ANY,
+        ),
     )
-        .prop_map(|(plate, drive, load, known)| Machine {
+        .prop_map(|(plate, drive, load, known, line)| Machine {
             rated_power: plate.0,
             rated_speed: plate.1,
             rated_current: plate.2,
@@ -71,7 +79,10 @@ fn any_machine() -> impl Strategy<Value = Machine> {
             load_inertia: drive.3,
             load: load.0,
             breakaway: load.1,
-            gear: load.2.zip(load.3).map(|(ratio, efficiency)| Gear { ratio, efficiency }),
+            gear: load.2.map(|ratio| Gear { ratio, efficiency: load.3 }),
+            linear: line.0.then_some(Linear { mass: line.1, speed: line.2, motor: line.3 }),
+            overhauling: line.4,
+            overhauling_torque: load.1,
         })
 }
 

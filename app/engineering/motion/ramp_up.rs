@@ -21,6 +21,19 @@ pub struct RampUp {
     pub to: Speed,
 }
 
+/// The largest torque that an even ramp of this length asks of the motor, whatever any limit would leave of it:
+/// the load's torque and J·dω/dt together.
+#[must_use]
+pub fn asked(train: &Train, from: Speed, to: Speed, set: Duration) -> Torque {
+    let change = to.rpm() - from.rpm();
+    let moving = change / set.seconds() / acceleration(1.0, train.inertia);
+    let load = |i: u32| {
+        let n = Speed::from_rpm(from.rpm() + change * f64::from(i) / f64::from(2 * STEPS));
+        train.opposing(n).newton_metres()
+    };
+    Torque::from_newton_metres((0..=2 * STEPS).map(load).fold(f64::NEG_INFINITY, f64::max) + moving)
+}
+
 impl RampUp {
     /// Torque over and above the load at this speed.
     #[must_use]

@@ -82,3 +82,10 @@ pub const IR_18: Source = Source {
     status: Status::CommonPractice,
     safety: true,
 };
+/// Discharge after a test: at least four times its duration.
+pub const IR_20: Source = Source {
+    id: "IR-20",
+    text: "IEEE 43-2013, discharge of the winding for at least four times the duration of the test",
+    status: Status::Memory,
+    safety: true,
+};

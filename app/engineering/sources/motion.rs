@@ -64,6 +64,13 @@ pub const MEASURED_RAMP: Source = Source {
     status: Status::CommonPractice,
     safety: false,
 };
+/// Losses of a gear that nobody stated.
+pub const GEAR_LOSSES: Source = Source {
+    id: "RM-13",
+    text: "common practice: a gear of unknown make is taken to pass 85 % of the power, or all of it where losses would help",
+    status: Status::CommonPractice,
+    safety: false,
+};
 /// Losses of motor and inverter while braking.
 pub const BRAKING_LOSSES: Source = Source {
     id: "RM-12",

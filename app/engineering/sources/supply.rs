@@ -12,6 +12,8 @@ const fn grave(id: &'static str, text: &'static str, status: Status) -> Source {
 
 /// Supply volts.
 pub const SP_04: Source = plain("SP-04", "IEC 60038:2009 and EN 50160: nominal voltage ±10 %", Status::Memory);
+/// Supply voltage by the narrower range.
+pub const SUPPLY_RANGE_A: Source = plain("SP-11", "ANSI C84.1: range A, nominal voltage ±5 %", Status::Memory);
 /// Unbalance by negative sequence.
 pub const UB_02: Source =
     plain("UB-02", "IEC 61000-4-30: negative over positive sequence from three line volts", Status::Confirmed);

@@ -1,7 +1,7 @@
 //! The end of the document: findings, pictures, instruments, signatures, turns, and how to verify.
 
 use super::words::{grouped, instrument, when};
-use super::{Pages, photos, picture_name};
+use super::{Pages, picture_name};
 use commissioning::record::drive::Turn;
 use commissioning::record::{FindingState, Severity};
 use serde_json::{Value, json};
@@ -43,7 +43,8 @@ impl Pages<'_> {
 
     /// Every picture once, with the item it was taken for.
     pub(super) fn photo_list(&self) -> Vec<Value> {
-        photos(self.record)
+        self.record
+            .photos()
             .map(|(item, entry, photo)| {
                 let label = self.procedure.item(item).map_or_else(|| item.to_owned(), |(_, i)| i.label.clone());
                 let caption = if photo.caption.is_empty() { entry.value.shown() } else { photo.caption.clone() };

@@ -3,6 +3,7 @@
 use super::Pages;
 use super::verdicts::full;
 use super::words::{instrument_mark, of_entry, rows, when};
+use commissioning::plant::Recorded;
 use commissioning::procedure::{Item, Phase, Step};
 use commissioning::record::{Entry, EntryPlace, ReleaseRole, SettledOtherwise};
 use serde_json::{Value, json};
@@ -45,14 +46,14 @@ impl Pages<'_> {
     /// A step that anything was recorded at, or that applies; steps of options that are not fitted are left out.
     fn step(&self, step: &Step) -> Option<Value> {
         let entries = self.entries(step);
-        let otherwise = self.record.otherwise.iter().find(|o| o.step == step.id).map(|o| {
-            let (how, why) = &o.settled.value;
-            let how = match how {
-                SettledOtherwise::NotApplicable => "Does not apply",
-                SettledOtherwise::CouldNotBeDone => "Could not be done",
-            };
-            format!("{how}: {why} ({}, {})", o.settled.by_name, when(&o.settled))
-        });
+        let otherwise = self.record.otherwise.iter().find(|o| o.step == step.id).map(|o| settled(&o.settled));
+        let once: Vec<Value> = self
+            .record
+            .once_otherwise
+            .iter()
+            .filter(|o| o.step == step.id)
+            .map(|o| json!([settled(&o.settled), format!("taken back by {}, {}", o.ended.by_name, when(&o.ended))]))
+            .collect();
         let judged: Vec<Value> =
             self.file.verdicts.iter().filter(|j| j.step == step.id && !self.is_parameter_check(j)).map(full).collect();
         let remarks = self.remarks(&step.id);
@@ -63,7 +64,8 @@ impl Pages<'_> {
             .map(|c| json!({ "title": c.title, "svg": c.svg, "alt": c.words }))
             .collect();
         let applies = commissioning::procedure::applies(&step.when, &self.flags());
-        let empty = entries.is_empty() && otherwise.is_none() && judged.is_empty() && remarks.is_empty();
+        let empty =
+            entries.is_empty() && otherwise.is_none() && once.is_empty() && judged.is_empty() && remarks.is_empty();
         if empty && !applies {
             return None;
         }
@@ -77,6 +79,7 @@ impl Pages<'_> {
             "title": step.title,
             "isolation": self.isolation(&step.id),
             "otherwise": otherwise,
+            "once": once,
             "entries": entries,
             "judged": judged,
             "charts": charts,
@@ -131,6 +134,15 @@ impl Pages<'_> {
     fn flags(&self) -> std::collections::BTreeSet<String> {
         self.file.rebuild().map(|r| r.drive.flags()).unwrap_or_default()
     }
+}
+
+fn settled(settled: &Recorded<(SettledOtherwise, String)>) -> String {
+    let (how, why) = &settled.value;
+    let how = match how {
+        SettledOtherwise::NotApplicable => "Does not apply",
+        SettledOtherwise::CouldNotBeDone => "Could not be done",
+    };
+    format!("{how}: {why} ({}, {})", settled.by_name, when(settled))
 }
 
 fn entry_words(item: &Item, entry: &Entry) -> Value {

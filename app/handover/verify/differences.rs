@@ -33,7 +33,7 @@ pub(super) fn between(kept: &[Judged], today: &[Judged]) -> Vec<Difference> {
     };
     let changed = kept.iter().filter_map(|k| {
         let now = today.iter().find(|t| same(k, t));
-        (now.map(|n| &n.outcome) != Some(&k.outcome)).then(|| difference(k, Some(k), now))
+        (told(now) != told(Some(k))).then(|| difference(k, Some(k), now))
     });
     let new = today.iter().filter(|t| !kept.iter().any(|k| same(k, t))).map(|t| difference(t, None, Some(t)));
     changed.chain(new).collect()

@@ -11,7 +11,10 @@ use std::io::Read;
 use std::path::Path;
 
 /// Every migration, oldest first; its place in the list is the schema it leads to. Never edited once merged.
-pub(crate) const MIGRATIONS: &[&str] = &[include_str!("../../../migrations/0001_journal_and_lists.sql")];
+pub(crate) const MIGRATIONS: &[&str] = &[
+    include_str!("../../../migrations/0001_journal_and_lists.sql"),
+    include_str!("../../../migrations/0002_invitations_kept_and_sheets_by_person.sql"),
+];
 
 /// Marks a file as a store of ours: "ASLF".
 pub(crate) const APPLICATION: u32 = 0x4153_4C46;

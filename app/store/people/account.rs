@@ -1,6 +1,7 @@
 //! Who can sign, since when, and when they were last here.
 
 use super::attempts::{Attempts, Subject, counted};
+use super::invited::{self, CodeMade};
 use super::sign_in::person;
 use crate::answer::Answer;
 use crate::columns::moment_if_any;
@@ -23,6 +24,8 @@ pub struct AccountRow {
     pub signing_locked_until: Option<Timestamp>,
     /// Failed passwords at signing since the last right one.
     pub failed: u32,
+    /// One-time codes made for it, the latest first: each lets its holder set a new password and sign under this name.
+    pub codes: Vec<CodeMade>,
 }
 
 impl Store {
@@ -49,7 +52,8 @@ fn listed(connection: &Connection) -> Result<Vec<AccountRow>, Fault> {
     rows.into_iter()
         .map(|row| {
             let Attempts { failed, locked_until, .. } = counted(connection, &Subject::Signing(row.person.id))?;
-            Ok(AccountRow { failed, signing_locked_until: locked_until, ..row })
+            let codes = invited::of(connection, row.person.id)?;
+            Ok(AccountRow { failed, signing_locked_until: locked_until, codes, ..row })
         })
         .collect()
 }
@@ -61,5 +65,6 @@ fn account(row: &Row<'_>) -> rusqlite::Result<AccountRow> {
         last_sign_in: moment_if_any(row, "last_sign_in")?,
         signing_locked_until: None,
         failed: 0,
+        codes: Vec::new(),
     })
 }

@@ -1,9 +1,9 @@
 //! Invitations: a one-time code with which a person sets their own password, so that nobody else ever knows it.
 
 use super::hashing::token_hash;
-use super::password;
 use super::set_up_code::{plain, readable_code};
 use super::sign_in::{by_id, person};
+use super::{invited, password};
 use crate::acts::PerformFault;
 use crate::answer::Answer;
 use crate::fault::{Fault, ReadFault};
@@ -17,7 +17,10 @@ const VALID: Duration = Duration::days(7);
 
 impl Store {
     /// A fresh invitation for a person, in place of any before; valid once, for seven days.
-    pub fn invite(&self, person: PersonId, now: Timestamp) -> Answer<String, PerformFault> {
+    ///
+    /// That it was made, and `by` whom, is kept and shown to that person and to everyone at "Who can sign": whoever
+    /// holds the code can sign under that name. `None` is the program itself, at the server.
+    pub fn invite(&self, person: PersonId, by: Option<PersonId>, now: Timestamp) -> Answer<String, PerformFault> {
         self.writing().give(move |desk| {
             if by_id(&desk.connection, person)?.is_none() {
                 return Err(Fault::Broken("There is no such account here.".to_owned()));
@@ -33,6 +36,7 @@ impl Store {
                     ":code_hash": token_hash(&plain(&code)),
                     ":made": now.to_string(),
                 })?;
+            invited::made(&desk.connection, person, by, now)?;
             Ok(Ok(code))
         })
     }
@@ -41,8 +45,13 @@ impl Store {
     ///
     /// # Errors
     /// When it could not be kept.
-    pub fn invite_blocking(&self, person: PersonId, now: Timestamp) -> Result<String, PerformFault> {
-        self.invite(person, now).wait()
+    pub fn invite_blocking(
+        &self,
+        person: PersonId,
+        by: Option<PersonId>,
+        now: Timestamp,
+    ) -> Result<String, PerformFault> {
+        self.invite(person, by, now).wait()
     }
 
     /// Whom a code invites; `None` when it is unknown, used or too old.
@@ -85,11 +94,19 @@ fn redeem(store: &Store, hash: String, new: &str, now: Timestamp) -> Result<Pers
     Ok(person)
 }
 
-/// Removes an invitation; says whether it was still there.
-pub(crate) fn use_up(connection: &Connection, person: PersonId, code_hash: &str) -> Result<bool, Fault> {
+/// Removes an invitation and notes its use; says whether it was still there.
+pub(crate) fn use_up(
+    connection: &Connection,
+    person: PersonId,
+    code_hash: &str,
+    now: Timestamp,
+) -> Result<bool, Fault> {
     let removed = connection
         .prepare_cached("DELETE FROM invitations WHERE person = :person AND code_hash = :code_hash")?
         .execute(named_params! { ":person": person.to_string(), ":code_hash": code_hash })?;
+    if removed == 1 {
+        invited::redeemed(connection, person, now)?;
+    }
     Ok(removed == 1)
 }
 

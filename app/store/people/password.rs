@@ -77,7 +77,7 @@ pub(crate) fn set(
         .give(move |desk| {
             // In the same transaction: of two that come with one code, one finds it used.
             if let Some(code) = &invitation
-                && !super::invite::use_up(&desk.connection, person, code)?
+                && !super::invite::use_up(&desk.connection, person, code, now)?
             {
                 return Ok(Err(PasswordFault::Unknown));
             }

@@ -129,6 +129,35 @@ fn rowan_sees_the_open_work_that_is_his() {
 }
 
 #[test]
+fn who_created_a_drive_or_filled_in_a_sheet_finds_it_before_its_record_is_begun() {
+    let store = stage();
+    create(&store, 1, "P-1", "Pump");
+    let mine =
+        |who| -> Vec<String> { store.my_open_drives_blocking(who).unwrap().into_iter().map(|r| r.tag).collect() };
+    assert_eq!((mine(ROWAN), mine(TOVE), mine(MAREN)), (vec!["P-1".to_owned()], vec![], vec![]));
+    let (key, option) = commissioning::plant::fields::of(Sheet::Motor)
+        .iter()
+        .chain(commissioning::plant::fields::in_columns(Sheet::Motor))
+        .find_map(|f| match f.kind {
+            FieldKind::Choice(options) => options.first().map(|(k, _)| (f.key, *k)),
+            _ => None,
+        })
+        .expect("the motor sheet has a choice");
+    let change = commissioning::journal::Change {
+        place: (0, key.to_owned()),
+        text: option.to_owned(),
+        unit: String::new(),
+        instrument: None,
+        photo: None,
+        seen: Vec::new(),
+    };
+    let fill =
+        Deed::SetDriveFields { drive: drive(1), sheet: Sheet::Motor, changes: vec![change], reason: String::new() };
+    done(&store, TOVE, fill, at(5));
+    assert_eq!((mine(TOVE), mine(MAREN)), (vec!["P-1".to_owned()], vec![]));
+}
+
+#[test]
 fn a_supply_filled_in_at_the_site_reaches_the_rows_of_its_drives() {
     let store = stage();
     create(&store, 1, "P-1", "Pump");

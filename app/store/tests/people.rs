@@ -189,8 +189,8 @@ fn guessing_the_set_up_code_costs_time() {
 #[test]
 fn maren_sets_her_own_password_by_invitation_once() {
     let store = stage();
-    let first = store.invite_blocking(MAREN, at(5)).unwrap();
-    let code = store.invite_blocking(MAREN, at(6)).unwrap();
+    let first = store.invite_blocking(MAREN, Some(IDA), at(5)).unwrap();
+    let code = store.invite_blocking(MAREN, Some(IDA), at(6)).unwrap();
     assert_eq!(store.invited_blocking(&first, at(7)).unwrap(), None);
     assert_eq!(store.invited_blocking(&code, at(7)).unwrap().unwrap().id, MAREN);
     assert_eq!(store.invited_blocking(&code, at(6 + 7 * 24 * 60)).unwrap(), None);
@@ -198,4 +198,23 @@ fn maren_sets_her_own_password_by_invitation_once() {
     assert_eq!(store.redeem_blocking(&code, GOOD, at(8)).unwrap(), MAREN);
     assert_eq!(store.redeem_blocking(&code, "another long one here", at(9)), Err(PasswordFault::Unknown));
     assert!(matches!(store.sign_in_blocking("maren", "10.0.0.7", GOOD, at(9)).unwrap(), SignIn::Right(_)));
+}
+
+#[test]
+fn every_code_made_for_somebody_is_kept_with_who_made_it_and_whether_it_was_used() {
+    let store = with_password();
+    let of = |who| store.accounts_blocking().unwrap().into_iter().find(|a| a.person.id == who).unwrap().codes;
+    assert!(of(ROWAN).is_empty());
+    store.invite_blocking(ROWAN, Some(IDA), at(6)).unwrap();
+    let code = store.invite_blocking(ROWAN, None, at(7)).unwrap();
+    assert_eq!(store.redeem_blocking(&code, "short", at(8)), Err(PasswordFault::TooShort));
+    assert_eq!(of(ROWAN)[0].redeemed, None, "a refused password uses nothing up");
+    store.redeem_blocking(&code, "nine herons on a wall", at(9)).unwrap();
+    let codes = of(ROWAN);
+    let said: Vec<_> = codes.iter().map(|c| (c.made_by.as_deref(), c.made, c.had_password, c.redeemed)).collect();
+    assert_eq!(said, [(None, at(7), true, Some(at(9))), (Some("Ida Berg"), at(6), true, None)]);
+    assert_eq!(store.codes_made_blocking(ROWAN).unwrap(), codes);
+    assert!(of(IDA).is_empty());
+    store.invite_blocking(MAREN, Some(IDA), at(10)).unwrap();
+    assert!(!of(MAREN)[0].had_password, "the first password takes nobody's place");
 }

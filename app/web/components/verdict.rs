@@ -41,7 +41,7 @@ pub fn check_title(name: &str) -> &str {
     commissioning::judge::catalogue::title(name)
 }
 
-/// One check. `open` shows the working unfolded, as review and package do.
+/// One check. `open` shows the working unfolded.
 #[must_use]
 pub fn verdict_panel(title: &str, judged: &Judged, open: bool) -> Markup {
     let outcome = &judged.outcome;
@@ -51,7 +51,7 @@ pub fn verdict_panel(title: &str, judged: &Judged, open: bool) -> Markup {
             p.summary { (outcome.summary) }
             @if let Some(rule) = &outcome.rule { figure.rule { (drawn(drawing::limit_rule(rule, drawing::Style::Screen))) } }
             @if !outcome.limit.is_empty() { p.limit { span.quiet { "limit " } (outcome.limit) } }
-            @if !outcome.needed.is_empty() { p.limit { span.quiet { "with this instrument " } (outcome.needed) } }
+            @if !outcome.needed.is_empty() { p.limit { (outcome.needed) } }
             @if !outcome.figures.is_empty() {
                 dl.figures { @for f in &outcome.figures { div { dt { (f.name) } dd { (f.value) @if !f.unit.is_empty() { " " (f.unit) } } } } }
             }
@@ -92,14 +92,24 @@ fn line(line: &Line) -> Markup {
     }
 }
 
-/// Several checks, the worst first; those that wait for inputs stand folded at the end.
+/// Several checks, the worst first, their working folded; those that wait for inputs stand folded at the end.
 #[must_use]
-pub fn verdict_panels(judged: &[Judged], open: bool) -> Markup {
+pub fn verdict_panels(judged: &[Judged]) -> Markup {
+    panels(judged, |_| false)
+}
+
+/// As a reviewer reads them: the working of whatever is not plainly within lies open, of all of them when `all` is asked for.
+#[must_use]
+pub fn verdict_panels_to_review(judged: &[Judged], all: bool) -> Markup {
+    panels(judged, |verdict| all || verdict != Verdict::Within)
+}
+
+fn panels(judged: &[Judged], open: impl Fn(Verdict) -> bool) -> Markup {
     let mut said: Vec<&Judged> = judged.iter().filter(|j| j.outcome.verdict != Verdict::NotAssessed).collect();
     said.sort_by_key(|j| std::cmp::Reverse(j.outcome.verdict));
     let waiting: Vec<&Judged> = judged.iter().filter(|j| j.outcome.verdict == Verdict::NotAssessed).collect();
     html! {
-        @for j in &said { (verdict_panel(check_title(&j.outcome.check), j, open)) }
+        @for j in &said { (verdict_panel(check_title(&j.outcome.check), j, open(j.outcome.verdict))) }
         @if !waiting.is_empty() {
             details.waiting open[said.is_empty()] {
                 summary { (verdict_mark(Verdict::NotAssessed)) span.quiet { " " (waiting.len()) @if waiting.len() == 1 { " check waits" } @else { " checks wait" } " for inputs" } }

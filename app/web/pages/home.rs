@@ -1,6 +1,7 @@
 //! The start page: my drives in work, what waits for review, the sites.
 
 use crate::components::{Page, empty, link_button, main_link, search_box, small_plate};
+use crate::pages::people::codes;
 use crate::visitor::Signed;
 use crate::{App, PageError, links};
 use axum::extract::State;
@@ -16,9 +17,11 @@ pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, Page
     let mine = app.store.my_open_drives(signed.person.id).await?;
     let sites = app.store.sites().await?;
     let waiting = if signed.visitor.is_any(&[Role::Supervisor]) { Some(app.store.queue(1).await?.total) } else { None };
+    let codes = codes::to_tell(&app.store.codes_made(signed.person.id).await?, app.now());
     let low = app.store.space()?.low;
     let body = html! {
         h1 { "Start" }
+        @for words in &codes { p.notice role="alert" { (words) } }
         (search_box(""))
         @if app.store.is_read_only() { p.notice role="alert" { "The server's disk refuses to write: nothing can be recorded at present." } }
         @if low { p.notice role="alert" { "The server's disk is nearly full. Tell whoever keeps it." } }

@@ -1,5 +1,6 @@
 //! People: who has an account, what they may be, who can sign.
 
+pub mod codes;
 pub mod create;
 pub mod edit;
 pub mod invite;

@@ -153,3 +153,63 @@ async fn an_instrument_comes_with_its_accuracy_and_bad_input_comes_back() {
         refused.text.contains("e-due") && refused.text.contains("31.3.2027") && refused.text.contains("value=\"1,5\"")
     );
 }
+
+/// Signs in through the page and gives the kind of session and where the answer leads.
+async fn sign_in(world: &World, pairs: &[(&str, &str)]) -> (store::SessionKind, String) {
+    let answer = world.post("", "/sign-in", pairs).await;
+    assert_eq!(answer.status, StatusCode::SEE_OTHER, "{}", answer.text);
+    let cookie = answer.headers.get("set-cookie").expect("a session").to_str().expect("ascii").to_owned();
+    let token = cookie.trim_start_matches("asleft-session=").split(';').next().expect("a token").to_owned();
+    let session = world.app.store.session(&token, world.app.now()).await.expect("reads").expect("open");
+    (session.kind, answer.location().to_owned())
+}
+
+#[tokio::test]
+async fn a_session_is_short_unless_somebody_says_that_the_tablet_is_theirs() {
+    let world = World::new().await;
+    let ines = world.person("ines").await;
+    world.app.store.set_password(ines, PASSWORD, world.app.now()).await.expect("a password");
+    assert!(world.get("", "/sign-in").await.text.contains("This is my own tablet"));
+    let name = [("login", "ines"), ("password", PASSWORD)];
+    assert_eq!(sign_in(&world, &name).await.0, store::SessionKind::Strange);
+    let own = [name.as_slice(), &[("own", "yes")]].concat();
+    assert_eq!(sign_in(&world, &own).await.0, store::SessionKind::Enrolled);
+}
+
+#[tokio::test]
+async fn nobody_makes_a_code_for_somebody_elses_account_unseen() {
+    let mut world = World::new().await;
+    let ines = world.person("ines").await;
+    world.app.store.set_password(ines, PASSWORD, world.app.now()).await.expect("a password");
+    world.open("ines", ines).await;
+    assert!(!world.get("ines", "/").await.text.contains("one-time code"));
+    let page = world.post("ada", "/people/ines/invitation", &[]).await.text;
+    let code =
+        page.split_once("<p class=\"value code\">").and_then(|(_, rest)| rest.split('<').next()).expect("a code");
+    let told = world.get("ines", "/").await.text;
+    assert!(told.contains("A one-time code for your account was made by Ada Quist"), "{told}");
+    assert!(world.get("rolf", "/signers").await.text.contains("made by Ada Quist"));
+
+    let other = "six swans under the bridge";
+    world.post("", "/invitation", &[("code", code), ("new", other), ("again", other)]).await;
+    let to = sign_in(&world, &[("login", "ines"), ("password", other), ("back", "/sites")]).await.1;
+    assert_eq!(to, "/", "the start page comes first while there is something to tell");
+    world.open("ines", ines).await;
+    let told = world.get("ines", "/").await.text;
+    assert!(told.contains("Your password was replaced") && told.contains("Ada Quist"), "{told}");
+    super::every_page::is_sound("/", &told);
+    let signers = world.get("rolf", "/signers").await.text;
+    assert!(signers.contains("password set with it"), "{signers}");
+    super::every_page::is_sound("/signers", &signers);
+    assert!(world.get("ada", "/people/ines").await.text.contains("password set with it"));
+}
+
+#[tokio::test]
+async fn an_engineer_keeps_instruments_and_a_reader_does_not() {
+    let world = World::new().await;
+    let form = [("mark", "MM-1"), ("description", "Multimeter"), ("serial", "12"), ("due", ""), ("active", "yes")];
+    assert!(world.get("ines", "/instruments").await.text.contains("Add an instrument"));
+    assert_eq!(world.post("ines", "/new-instrument", &form).await.status, StatusCode::SEE_OTHER);
+    assert_eq!(world.post("rolf", "/new-instrument", &form).await.status, StatusCode::FORBIDDEN);
+    assert!(!world.get("rolf", "/instruments").await.text.contains("Add an instrument"));
+}

@@ -87,3 +87,43 @@ async fn a_refused_picture_says_why_and_one_received_goes_along() {
     }
     assert_eq!(world.get("ines", DRIVE).await.status, StatusCode::OK);
 }
+
+#[tokio::test]
+async fn kind_and_size_of_a_picture_carried_along_are_those_of_what_is_kept() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    begin(&world, "ines").await;
+    let key = item(&world).await;
+    let bytes = small_picture();
+    let kept = world.app.store.keep_photo(bytes.clone(), super::world::noon()).await.expect("kept");
+    let lied = [
+        (format!("{key}.0"), "lock".to_owned()),
+        (format!("{key}.0.kept"), format!("{} text/html 5", kept.hash)),
+        (format!("{key}.1.kept"), format!("{} text/html 5", kept.hash)),
+    ];
+    assert_eq!(post_parts(&world, "ines", PATH, &lied, &[], b"").await.status, StatusCode::SEE_OTHER);
+    let now = view(&world).await;
+    let record = now.drive.record.as_ref().expect("begun");
+    let photos: Vec<_> =
+        record.entries.values().flat_map(|s| s.standing()).filter_map(|r| r.value.photo.as_ref()).collect();
+    assert_eq!(photos.len(), 1);
+    assert_eq!((photos[0].media.as_str(), photos[0].bytes), ("image/jpeg", bytes.len() as u64));
+}
+
+#[tokio::test]
+async fn pictures_wait_for_their_turn_before_anything_of_them_is_loaded() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    begin(&world, "ines").await;
+    let key = item(&world).await;
+    let (pairs, file, bytes) = ([(format!("{key}.0"), "lock".to_owned())], [format!("{key}.0.file")], small_picture());
+    let missing = format!("/photos/{}", "0".repeat(64));
+    let wait = std::time::Duration::from_millis(300);
+    let turns = crate::pictures::every_turn().await;
+    assert!(tokio::time::timeout(wait, world.get("rolf", &missing)).await.is_err(), "it looked before its turn");
+    let sent = post_parts(&world, "ines", PATH, &pairs, &file, &bytes);
+    assert!(tokio::time::timeout(wait, sent).await.is_err(), "it unpacked before its turn");
+    drop(turns);
+    assert_eq!(world.get("rolf", &missing).await.status, StatusCode::NOT_FOUND);
+    assert_eq!(post_parts(&world, "ines", PATH, &pairs, &file, &bytes).await.status, StatusCode::SEE_OTHER);
+}

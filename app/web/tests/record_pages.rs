@@ -168,3 +168,40 @@ async fn the_board_finds_by_text_and_by_where_a_record_stands() {
     let board = world.get("rolf", "/sites/larch-ferry?status=in-progress").await.text;
     assert!(board.contains("FN-204") && board.contains("in progress"));
 }
+
+#[tokio::test]
+async fn the_report_folds_what_is_within_and_opens_all_of_it_on_demand() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    fill_sheets(&world, "ines").await;
+    begin(&world, "ines").await;
+    let within = |page: &str| -> (usize, usize) {
+        let panels = page.split("<section class=\"verdict within\">").skip(1);
+        let first: Vec<&str> = panels.filter_map(|p| p.split("</section>").next()).collect();
+        let with = |mark: &str| first.iter().filter(|p| p.contains(mark)).count();
+        (with("<details class=\"working\">"), with("<details class=\"working\" open>"))
+    };
+    let folded = world.get("tor", &format!("{DRIVE}/record")).await.text;
+    let (closed, open) = within(&folded);
+    assert!(closed > 0 && open == 0, "{closed} closed, {open} open");
+    assert!(folded.contains("/record?working=all"));
+    let full = world.get("tor", &format!("{DRIVE}/record?working=all")).await.text;
+    assert_eq!(within(&full), (0, closed));
+    assert!(!full.contains("<details class=\"working\">"), "every working lies open");
+    is_sound("/record", &full);
+}
+
+#[tokio::test]
+async fn the_drive_page_counts_as_the_board_does() {
+    let mut world = World::new().await;
+    prepare(&mut world).await;
+    fill_sheets(&world, "ines").await;
+    begin(&world, "ines").await;
+    let now = view(&world).await;
+    let row = world.app.store.board(now.site.id, store::BoardFilter::default()).await.expect("reads").rows.remove(0);
+    let all = commissioning::judge::Counts::of(&commissioning::judge::all(&now.view()));
+    assert!(row.counts.not_assessed < all.not_assessed, "most checks wait for steps that nobody reached");
+    let said = |counts| crate::components::counts(&crate::verdicts::numbers(counts)).into_string();
+    let page = world.get("ines", DRIVE).await.text;
+    assert!(page.contains(&said(&row.counts)) && !page.contains(&said(&all)), "{page}");
+}

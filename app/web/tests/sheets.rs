@@ -117,3 +117,18 @@ async fn verdicts_follow_what_is_typed_and_nothing_is_recorded() {
     );
     assert!(!world.get("ines", MOTOR).await.text.contains("value=\"27,5\""));
 }
+
+#[tokio::test]
+async fn a_supervisor_fills_in_sheets_until_the_record_is_begun() {
+    let world = World::new().await;
+    let path = "/sites/larch-ferry/FN-204/motor";
+    let locked = "<fieldset class=\"plain\" disabled>";
+    let kept = world.post("tor", path, &[("motor.0.volts", "400"), ("motor.0.volts.unit", "V")]).await;
+    assert_eq!(kept.status, StatusCode::SEE_OTHER, "{}", kept.text);
+    assert!(!world.get("tor", path).await.text.contains(locked));
+    assert!(world.get("tor", "/").await.text.contains("FN-204"), "what is begun by hand stands on the start page");
+    assert!(world.get("rolf", path).await.text.contains(locked));
+    super::job::begin(&world, "ines").await;
+    assert!(world.get("tor", path).await.text.contains(locked));
+    assert!(!world.get("ines", path).await.text.contains(locked));
+}

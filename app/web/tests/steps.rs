@@ -134,3 +134,26 @@ async fn a_reader_sees_a_step_and_cannot_fill_it_in() {
     assert!(page.text.contains("<fieldset class=\"plain\" disabled>") && !page.text.contains("Record and go on"));
     assert_eq!(world.post("rolf", SUPPLY, &[]).await.status, StatusCode::FORBIDDEN);
 }
+
+#[tokio::test]
+async fn a_form_with_settings_and_entries_is_recorded_whole_or_not_at_all() {
+    let world = begun().await;
+    let path = format!("{DRIVE}/steps/set-ramps");
+    let page = world.get("ines", &path).await.text;
+    let span = names(&page).into_iter().find(|n| n.ends_with(".intended")).expect("a setting");
+    let unit = format!("{span}.unit");
+    let settings = async || view(&world).await.drive.record.as_ref().expect("begun").parameters.len();
+    let mut pairs = vec![(span.as_str(), "50"), (unit.as_str(), "Hz"), ("ramps-keyed.0", "perhaps")];
+    let refused = world.post("ines", &path, &pairs).await;
+    assert_eq!(refused.status, StatusCode::UNPROCESSABLE_ENTITY, "{}", refused.text);
+    assert!(refused.text.contains("Nothing was recorded yet"));
+    assert_eq!(settings().await, 0, "what the page says is so");
+    let act = uuid::Uuid::now_v7().to_string();
+    pairs[2].1 = "yes";
+    pairs.push(("act", act.as_str()));
+    for _ in 0..2 {
+        let kept = world.post("ines", &path, &pairs).await;
+        assert_eq!(kept.status, StatusCode::SEE_OTHER, "a form sent twice is one: {}", kept.text);
+        assert_eq!(settings().await, 1);
+    }
+}

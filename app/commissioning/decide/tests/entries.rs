@@ -22,6 +22,19 @@ fn what_is_unchanged_makes_no_event_and_is_never_stale() {
     assert!(world.record_changes(ERIN, "prove-dead", empty, "").unwrap().is_empty());
 }
 
+/// A prefix typed counts in ohms, so that the form that comes back with another unit picked changes nothing.
+#[test]
+fn half_a_megohm_typed_with_a_prefix_is_never_five_hundred_gigohm() {
+    let mut world = World::begun();
+    world.enter(ERIN, "insulation", &[("ir-60s", "500k")]);
+    let place = EntryPlace::new("ir-60s");
+    let value = world.record().entry(&place).unwrap().value.value.clone();
+    assert_eq!((value.number(), value.shown().as_str()), (Some(5e5), "500 kΩ"), "the item's unit is MΩ");
+    let mut again = world.change(place, "500k");
+    again.unit = "GΩ".into();
+    assert!(world.record_changes(ERIN, "insulation", vec![again], "").unwrap().is_empty());
+}
+
 #[test]
 fn a_stale_form_gets_every_conflict_with_who_and_what() {
     let mut world = World::begun();

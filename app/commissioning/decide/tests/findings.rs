@@ -74,3 +74,60 @@ fn a_finding_is_settled_or_accepted_once_by_name() {
     };
     assert_eq!((reason.as_str(), by_name.as_str()), ("Ordered; harmless.", "Sune Rowan"));
 }
+
+/// What guards start-up is not talked away: leaving it out is a finding that keeps the hold point shut.
+#[test]
+fn a_step_that_guards_start_up_is_not_left_out_in_silence() {
+    let mut world = World::begun();
+    let events = world.does(ERIN, settle("insulation", SettledOtherwise::NotApplicable, "New motor."));
+    let Fact::FindingRaised { severity, text, step, .. } = &events[1].fact else { panic!("{events:?}") };
+    assert_eq!((*severity, step.as_deref()), (Severity::StopsStartUp, Some("insulation")));
+    assert!(text.contains("guards start-up") && text.contains("New motor."), "{text}");
+    let waits = |world: &World| {
+        let agenda = agenda::of(&world.view());
+        let hold = agenda.phases.iter().find(|p| p.id == "turn").unwrap().hold.clone().unwrap();
+        hold.unmet.iter().any(|u| u.contains("stops start-up"))
+    };
+    assert!(waits(&world));
+    let finding = world.record().findings.values().next().unwrap().id;
+    world.does(SUNE, Deed::AcceptFinding { drive: DRIVE, finding, reason: "Tested at the works.".into() });
+    assert!(!waits(&world));
+}
+
+/// Tablets choose the identifiers of acts and of findings raised by hand: none of them may stand in for one of these.
+#[test]
+fn a_finding_of_the_program_cannot_be_swallowed_by_one_raised_before() {
+    use crate::decide::writer::finding_about;
+    let mut world = World::begun();
+    for (what, step) in [("could-not-be-done", "insulation"), ("out-of-order", "terminals")] {
+        // The next act raises by hand; the one after it is the one to be caught.
+        let act = crate::ActId(Uuid::from_u128(world.acts + 2)).to_string();
+        let finding = finding_about(&[what, &act, step, "0"]);
+        let severity = Severity::Information;
+        world.does(ERIN, Deed::RaiseFinding { drive: DRIVE, finding, severity, text: "Nothing.".into(), step: None });
+        let before = world.record().findings.len();
+        let events = match what {
+            "out-of-order" => world.enter(ERIN, step, &[("terminals-tight", "yes")]),
+            _ => world.does(ERIN, settle(step, SettledOtherwise::CouldNotBeDone, "No tester here.")),
+        };
+        let raised = events.iter().filter(|e| matches!(e.fact, Fact::FindingRaised { .. })).count();
+        assert!(raised > 0);
+        assert_eq!(world.record().findings.len(), before + raised, "{what}: every one of them is kept");
+    }
+}
+
+#[test]
+fn what_is_done_out_of_order_again_is_found_again_once_the_first_is_settled() {
+    let mut world = World::begun();
+    let open = |world: &World| world.record().findings.values().filter(|f| f.is_open()).count();
+    world.enter(ERIN, "terminals", &[("terminals-tight", "yes")]);
+    assert_eq!(open(&world), 2, "before its hold point, and not isolated");
+    let ids: Vec<FindingId> = world.record().findings.keys().copied().collect();
+    world.does(ERIN, Deed::SettleFinding { drive: DRIVE, finding: ids[0], how: "Done again.".into() });
+    let photo =
+        crate::record::Photo { hash: "ab".repeat(32), media: "image/jpeg".into(), bytes: 9, caption: String::new() };
+    let mut picture = world.change(crate::record::EntryPlace::new("terminal-photo"), "Terminals");
+    picture.photo = Some(photo);
+    world.record_changes(ERIN, "terminals", vec![picture], "").unwrap();
+    assert_eq!((open(&world), world.record().findings.len()), (2, 3), "the open one is not doubled");
+}

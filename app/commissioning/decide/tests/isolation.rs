@@ -1,9 +1,9 @@
 //! Isolation as a state, order, and directions that an exchange of leads makes void.
 
 use crate::agenda::{self, StepState};
-use crate::journal::{Event, Fact};
+use crate::journal::{Change, Deed, Event, Fact};
 use crate::plant::Sheet;
-use crate::record::{EntryPlace, FindingState, Severity};
+use crate::record::{EntryPlace, FindingState, ParameterColumn, ParameterPlace, Severity};
 use crate::world::*;
 
 fn has(events: &[Event], is: impl Fn(&Fact) -> bool) -> usize {
@@ -21,6 +21,19 @@ fn isolation_comes_into_force_when_everything_asked_for_is_there() {
     let events = world.enter(ERIN, "lift", &[("isolation-removed", "yes")]);
     assert_eq!(has(&events, |f| matches!(f, Fact::IsolationLifted { .. })), 1);
     assert!(!world.record().isolated());
+}
+
+/// A live bus, ticked off as dead, keeps isolation out of force and stops start-up until it is settled.
+#[test]
+fn a_live_bus_keeps_isolation_out_of_force() {
+    let mut world = World::begun();
+    let events = world.enter(ERIN, "prove-dead", &[("tester-proved", "yes"), ("bus-after-waiting", "325")]);
+    assert_eq!(has(&events, |f| matches!(f, Fact::IsolationEntered { .. })), 0);
+    assert_eq!(has(&events, |f| matches!(f, Fact::FindingRaised { severity: Severity::StopsStartUp, .. })), 1);
+    assert!(!world.record().isolated());
+    let again = vec![world.change(EntryPlace::new("bus-after-waiting"), "3")];
+    world.record_changes(ERIN, "prove-dead", again, "isolator was still closed").unwrap();
+    assert!(world.record().isolated(), "measured again and dead");
 }
 
 /// procedure.md: an entry that can be made again; what proved the first stretch proves nothing for the second.
@@ -96,4 +109,83 @@ fn directions_seen_before_an_exchange_count_as_not_observed() {
     assert_eq!((step.state.clone(), step.missing.as_slice()), (StepState::Begun, &["Direction".to_owned()][..]));
     world.enter(ERIN, "direction", &[("direction-seen", "counter")]);
     assert!(world.record().observed(&seen).is_some());
+}
+
+/// The shaft may turn the right way after the exchange as it did before: the same again is a new observation.
+#[test]
+fn a_direction_seen_again_after_an_exchange_counts_with_the_same_value() {
+    let mut world = World::complete();
+    world.set_field(ERIN, Sheet::Drive, "bypass", "yes", "").unwrap();
+    world.enter(ERIN, "exchange", &[("exchange-needed", "done")]);
+    let events = world.enter(ERIN, "direction", &[("direction-seen", "clockwise")]);
+    assert_eq!(has(&events, |f| matches!(f, Fact::EntryMade { .. })), 1, "no reason asked, nothing called unchanged");
+    let seen = EntryPlace::new("direction-seen");
+    assert!(world.record().observed(&seen).is_some());
+    assert_eq!(agenda::of(&world.view()).step("direction").unwrap().1.state, StepState::Settled);
+    assert!(world.enter(ERIN, "direction", &[("direction-seen", "clockwise")]).is_empty(), "now it is the same");
+}
+
+fn set_sequence(world: &mut World, column: ParameterColumn, text: &str) -> Vec<Event> {
+    let place = ParameterPlace { function: "output-phase-order".into(), column };
+    let seen = world.record().parameters.get(&place).map(|s| s.seen()).unwrap_or_default();
+    let change = Change { place, text: text.into(), unit: String::new(), instrument: None, photo: None, seen };
+    world.does(ERIN, Deed::SetParameters { drive: DRIVE, changes: vec![change], reason: String::new() })
+}
+
+#[test]
+fn a_changed_output_sequence_makes_directions_void_and_the_same_one_does_not() {
+    use ParameterColumn::{AsFound, AsLeft, Intended};
+    let voided = |events: &[Event]| has(events, |f| matches!(f, Fact::DirectionsVoided { .. })) == 1;
+    let seen = EntryPlace::new("direction-seen");
+    let mut world = World::begun();
+    assert!(!voided(&set_sequence(&mut world, Intended, "u-w-v")), "nothing was seen yet");
+    let mut world = World::complete();
+    assert!(!voided(&set_sequence(&mut world, Intended, "u-v-w")), "what a drive gives anyhow");
+    assert!(!voided(&set_sequence(&mut world, AsFound, "u-w-v")), "what was found is not in force");
+    assert!(voided(&set_sequence(&mut world, AsLeft, "u-w-v")) && world.record().observed(&seen).is_none());
+    world.enter(ERIN, "direction", &[("direction-seen", "clockwise")]);
+    assert!(!voided(&set_sequence(&mut world, Intended, "u-w-v")), "as left counts, and it stays");
+    assert!(voided(&set_sequence(&mut world, AsLeft, "u-v-w")));
+    // Where the exchange says that it was made by the setting, writing the setting down changes nothing more.
+    world.set_field(ERIN, Sheet::Drive, "bypass", "yes", "").unwrap();
+    assert!(voided(&world.enter(ERIN, "exchange", &[("exchange-needed", "by-setting")])));
+    world.enter(ERIN, "direction", &[("direction-seen", "clockwise")]);
+    assert!(!voided(&set_sequence(&mut world, AsLeft, "u-w-v")) && world.record().observed(&seen).is_some());
+    assert!(voided(&set_sequence(&mut world, AsLeft, "u-v-w")), "turned back, it is not what was seen");
+}
+
+/// The built-in procedure, with a record begun.
+fn with_built_in() -> World {
+    let mut world = World::new();
+    let procedure = Box::new(crate::procedure::built_in::built_in().unwrap());
+    world.attempt(None, Deed::LoadProcedure { procedure }).unwrap();
+    world.does(ERIN, Deed::BeginRecord { drive: DRIVE });
+    world
+}
+
+#[test]
+fn the_encoder_sign_is_judged_against_a_direction_and_falls_with_it() {
+    let mut world = with_built_in();
+    world.set_field(ERIN, Sheet::Drive, "encoder", "yes", "").unwrap();
+    world.enter(ERIN, "encoder-sign", &[("encoder-sign", "agrees")]);
+    let sign = EntryPlace::new("encoder-sign");
+    assert!(world.record().observed(&sign).is_some());
+    world.enter(ERIN, "exchange-leads", &[("leads-exchanged", "encoder-channels")]);
+    assert!(world.record().observed(&sign).is_none(), "the channels were exchanged since");
+    world.enter(ERIN, "encoder-sign", &[("encoder-sign", "agrees")]);
+    assert!(world.record().observed(&sign).is_some());
+}
+
+#[test]
+fn isolation_for_an_exchange_comes_into_force_only_with_its_reading() {
+    let mut world = with_built_in();
+    let step = |world: &World| agenda::of(&world.view()).step("isolate-for-exchange").unwrap().1.clone();
+    world.enter(ERIN, "isolate-for-exchange", &[("exchange-isolation", "isolated")]);
+    assert!(!world.record().isolated(), "the bus was not measured");
+    assert_eq!((step(&world).state, step(&world).missing), (StepState::Begun, vec!["DC+ to DC− after waiting".into()]));
+    world.enter(ERIN, "isolate-for-exchange", &[("exchange-bus-after-waiting", "3")]);
+    assert!(world.record().isolated() && step(&world).state == StepState::Settled);
+    let mut world = with_built_in();
+    world.enter(ERIN, "isolate-for-exchange", &[("exchange-isolation", "not-needed")]);
+    assert!(!world.record().isolated() && step(&world).state == StepState::Settled);
 }

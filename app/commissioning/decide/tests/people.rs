@@ -163,3 +163,57 @@ impl crate::procedure::Procedure {
         self
     }
 }
+
+fn row(
+    percent: &str,
+    digits: &str,
+    resolution: &str,
+    of_full_scale: &str,
+    full_scale: &str,
+    unit: &str,
+) -> AccuracyRow {
+    AccuracyRow {
+        kind: Kind::Resistance,
+        unit: unit.into(),
+        percent_of_reading: percent.into(),
+        digits: digits.into(),
+        resolution: resolution.into(),
+        percent_of_full_scale: of_full_scale.into(),
+        full_scale: full_scale.into(),
+    }
+}
+
+/// A row that amounts to nothing would make every reading exact; one quantity may have a row for each range.
+#[test]
+fn an_accuracy_amounts_to_something_and_stands_once_for_a_range() {
+    let mut world = World::new();
+    let mut keep = |accuracy: &[AccuracyRow]| {
+        let tester = Instrument {
+            id: InstrumentId(Uuid::from_u128(0x17)),
+            mark: "IT-07".into(),
+            description: "Insulation tester".into(),
+            serial: "4471".into(),
+            due: "2027-03-31".into(),
+            accuracy: accuracy.to_vec(),
+            active: true,
+        };
+        world.attempt(Some(ADA), Deed::KeepInstrument { instrument: tester, seen: Vec::new() })
+    };
+    for (wrong, field) in [
+        (row("", "", "", "", "", "Ω"), "accuracy.0.percent_of_reading"),
+        (row("0", "0,0", "0.1", "0", "1000", "Ω"), "accuracy.0.percent_of_reading"),
+        (row("", "2", "", "", "", "Ω"), "accuracy.0.resolution"),
+        (row("1.5", "2", "0", "", "", "Ω"), "accuracy.0.resolution"),
+        (row("", "", "", "1", "", "Ω"), "accuracy.0.full_scale"),
+        (row("1.5", "", "", "1", "0", "Ω"), "accuracy.0.full_scale"),
+    ] {
+        assert_eq!(fields(keep(&[wrong])), [field]);
+    }
+    let low = row("2", "2", "0.01", "", "20", "Ω");
+    for twice in [row("3", "", "", "", "20,0", "Ω"), row("3", "", "", "", "20000", "mΩ")] {
+        assert_eq!(fields(keep(&[low.clone(), twice])), ["accuracy.1.kind"]);
+    }
+    let open = row("3", "", "", "", "", "MΩ");
+    assert_eq!(fields(keep(&[open.clone(), low.clone(), open.clone()])), ["accuracy.2.kind"]);
+    assert_eq!(keep(&[open, low, row("3", "3", "1", "", "200", "MΩ")]).unwrap().len(), 1);
+}

@@ -113,7 +113,7 @@ fn what_needs_a_choice_blocks_the_signature_until_someone_chooses() {
     let mut world = World::complete();
     let place = EntryPlace::new("ir-60s");
     let mut entry = world.record().entry(&place).unwrap().value.clone();
-    "790".clone_into(&mut entry.value.text);
+    entry.value = crate::Typed::quantity("790", "MΩ", engineering::Kind::Resistance).unwrap();
     let first = world.chains.values().flatten().map(|s| s.event().unwrap());
     let first: Vec<Event> =
         first.filter(|e| matches!(&e.fact, Fact::EntryMade { place: p, .. } if *p == place)).collect();

@@ -23,7 +23,7 @@ pub const FIELDS: &[Field] = &[
     choice(CABLE, "metal", "conductor metal", METALS, ""),
     choice(CABLE, "build", "conductor build", &[("class-2", "stranded (class 2)"), ("class-5", "flexible (class 5)")], "IEC 60228."),
     quantity(CABLE, "rated-volts", "rated volts of the cable", (Voltage, "V"), (100.0, 50000.0), "Between conductors, as printed on it."),
-    quantity(CABLE, "ampacity", "current it carries here", (Current, "A"), (0.5, 1e4), "After laying and temperature, from the design."),
+    quantity(CABLE, "ampacity", "current it carries here", (Current, "A"), (0.5, 1e4), "After laying and temperature, from the design. No check uses it."),
     quantity(CABLE, "conductor-temperature", "conductor temperature at load", (Temperature, "°C"), (-40.0, 180.0), "For the voltage drop. Left empty, the usual one is assumed and said so."),
     quantity(CABLE, "reactance-per-km", "reactance of one kilometre", (Resistance, "Ω"), (0.01, 2.0), "From the cable's sheet, often near 0.08 Ω."),
     quantity(CABLE, "drop-limit", "voltage drop allowed", (Percent, "%"), (0.001, 0.2), "By the design, when it gives one."),

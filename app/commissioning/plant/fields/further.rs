@@ -44,8 +44,8 @@ pub const FIELDS: &[Field] = &[
     quantity(SPECIFIED, "joint-resistance-limit", "largest joint resistance", (Resistance, "µΩ"), (1e-7, 1.0), "By the maker of the joint."),
     quantity(SPECIFIED, "pe-resistance-limit", "largest protective-conductor resistance", (Resistance, "Ω"), (1e-4, 100.0), "By the design, when it gives one."),
     quantity(TESTS, "distortion-limit", "largest current distortion, THDi", (Percent, "%"), (0.001, 2.0), "By the specification, at the drive's input."),
-    quantity(TESTS, "leakage-limit", "largest earth leakage", (Current, "mA"), (1e-4, 30.0), "By the specification."),
-    quantity(TESTS, "bearing-rise-limit", "largest bearing temperature rise", (TemperatureRise, "K"), (1.0, 150.0), "By the maker."),
-    quantity(TESTS, "unbalance-site-limit", "supply unbalance by the specification", (Percent, "%"), (0.001, 0.2), "When the specification is tighter than the manual."),
+    quantity(TESTS, "leakage-limit", "largest earth leakage", (Current, "mA"), (1e-4, 30.0), "By the specification. No check uses it."),
+    quantity(TESTS, "bearing-rise-limit", "largest bearing temperature rise", (TemperatureRise, "K"), (1.0, 150.0), "By the maker. No check uses it."),
+    quantity(TESTS, "unbalance-site-limit", "supply unbalance by the specification", (Percent, "%"), (0.001, 0.2), "The larger of both definitions is compared with it, beside the manual's limit."),
     text(TESTS, "notes", "notes", "Anything else a reader must know."),
 ];

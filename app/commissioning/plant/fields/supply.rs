@@ -31,7 +31,7 @@ pub const FIELDS: &[Field] = &[
     choice(FEEDER, "feeder-metal", "conductor metal", &[("copper", "copper"), ("aluminium", "aluminium")], ""),
     text(DEVICE, "device", "device", "Kind, size and curve, as marked on it."),
     quantity(DEVICE, "device-rating", "rated current", (Current, "A"), (0.1, 1e4), "Of fuse or breaker."),
-    quantity(DEVICE, "device-breaking", "breaking capacity", (Current, "kA"), (100.0, 5e5), "As marked."),
+    quantity(DEVICE, "device-breaking", "breaking capacity", (Current, "kA"), (100.0, 5e5), "As marked. No check uses it."),
     quantity(DEVICE, "device-trip-current", "current for disconnection in time, Iₐ", (Current, "A"), (0.01, 1e6), "Current at which the device opens within the required time, from its curve."),
     quantity(DEVICE, "device-trip-time", "required disconnection time", (Time, "s"), (0.01, 10.0), "As the local rule asks."),
     quantity(DEVICE, "loop-impedance", "loop impedance by design, Zₛ", (Resistance, "Ω"), (1e-4, 1e4), "Phase to protective conductor at the drive. A measured one goes first."),

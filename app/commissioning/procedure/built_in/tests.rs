@@ -21,6 +21,7 @@ pub(super) const CHECKS: &[&str] = &[
     "current-limit",
     "deceleration-time",
     "dielectric-absorption",
+    "discharge-time",
     "disconnection",
     "drive-current-fit",
     "efficiency-class",
@@ -70,6 +71,7 @@ pub(super) const CHECKS: &[&str] = &[
     "vibration",
     "voltage-drop",
     "volts-per-hertz",
+    "waiting-time",
     "winding-balance",
 ];
 
@@ -296,4 +298,29 @@ fn an_exchange_that_is_not_needed_leaves_everything_alone() {
         assert!(!step.left_alone(chosen("motor")) && !step.left_alone(|_| None), "{id}");
     }
     assert_eq!(every_step(&procedure).iter().filter(|s| s.voids_directions).count(), 1);
+}
+
+/// Everything that the rotation check looks at is a direction, so that an exchange makes all of it void together.
+#[test]
+fn every_direction_falls_with_an_exchange() {
+    use crate::record::EntryPlace;
+    let procedure = procedure();
+    let looked_at = every_step(&procedure).into_iter().filter(|s| s.checks.iter().any(|c| c == "rotation"));
+    let seen: Vec<&Item> = looked_at.filter(|s| !s.voids_directions).flat_map(|s| &s.items).collect();
+    assert!(seen.len() >= 3, "drive, bypass and encoder");
+    for item in seen {
+        assert!(EntryPlace::new(item.key.as_str()).is_direction(), "{}", item.key);
+    }
+}
+
+/// An item that is asked for unless its step is left alone needs a step that can be.
+#[test]
+fn what_is_optional_only_when_left_alone_stands_at_a_step_that_can_be() {
+    let procedure = procedure();
+    let mut found = 0;
+    for step in every_step(&procedure).into_iter().filter(|s| s.items.iter().any(|i| i.left_alone_only)) {
+        assert!(step.left_alone(|_| Some("not-needed")), "{}", step.id);
+        found += 1;
+    }
+    assert!(found > 0, "the isolation for an exchange asks for its reading");
 }

@@ -1,6 +1,6 @@
-//! What record.json says twice must agree: status, signatures, history, contributors, places in the chain.
+//! What record.json says twice must agree: status, signatures, history, contributors, numbers, places in the chain.
 
-use super::{RecordFile, RecordPart};
+use super::{RecordFile, RecordPart, numbers};
 use crate::PersonId;
 use crate::record::{Meaning, Signature, Status, Turn};
 use std::collections::BTreeSet;
@@ -10,7 +10,9 @@ pub(super) fn of(file: &RecordFile, part: &RecordPart) -> Option<String> {
     status(part)
         .or_else(|| history(part))
         .or_else(|| versions(file, part))
-        .or_else(|| contributors(part))
+        .or_else(|| contributors(file, part))
+        .or_else(|| accepted_by_another(part))
+        .or_else(|| numbers::of(file, part))
         .or_else(|| places(file, part))
 }
 
@@ -68,16 +70,28 @@ fn versions(file: &RecordFile, part: &RecordPart) -> Option<String> {
     (!fits).then(|| "A signature that stands is of another revision or check catalogue.".to_owned())
 }
 
-/// Whoever entered or signed something is among the contributors.
-fn contributors(part: &RecordPart) -> Option<String> {
+/// Whoever entered, filled in, settled or signed something is among the contributors.
+fn contributors(file: &RecordFile, part: &RecordPart) -> Option<String> {
     let entered =
         part.entries.iter().flat_map(|e| e.slot.all().map(|r| r.by).chain(e.slot.taken_back().iter().map(|r| r.by)));
     let keyed = part.parameters.iter().flat_map(|p| p.slot.all().map(|r| r.by));
-    let settled = part.otherwise.iter().map(|o| o.settled.by);
+    let settled = part.otherwise.iter().map(|o| o.settled.by).chain(part.once_otherwise.iter().map(|o| o.settled.by));
     let signed = part.signatures.iter().filter(|s| s.meaning == Meaning::Performed).map(|s| s.person);
+    let filled = || file.drive.fields.iter().flat_map(|f| f.slot.all());
+    // Until the record is begun a drive's chain holds its creation, at 1, and fields: the first gap is the beginning.
+    let before: BTreeSet<u64> = filled().map(|r| r.sequence).collect();
+    let begun = (2..).find(|n| !before.contains(n)).unwrap_or(u64::MAX);
+    let filled = filled().filter(|r| r.sequence > begun).map(|r| r.by);
     let listed: BTreeSet<PersonId> = part.contributors.iter().copied().collect();
-    let all = entered.chain(keyed).chain(settled).chain(signed).all(|id| listed.contains(&id));
-    (!all).then(|| "record.contributors lacks somebody who entered or signed something.".to_owned())
+    let all = entered.chain(keyed).chain(settled).chain(signed).chain(filled).all(|id| listed.contains(&id));
+    (!all).then(|| "record.contributors lacks somebody who entered, filled in or signed something.".to_owned())
+}
+
+/// Nobody accepted what they entered, filled in or signed themselves.
+fn accepted_by_another(part: &RecordPart) -> Option<String> {
+    let mut accepted = part.signatures.iter().filter(|s| !s.superseded && s.meaning == Meaning::Accepted);
+    let own = accepted.any(|s| part.contributors.contains(&s.person));
+    own.then(|| "The record was accepted by somebody who contributed to it.".to_owned())
 }
 
 /// Nothing stands later in the chain than the chain is long, and signatures come in order.
@@ -86,7 +100,8 @@ fn places(file: &RecordFile, part: &RecordPart) -> Option<String> {
     let parameters = part.parameters.iter().flat_map(|p| p.slot.all().map(|r| r.sequence));
     let remarks = part.remarks.iter().map(|r| r.remark.sequence);
     let history = part.history.iter().map(|h| h.sequence);
-    let last = entries.chain(parameters).chain(remarks).chain(history).max().unwrap_or(0);
+    let once = part.once_otherwise.iter().map(|o| o.ended.sequence);
+    let last = entries.chain(once).chain(parameters).chain(remarks).chain(history).max().unwrap_or(0);
     if last > file.head.sequence {
         return Some("Something stands later in the chain than its head.".to_owned());
     }

@@ -2,8 +2,8 @@
 
 use crate::plant::{Place, Recorded, Site, Slot};
 use crate::record::{
-    Drive, Entry, EntryPlace, Finding, FindingState, Isolation, ParameterPlace, Record, Release, SettledOtherwise,
-    Signature, Status, Turn,
+    Drive, Entry, EntryPlace, Finding, FindingState, Isolation, OnceOtherwise, ParameterPlace, Photo, Record, Release,
+    SettledOtherwise, Signature, Status, Turn,
 };
 use crate::{DriveId, PersonId, SiteId, Timestamp, Typed};
 use serde::{Deserialize, Serialize};
@@ -117,6 +117,9 @@ pub struct RecordPart {
     pub entries: Vec<EntryPart>,
     /// Steps settled otherwise.
     pub otherwise: Vec<OtherwisePart>,
+    /// Steps that were settled otherwise once and no longer are so, oldest first.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub once_otherwise: Vec<OnceOtherwise>,
     /// Every stretch of isolation, oldest first.
     pub isolations: Vec<Isolation>,
     /// Hold points released.
@@ -183,6 +186,7 @@ impl RecordPart {
             otherwise: (record.otherwise.iter())
                 .map(|(step, settled)| OtherwisePart { step: step.clone(), settled: settled.clone() })
                 .collect(),
+            once_otherwise: record.once_otherwise.clone(),
             isolations: record.isolations.clone(),
             releases: record.releases.values().cloned().collect(),
             directions_void_before: record.directions_void_before,
@@ -201,6 +205,14 @@ impl RecordPart {
             history: record.history.clone(),
             signatures: record.signatures.clone(),
         }
+    }
+
+    /// The entries that are pictures, standing ones, by their items, in the order of the procedure.
+    pub fn photos(&self) -> impl Iterator<Item = (&str, &Entry, &Photo)> {
+        self.entries.iter().flat_map(|part| {
+            let standing = part.slot.standing().iter();
+            standing.filter_map(|r| Some((part.place.item.as_str(), &r.value, r.value.photo.as_ref()?)))
+        })
     }
 
     /// Cuts back to what a signer was shown: this many signatures before, and the chain up to this event. What only

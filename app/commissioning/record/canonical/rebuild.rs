@@ -61,6 +61,7 @@ impl RecordFile {
             status: part.status.clone(),
             entries: once(part.entries.iter().map(|e| (e.place.clone(), e.slot.clone())), "record.entries")?,
             otherwise: once(part.otherwise.iter().map(|o| (o.step.clone(), o.settled.clone())), "record.otherwise")?,
+            once_otherwise: part.once_otherwise.clone(),
             isolations: part.isolations.clone(),
             releases: once(part.releases.iter().map(|r| (r.phase.clone(), r.clone())), "record.releases")?,
             directions_void_before: part.directions_void_before,

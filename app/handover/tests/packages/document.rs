@@ -88,6 +88,7 @@ fn every_value_that_was_entered_is_found_in_the_document() {
         "decimal point misread",
         "tightened, pulled, holds",
         "nothing of the kind here",
+        "crane in the way",
         "Imre Vandal",
         "display line 2 shows",
     ] {

@@ -306,6 +306,10 @@ pub fn pump(stage: Stage) -> Plant {
         None,
     );
     p.event(Fact::FindingSettled { finding, how: "tightened, pulled, holds".into() }, None);
+    let first = p.procedure.steps().next().unwrap().1.id.clone();
+    let could_not = Fact::StepSettled { step: first.clone(), how: SettledOtherwise::CouldNotBeDone };
+    p.event(could_not, Some((Vec::new(), "crane in the way")));
+    p.event(Fact::StepResumed { step: first }, None);
     let step = p.procedure.steps().last().unwrap().1.id.clone();
     p.event(
         Fact::StepSettled { step, how: SettledOtherwise::NotApplicable },

@@ -5,19 +5,23 @@ use crate::extract::DriveAt;
 use crate::pages::sheets::frame::SHEETS;
 use crate::visitor::Signed;
 use crate::{links, verdicts};
-use commissioning::judge::{Counts, Judged};
+use commissioning::agenda::Agenda;
+use commissioning::judge::{self, Counts, Judged};
 use commissioning::people::Role;
 use maud::{Markup, html};
 
 /// All of it.
 #[must_use]
-pub fn all(signed: &Signed, at: &DriveAt, judged: &[Judged]) -> Markup {
+pub fn all(signed: &Signed, at: &DriveAt, agenda: &Agenda, judged: Vec<Judged>) -> Markup {
+    // What waits for a step that nobody reached says nothing yet; once signed, everything that was frozen counts.
+    let is_frozen = at.drive.record.as_ref().is_some_and(|r| r.frozen.is_some());
+    let judged = if is_frozen { judged } else { judge::reached(judged, agenda) };
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
     html! {
         h2 { "Verdicts" }
         @if judged.is_empty() { p.quiet { "None yet. As soon as a nameplate is filled in, its figures are checked against each other." } }
-        p { (counts(&verdicts::numbers(&Counts::of(judged)))) }
-        (verdicts::odd_in_words(judged, |j| if j.step.is_empty() { links::record(site, drive) } else { links::step(site, drive, &j.step) }))
+        p { (counts(&verdicts::numbers(&Counts::of(&judged)))) }
+        (verdicts::odd_in_words(&judged, |j| if j.step.is_empty() { links::record(site, drive) } else { links::step(site, drive, &j.step) }))
         @if at.drive.record.is_some() { (findings(at)) }
         h2 { "Sheets" }
         ul.sheets { @for sheet in SHEETS { li { a href=(links::sheet(site, drive, sheet)) { (sheet.words()) } span.quiet { (filled(at, sheet)) } } } }

@@ -24,7 +24,7 @@ pub async fn show(signed: Signed, at: DriveAt) -> Markup {
                     Some(record) => { (standing(record)) (onward(&signed, &at, record, &agenda)) (phases::list(&at, &agenda)) }
                 }
             }
-            aside { (aside::all(&signed, &at, &judged)) }
+            aside { (aside::all(&signed, &at, &agenda, judged)) }
         }
     };
     Page::new("Drive", body)

@@ -1,4 +1,4 @@
-//! The accuracy rows of an instrument's form: one per quantity, from the data sheet.
+//! The accuracy rows of an instrument's form: one per quantity and range, from the data sheet.
 
 use crate::components::{FieldInput, InputKind, field};
 use crate::posted::Posted;
@@ -57,7 +57,7 @@ pub fn inputs(rows: &[AccuracyRow], posted: &Posted, errors: &[FieldError]) -> M
     html! {
         fieldset.group {
             legend { "Accuracy, from its data sheet" }
-            p.hint { "A row per quantity: of the reading, in digits of the last place, and of full scale. What the sheet does not state stays empty and counts as nought." }
+            p.hint { "A row per quantity, or one for each of its ranges: of the reading, in digits of the last place, and of full scale, where the range ends. What the sheet does not state stays empty and counts as nought." }
             @for n in 0..shown { (row(n, rows.get(n), posted, errors)) }
             @for e in errors.iter().filter(|e| e.field == "accuracy") { p.error { (e.message) } }
         }

@@ -104,7 +104,7 @@ fn page(
     posted: &Posted,
     errors: &[FieldError],
 ) -> Markup {
-    let keeper = signed.visitor.is_any(&[Role::Administrator]);
+    let keeper = signed.visitor.is_any(&[Role::Engineer, Role::Supervisor, Role::Administrator]);
     let line = |name: &str, label: &str, value: Option<&String>| {
         FieldInput::new(name, label, InputKind::Line(120))
             .with(value.map_or("", String::as_str))

@@ -16,11 +16,11 @@ pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, Page
     let today = app.now().date();
     let mut instruments: Vec<&Instrument> = installation.instruments.values().collect();
     instruments.sort_by(|a, b| (!a.active, &a.mark).cmp(&(!b.active, &b.mark)));
-    let keeper = signed.visitor.is_any(&[Role::Administrator]);
+    let keeper = signed.visitor.is_any(&[Role::Engineer, Role::Supervisor, Role::Administrator]);
     let add = || html! { @if keeper { (main_link(&links::new_instrument(), "Add an instrument")) } };
     let body = html! {
         p.lead { "A verdict knows its instrument: a reading that the instrument cannot tell from the limit is marginal, not a pass." }
-        @if instruments.is_empty() { (empty("No instrument yet", "Readings without a named instrument can be marginal at best. An administrator adds them here, with their accuracy.", add())) }
+        @if instruments.is_empty() { (empty("No instrument yet", "Readings without a named instrument can be marginal at best. Add them here, with their accuracy.", add())) }
         @else {
             div.row { (add()) }
             div.scroll { table.list {

@@ -45,7 +45,7 @@ pub fn words(fact: &Fact, procedure: &Procedure) -> String {
         Fact::IsolationEntered { .. } => "isolated and proved dead, in force from here on".to_owned(),
         Fact::IsolationLifted { .. } => "isolation lifted".to_owned(),
         Fact::DirectionsVoided { .. } => {
-            "leads or channels exchanged: directions seen before count as not observed".to_owned()
+            "leads, channels or output sequence exchanged: directions seen before count as not observed".to_owned()
         }
         Fact::HoldReleased { phase: id, printed_name, .. } => {
             format!("hold point before “{}” released by {printed_name}", phase(id))

@@ -2,16 +2,7 @@
 
 use crate::extract::DriveAt;
 use crate::{App, PageError, packaging};
-use commissioning::record::Record;
 use handover::Material;
-use std::collections::BTreeSet;
-
-/// The hashes of every picture that the record names.
-#[must_use]
-pub fn hashes(record: &Record) -> BTreeSet<String> {
-    let standing = record.entries.values().flat_map(|s| s.standing());
-    standing.filter_map(|r| r.value.photo.as_ref().map(|p| p.hash.clone())).collect()
-}
 
 /// The material. Somebody may record while it is gathered: it is then gathered again, until record and chain agree.
 ///

@@ -1,11 +1,11 @@
 //! What the handover package holds, whether it is a draft, and the way to take it.
 
-use super::material::hashes;
 use crate::components::{Page, empty, facts, main_link, notice};
 use crate::extract::DriveAt;
 use crate::visitor::Signed;
-use crate::{App, links};
+use crate::{App, links, packaging};
 use axum::extract::State;
+use commissioning::record::canonical::RecordFile;
 use commissioning::record::{Record, Status};
 use maud::{Markup, html};
 
@@ -13,7 +13,7 @@ use maud::{Markup, html};
 const FILES: [(&str, &str); 8] = [
     (
         "handover.pdf",
-        "The document: which drive, is it sound, what to key in; then everything that was recorded, with the working of every verdict.",
+        "The document: which drive, what was found, what to key in; then everything that was recorded, with the working of every verdict.",
     ),
     ("record.json", "The same as data, from which every verdict can be worked out again."),
     ("parameters.csv", "The parameter list for a spreadsheet."),
@@ -39,7 +39,7 @@ pub async fn show(State(app): State<App>, signed: Signed, at: DriveAt) -> Markup
             (facts([
                 ("revision", html! { (record.revision) ", " (record.status.words()) }),
                 ("signatures", html! { (record.signatures.iter().filter(|s| !s.superseded).count()) " standing" }),
-                ("pictures", html! { (hashes(record).len()) }),
+                ("pictures", html! { (packaging::hashes(&RecordFile::shown(&at.view())).len()) }),
                 ("journal", html! { (at.drive.head.sequence) " events, head " code { (at.drive.head.hash.get(..16).unwrap_or_default()) } }),
             ]))
             div.row {

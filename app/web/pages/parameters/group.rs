@@ -105,5 +105,5 @@ pub fn judged(view: &View<'_>, group: &str) -> Vec<Judged> {
 /// The fragment that is replaced while typing.
 #[must_use]
 pub fn panels(judged: &[Judged]) -> Markup {
-    verdict_panels(judged, false)
+    verdict_panels(judged)
 }

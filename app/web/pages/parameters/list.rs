@@ -34,7 +34,7 @@ pub fn page(signed: &Signed, at: &DriveAt, posted: Option<&Posted>, errors: &[Fi
                 @for group in functions::GROUPS.iter().copied().chain([rows::FREE]) { (section(at, group, may)) }
                 @if may { (add_row::form(signed, at, posted, errors)) }
             }
-            aside { h2 { "Verdicts" } (verdict_panels(&judged, false)) }
+            aside { h2 { "Verdicts" } (verdict_panels(&judged)) }
         }
     };
     let agenda = agenda::of(&at.view());

@@ -1,6 +1,6 @@
 //! A person: change name and roles, switch the account off and on, make a one-time code, lift a signing lock.
 
-use super::{role_boxes, roles};
+use super::{codes, role_boxes, roles};
 use crate::components::{FieldInput, InputKind, Page, button, facts, field, form, main_button, notice};
 use crate::extract::segment;
 use crate::posted::Posted;
@@ -90,6 +90,7 @@ pub fn page(
         (facts([
             ("signs in as", html! { (person.login) }),
             ("password", html! { @match account.password_set { Some(t) => { "set " (t.shown()) " UTC" }, None => "not set yet" } }),
+            ("one-time codes", html! { @if account.codes.is_empty() { "none" } @for code in &account.codes { p { (codes::words(code)) } } }),
             ("last here", html! { @match account.last_sign_in { Some(t) => { (t.shown()) " UTC" }, None => "never" } }),
         ]))
         @if let Some(until) = locked {
@@ -104,7 +105,7 @@ pub fn page(
         }))
         section.card {
             h2 { "One-time code" }
-            p { "With it " (person.name) " sets a password that only they know. It works once and for seven days; a new one takes its place." }
+            p { "With it " (person.name) " sets a password that only they know. It works once and for seven days; a new one takes its place. That you made it is shown to them and to everyone under “Who can sign”." }
             (form(&signed.visitor, &links::invite(&person.login), button("Make a one-time code")))
         }
     })

@@ -20,6 +20,6 @@ pub async fn make(
     if !account.person.active {
         return Err(PageError::NotNow { why: "This account is switched off. Switch it on first.".to_owned() });
     }
-    let code = app.store.invite(account.person.id, app.now()).await?;
+    let code = app.store.invite(account.person.id, Some(signed.person.id), app.now()).await?;
     Ok(page(&app, &signed, &account, &Posted::default(), &[], Some(&code)))
 }

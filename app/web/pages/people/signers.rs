@@ -1,5 +1,6 @@
 //! Who can sign what, since when, and when they were last here (integrity E22).
 
+use super::codes;
 use crate::components::{Page, empty};
 use crate::visitor::Signed;
 use crate::{App, PageError};
@@ -17,11 +18,11 @@ pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, Page
     let signers: Vec<_> =
         accounts.iter().filter(|a| a.person.is(Role::Engineer) || a.person.is(Role::Supervisor)).collect();
     let body = html! {
-        p.lead { "A signature shows the printed name, the moment and its meaning, and asks for the password each time. Whoever entered something in a record cannot accept it." }
+        p.lead { "A signature shows the printed name, the moment and its meaning, and asks for the password each time. Whoever holds a one-time code can set a new password and sign under that name: every code is listed here with who made it. Whoever entered something in a record cannot accept it." }
         @if signers.is_empty() { (empty("Nobody can sign yet", "An administrator adds startup engineers and supervisors under People.", html! {})) }
         @else {
             div.scroll { table.list {
-                thead { tr { th { "Name" } th { "May sign" } th { "Able since" } th { "Last here" } } }
+                thead { tr { th { "Name" } th { "May sign" } th { "Able since" } th { "Last here" } th { "One-time codes" } } }
                 tbody { @for row in &signers { tr {
                     td data-label="Name" { (row.person.name) }
                     td data-label="May sign" {
@@ -34,6 +35,7 @@ pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, Page
                         @match row.last_sign_in { Some(t) => { (t.shown()) " UTC" }, None => "never" }
                         @if row.signing_locked_until.is_some_and(|u| u > app.now()) { " · signing locked" }
                     }
+                    td data-label="One-time codes" { @if row.codes.is_empty() { "none" } @for code in &row.codes { p { (codes::words(code)) } } }
                 } } }
             } }
         }

@@ -4,10 +4,6 @@ use crate::{App, PageError, pictures};
 use axum::extract::{Path, State};
 use axum::http::header;
 use axum::response::{IntoResponse, Response};
-use tokio::sync::Semaphore;
-
-/// At most two are made at once: a large picture takes a tenth of a gigabyte while it is unpacked.
-static MAKING: Semaphore = Semaphore::const_new(2);
 
 /// Sends it; its address is its content, so that a browser may keep it.
 ///
@@ -18,8 +14,8 @@ pub async fn show(State(app): State<App>, Path(hash): Path<String>) -> Result<Re
     if !super::original::is_hash(&hash) {
         return Err(missing());
     }
+    let _turn = pictures::turn().await?;
     let (bytes, _) = app.store.photo(&hash).await?.ok_or_else(missing)?;
-    let _turn = MAKING.acquire().await.map_err(PageError::broken)?;
     let copy = tokio::task::spawn_blocking(move || pictures::display_copy(&bytes)).await.map_err(PageError::broken)?;
     let copy = copy.map_err(PageError::broken)?;
     let headers =

@@ -5,23 +5,34 @@ use crate::components::{Page, counts, link_button, main_link};
 use crate::extract::DriveAt;
 use crate::visitor::Signed;
 use crate::{App, links, verdicts};
-use axum::extract::State;
+use axum::extract::{Query, State};
 use commissioning::agenda::{self, Agenda};
 use commissioning::judge::{Counts, Judged};
 use commissioning::people::Role;
 use commissioning::record::{Record, Status};
 use maud::{Markup, html};
+use serde::Deserialize;
+
+/// How much of it was asked for.
+#[derive(Debug, Default, Deserialize)]
+pub struct Asked {
+    #[serde(default)]
+    working: String,
+}
 
 /// Shows it.
-pub async fn show(State(app): State<App>, signed: Signed, at: DriveAt) -> Markup {
+pub async fn show(State(app): State<App>, signed: Signed, at: DriveAt, Query(asked): Query<Asked>) -> Markup {
     let agenda = agenda::of(&at.view());
     let judged = verdicts::all(&at.view());
+    let in_full = asked.working == "all";
+    let shown = report_step::Shown { judged: &judged, in_full, now: app.now() };
     let body = html! {
         article.report {
             (opening(&at, &agenda, &judged))
+            (workings(&at, in_full))
             @if at.drive.record.is_some() { (turns(&at)) }
-            (report_sheets::all(&at, &judged))
-            @for phase in &agenda.phases { (report_step::phase(&signed, &at, phase, &judged, app.now())) }
+            (report_sheets::all(&at, &judged, in_full))
+            @for phase in &agenda.phases { (report_step::phase(&signed, &at, phase, shown)) }
             (report_settings::all(&at))
             @if let Some(record) = &at.drive.record { (report_end::all(&signed, &at, record)) }
         }
@@ -48,6 +59,17 @@ fn opening(at: &DriveAt, agenda: &Agenda, judged: &[Judged]) -> Markup {
         @if at.drive.record.as_ref().is_some_and(|r| r.frozen.is_some()) { p.quiet { "Verdicts as they were frozen at the signature." } }
         p { (counts(&verdicts::numbers(&Counts::of(judged)))) }
         (verdicts::odd_in_words(judged, |j| if j.step.is_empty() { "#plates".to_owned() } else { links::record_at(site, drive, &j.step) }))
+    }
+}
+
+/// The one switch for the working of what is within; without it a page of a hundred checks is hard to read.
+fn workings(at: &DriveAt, in_full: bool) -> Markup {
+    let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
+    html! {
+        div.row {
+            @if in_full { (link_button(&links::record(site, drive), "Fold the working of what is within")) }
+            @else { (link_button(&links::record_in_full(site, drive), "Show the working of every verdict")) }
+        }
     }
 }
 

@@ -1,7 +1,7 @@
 //! The sheets in the report: every value with who and when, then the checks of the nameplates.
 
 use super::changed;
-use crate::components::verdict_panels;
+use crate::components::verdict_panels_to_review;
 use crate::extract::DriveAt;
 use crate::pages::steps::sheet::shown;
 use commissioning::Typed;
@@ -11,7 +11,7 @@ use maud::{Markup, html};
 
 /// Site, supply and every sheet of the drive.
 #[must_use]
-pub fn all(at: &DriveAt, judged: &[Judged]) -> Markup {
+pub fn all(at: &DriveAt, judged: &[Judged], in_full: bool) -> Markup {
     let own: Vec<Judged> = judged.iter().filter(|j| j.step.is_empty()).cloned().collect();
     let since = at.drive.record.as_ref().and_then(changed::since);
     html! {
@@ -23,7 +23,7 @@ pub fn all(at: &DriveAt, judged: &[Judged]) -> Markup {
                 @let rows: Vec<(&Place, &Slot<Option<Typed>>)> = of_site.chain(of_drive).filter(|(_, s)| !s.standing().is_empty()).collect();
                 @if !rows.is_empty() { (sheet_table(sheet, &rows, since)) }
             }
-            @if !own.is_empty() { h3 { "Nameplates against each other" } (verdict_panels(&own, true)) }
+            @if !own.is_empty() { h3 { "Nameplates against each other" } (verdict_panels_to_review(&own, in_full)) }
         }
     }
 }

@@ -1,7 +1,7 @@
 //! The phases and steps of the report: values with who, when, instrument; earlier ones struck through; verdicts with their working.
 
 use super::{changed, remark};
-use crate::components::verdict_panels;
+use crate::components::verdict_panels_to_review;
 use crate::extract::DriveAt;
 use crate::links;
 use crate::pages::steps::at::{items, places};
@@ -15,9 +15,20 @@ use commissioning::procedure::{Item, Step};
 use commissioning::record::{Entry, Record};
 use maud::{Markup, html};
 
+/// What the report is made from, and how.
+#[derive(Clone, Copy, Debug)]
+pub struct Shown<'a> {
+    /// Every verdict.
+    pub judged: &'a [Judged],
+    /// Whether the working of all of them lies open.
+    pub in_full: bool,
+    /// Now.
+    pub now: Timestamp,
+}
+
 /// A phase with its hold point and steps.
 #[must_use]
-pub fn phase(signed: &Signed, at: &DriveAt, phase: &PhaseAgenda, judged: &[Judged], now: Timestamp) -> Markup {
+pub fn phase(signed: &Signed, at: &DriveAt, phase: &PhaseAgenda, shown: Shown<'_>) -> Markup {
     html! {
         section.report-phase {
             @if let Some(hold) = &phase.hold {
@@ -30,20 +41,13 @@ pub fn phase(signed: &Signed, at: &DriveAt, phase: &PhaseAgenda, judged: &[Judge
                 }
             }
             h2 { (phase.title) }
-            @for step in &phase.steps { @if let Some((_, described)) = at.procedure.step(&step.id) { (one(signed, at, step, described, judged, now)) } }
+            @for step in &phase.steps { @if let Some((_, described)) = at.procedure.step(&step.id) { (one(signed, at, step, described, shown)) } }
         }
     }
 }
 
-fn one(
-    signed: &Signed,
-    at: &DriveAt,
-    step: &StepAgenda,
-    described: &Step,
-    judged: &[Judged],
-    now: Timestamp,
-) -> Markup {
-    let own: Vec<Judged> = judged.iter().filter(|j| j.step == step.id).cloned().collect();
+fn one(signed: &Signed, at: &DriveAt, step: &StepAgenda, described: &Step, shown: Shown<'_>) -> Markup {
+    let own: Vec<Judged> = shown.judged.iter().filter(|j| j.step == step.id).cloned().collect();
     let since = at.drive.record.as_ref().and_then(changed::since);
     html! {
         section.report-step id=(format!("step-{}", step.id)) {
@@ -51,8 +55,8 @@ fn one(
             @if let Some(record) = &at.drive.record { (values(at, record, described, since)) }
             @if let Some(sheet) = crate::pages::steps::sheet::of(described) { p.quiet { a href="#plates" { (sheet.words()) } ", above" } }
             @if described.parameters.is_some() { p.quiet { a href="#settings" { "Parameter record" } ", below" } }
-            (verdict_panels(&own, true))
-            (remark::list(at, &step.id, now))
+            (verdict_panels_to_review(&own, shown.in_full))
+            (remark::list(at, &step.id, shown.now))
             (remark::form(signed, at, &step.id))
         }
     }

@@ -3,6 +3,7 @@
 use super::{new_password_fields, password_error, unlike};
 use crate::components::{FieldInput, InputKind, Page, field, form, main_button};
 use crate::posted::Posted;
+use crate::sessions::SessionToken;
 use crate::visitor::Signed;
 use crate::{App, PageError, cookies, links};
 use axum::extract::State;
@@ -21,12 +22,23 @@ pub async fn show(signed: Signed) -> Markup {
 ///
 /// # Errors
 /// When the store cannot answer.
-pub async fn change(State(app): State<App>, signed: Signed, posted: Posted) -> Result<Response, PageError> {
+pub async fn change(
+    State(app): State<App>,
+    signed: Signed,
+    SessionToken(before): SessionToken,
+    posted: Posted,
+) -> Result<Response, PageError> {
+    // What was said of the device at sign-in still holds; setting the password closes the session itself.
+    let session = match &before {
+        Some(token) => app.store.session(token, app.now()).await?,
+        None => None,
+    };
+    let kind = session.map_or(SessionKind::Strange, |s| s.kind);
     let error = match refused(&app, &signed, &posted).await? {
         Some(error) => error,
         None => match app.store.set_password(signed.person.id, posted.text("new"), app.now()).await {
             Ok(()) => {
-                let token = app.store.open_session(signed.person.id, SessionKind::Enrolled, app.now()).await?;
+                let token = app.store.open_session(signed.person.id, kind, app.now()).await?;
                 let mut response = Redirect::to(&links::home()).into_response();
                 cookies::add(&mut response, &cookies::session(&token, app.secure));
                 return Ok(response);

@@ -1,6 +1,7 @@
 //! Sign in: the same answer, after the same time, whether the name is known or not.
 
-use crate::components::{FieldInput, InputKind, Page, field, form, main_button, notice};
+use crate::components::{FieldInput, InputKind, Page, field, form, input_id, main_button, notice};
+use crate::pages::people::codes;
 use crate::posted::Posted;
 use crate::sessions::{Address, SessionToken};
 use crate::visitor::Visitor;
@@ -50,8 +51,13 @@ pub async fn open(
             if let Some(before) = before {
                 app.store.close_session(&before).await?;
             }
-            let token = app.store.open_session(person.id, SessionKind::Enrolled, app.now()).await?;
-            let mut response = Redirect::to(if links::is_local(back) { back } else { "/" }).into_response();
+            // Whoever says nothing sits at a device that others use too.
+            let kind = if posted.text("own") == "yes" { SessionKind::Enrolled } else { SessionKind::Strange };
+            let token = app.store.open_session(person.id, kind, app.now()).await?;
+            // The start page says what was done with their account; that goes before what they came for.
+            let told = codes::to_tell(&app.store.codes_made(person.id).await?, app.now());
+            let to = if links::is_local(back) && told.is_empty() { back } else { "/" };
+            let mut response = Redirect::to(to).into_response();
             cookies::add(&mut response, &cookies::session(&token, app.secure));
             return Ok(response);
         }
@@ -73,6 +79,10 @@ fn page(app: &App, visitor: &Visitor, back: &str, login: &str, error: Option<Str
             input type="hidden" name="back" value=(back);
             (field(&name))
             (field(&password))
+            div.field {
+                label.tick for=(input_id("own")) { input type="checkbox" id=(input_id("own")) name="own" value="yes"; span { "This is my own tablet" } }
+                p.hint { "You then stay signed in for a shift of 12 hours. Otherwise the session ends after 30 minutes without use." }
+            }
             div.row { (main_button("Sign in")) }
         }))
         p.quiet { "With a one-time code from an administrator, " a href=(links::invitation()) { "set your password" } " first." }

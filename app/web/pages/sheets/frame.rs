@@ -18,7 +18,9 @@ pub const SHEETS: [Sheet; 7] =
 #[must_use]
 pub fn page(app: &App, signed: &Signed, at: &DriveAt, sheet: Sheet, asked: u8, back: &Back<'_>) -> Markup {
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
-    let may = signed.visitor.is_any(&[Role::Engineer]);
+    // Once the record is begun its plates are part of what a supervisor reviews.
+    let may = signed.visitor.is_any(&[Role::Engineer])
+        || (at.drive.record.is_none() && signed.visitor.is_any(&[Role::Supervisor]));
     let columns = sheet_form::columns(sheet, &at.drive.fields, back.posted, asked);
     let action = links::sheet(site, drive, sheet);
     let inputs = html! {
@@ -48,7 +50,7 @@ pub fn verdicts(view: &View<'_>) -> Markup {
     html! {
         h2 { "Do the plates agree?" }
         @if judged.is_empty() { p.quiet { "As soon as volts, amps, power and speed are entered, they are checked against each other here." } }
-        (verdict_panels(&judged, false))
+        (verdict_panels(&judged))
     }
 }
 

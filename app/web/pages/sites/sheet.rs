@@ -83,7 +83,7 @@ fn page(
     posted: Option<&Posted>,
     errors: &[FieldError],
 ) -> Markup {
-    let may = signed.visitor.is_any(&[Role::Engineer, Role::Supervisor, Role::Administrator]);
+    let may = signed.visitor.is_any(&[Role::Engineer, Role::Supervisor]);
     let back = Back { posted, errors };
     let body = html! {
         nav.tabs aria-label="Sheets" {

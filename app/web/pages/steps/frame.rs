@@ -26,8 +26,8 @@ pub fn page(app: &App, signed: &Signed, at: &StepAt, back: &Back<'_>, told: Opti
     let has_form = !items(&at.at, step).is_empty() || step.parameters.is_some();
     let wide = !step.rows.is_empty() || step.parameters.is_some();
     let body = html! {
-        (sheet_form::summary(back.errors))
-        @if let Some(told) = told { (notice(told)) }
+        @if let Some(told) = told { (notice(told)) (sheet_form::faults(back.errors, "What you typed is still here.")) }
+        @else { (sheet_form::summary(back.errors)) }
         div.step.split[!judged.is_empty() && !wide].wide[wide] {
             section {
                 (heading(at, phase, step, &agenda))
@@ -90,5 +90,5 @@ fn form(i: &Inputs<'_>, may: bool) -> Markup {
 /// What the checks of a step say: the fragment that is replaced while typing.
 #[must_use]
 pub fn panels(judged: &[Judged]) -> Markup {
-    verdict_panels(judged, false)
+    verdict_panels(judged)
 }

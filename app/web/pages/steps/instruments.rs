@@ -69,7 +69,12 @@ pub fn last_used(signed: &Signed, at: &StepAt, kind: Kind) -> Option<InstrumentI
     let mine =
         used.filter(|r| r.by == signed.person.id).filter_map(|r| Some((r.sequence, r.value.instrument.as_ref()?.0.id)));
     let (_, last) = mine.max_by_key(|(sequence, _)| *sequence)?;
-    at.at.installation.instruments.get(&last).filter(|i| i.active).map(|i| i.id)
+    at.at.installation.instruments.get(&last).filter(|i| i.active && reads(i, kind)).map(|i| i.id)
+}
+
+/// Whether its data sheet says how well it reads this kind.
+fn reads(instrument: &Instrument, kind: Kind) -> bool {
+    instrument.accuracy.iter().any(|row| row.kind == kind)
 }
 
 /// The selects that serve several readings, above them.
@@ -122,11 +127,14 @@ pub fn own_select(
     }
 }
 
-/// Those whose accuracy for the kind is known stand first.
+/// Only those that read this kind of quantity; all of them where none says that it does.
 fn select(at: &StepAt, kind: Kind, name: &str, chosen: &str) -> Markup {
     let mut known: Vec<&Instrument> =
         at.at.installation.instruments.values().filter(|i| i.active || i.id.to_string() == chosen).collect();
-    let fits = |i: &Instrument| i.accuracy.iter().any(|row| row.kind == kind);
+    let fits = |i: &Instrument| reads(i, kind);
+    if known.iter().any(|i| fits(i)) {
+        known.retain(|i| fits(i) || i.id.to_string() == chosen);
+    }
     known.sort_by(|a, b| fits(b).cmp(&fits(a)).then_with(|| a.mark.cmp(&b.mark)));
     html! {
         select.input id=(crate::components::input_id(name)) name=(name) {

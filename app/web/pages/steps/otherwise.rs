@@ -81,7 +81,7 @@ fn page(
         .sent_back(posted.unwrap_or(&none), errors);
     let body = html! {
         p.lead { (step.title) }
-        @if undone && step.stops_start_up { p.notice { "This step guards start-up: its finding stops start-up until it is settled." } }
+        @if step.stops_start_up { p.notice { "This step guards start-up: settling it so raises a finding, which stops start-up until it is settled or accepted by name." } }
         (form(&signed.visitor, &links::otherwise(site, drive, &at.id, ""), html! {
             input type="hidden" name="how" value=(if undone { "could-not-be-done" } else { "not-applicable" });
             (field(&reason))

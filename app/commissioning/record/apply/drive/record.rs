@@ -3,7 +3,7 @@
 use super::super::{ApplyError, misfit, recorded};
 use super::closing;
 use crate::journal::{Event, Fact};
-use crate::record::{Isolation, Record, Release};
+use crate::record::{Isolation, OnceOtherwise, Record, Release};
 
 /// Applies an event that is about a record; `sequence` is its place in the chain.
 pub(super) fn apply(record: &mut Record, event: &Event, sequence: u64) -> Result<(), ApplyError> {
@@ -20,12 +20,11 @@ pub(super) fn apply(record: &mut Record, event: &Event, sequence: u64) -> Result
         }
         Fact::StepSettled { step, how } => {
             let reason = event.reason.clone().unwrap_or_default();
+            end_otherwise(record, step, event, sequence);
             record.otherwise.insert(step.clone(), recorded((*how, reason), event, sequence));
             record.contributors.insert(event.person);
         }
-        Fact::StepResumed { step } => {
-            record.otherwise.remove(step);
-        }
+        Fact::StepResumed { step } => end_otherwise(record, step, event, sequence),
         Fact::IsolationEntered { step } => enter_isolation(record, step, event, sequence),
         Fact::IsolationLifted { .. } => lift_isolation(record, event, sequence),
         Fact::DirectionsVoided { .. } => {
@@ -64,6 +63,14 @@ pub(super) fn apply(record: &mut Record, event: &Event, sequence: u64) -> Result
         _ => return Err(misfit(event, "it is not about a drive")),
     }
     Ok(())
+}
+
+/// What a step was settled as stays readable when it no longer is.
+fn end_otherwise(record: &mut Record, step: &str, event: &Event, sequence: u64) {
+    if let Some(settled) = record.otherwise.remove(step) {
+        let ended = recorded((), event, sequence);
+        record.once_otherwise.push(OnceOtherwise { step: step.to_owned(), settled, ended });
+    }
 }
 
 fn enter_isolation(record: &mut Record, step: &str, event: &Event, sequence: u64) {
