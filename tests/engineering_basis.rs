@@ -80,6 +80,7 @@ fn sources_page() -> String {
                 "Confirmed" => engineering::Status::Confirmed,
                 "Arithmetic" => engineering::Status::Arithmetic,
                 "Memory" => engineering::Status::Memory,
+                "Maker" => engineering::Status::Maker,
                 "CommonPractice" => engineering::Status::CommonPractice,
                 other => panic!("{id} has the unknown status `{other}`"),
             };

@@ -24,8 +24,13 @@ pub(crate) fn make_printable(value: &mut Value, typefaces: Typefaces, trust: Tru
             *text = if text.starts_with("<svg ") { safe } else { with_breaks(&safe) };
             changed
         }
-        Value::Array(items) => items.iter_mut().fold(false, |any, v| make_printable(v, typefaces, trust) || any),
-        Value::Object(map) => map.values_mut().fold(false, |any, v| make_printable(v, typefaces, trust) || any),
+        // Counted, not asked with `any`, which would stop at the first.
+        Value::Array(items) => {
+            items.iter_mut().filter_map(|v| make_printable(v, typefaces, trust).then_some(())).count() > 0
+        }
+        Value::Object(map) => {
+            map.values_mut().filter_map(|v| make_printable(v, typefaces, trust).then_some(())).count() > 0
+        }
         _ => false,
     }
 }

@@ -77,7 +77,8 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let milliampere = |n: f64| Current::from_amperes(n / 1e3);
     let from = b.assume(inputs.low_current, milliampere(4.0), "loop current at the low end", "4 mA, the usual one");
     let to = b.assume(inputs.high_current, milliampere(20.0), "loop current at the high end", "20 mA, the usual one");
-    if !(to.amperes() - from.amperes() >= 1e-3) {
+    let apart = to.amperes() - from.amperes() >= 1e-3;
+    if !apart {
         return b.not_judged("Not assessed: the loop current at the high end is not above the one at the low end.");
     }
     let [from_shown, to_shown] = [from, to].map(|i| significant(i.amperes() * 1e3, 2));
