@@ -23,22 +23,16 @@ pub fn medians(rounds: usize, mut ours: impl FnMut(), mut baseline: impl FnMut()
 }
 
 /// How long one run takes.
-pub fn timed(run: &mut impl FnMut()) -> Duration {
+fn timed(run: &mut impl FnMut()) -> Duration {
     let begun = Instant::now();
     run();
     begun.elapsed()
 }
 
 /// The middle one.
-pub fn median(times: &mut [Duration]) -> Duration {
+fn median(times: &mut [Duration]) -> Duration {
     times.sort_unstable();
     times[times.len() / 2]
-}
-
-/// The one at 95 %.
-pub fn p95(times: &mut [Duration]) -> Duration {
-    times.sort_unstable();
-    times[times.len() * 95 / 100]
 }
 
 /// A line of the table.

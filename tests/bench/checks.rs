@@ -8,7 +8,7 @@ use std::hint::black_box;
 pub fn run() {
     let file = super::document::accepted();
     let rebuilt = file.rebuild().expect("the demo's record rebuilds");
-    let view = rebuilt.view();
+    let view = judge::View { drive: &rebuilt.drive, site: &rebuilt.site, procedure: &rebuilt.procedure };
     let json = file.to_json();
     let both = alternate::medians(
         50,
