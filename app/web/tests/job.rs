@@ -251,7 +251,8 @@ fn text(item: &Item, row: usize) -> (String, Option<String>) {
 /// Readings that hold points look at, so that they are within.
 fn known(key: &str) -> Option<&'static str> {
     Some(match key {
-        "bus-after-waiting" => "3",
+        "bus-after-waiting" | "bus-plus-to-earth" | "bus-minus-to-earth" | "input-dead" | "output-dead" => "3",
+        "exchange-bus-after-waiting" | "couple-bus-after-waiting" | "couple-output-dead" => "3",
         "winding-temperature" => "25",
         "ambient-temperature" => "22",
         "relative-humidity" => "40",
