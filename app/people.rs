@@ -103,7 +103,7 @@ fn invite(store: &Store, person: PersonId, name: &str) -> Ending {
     match store.invite(person, None, clock::now()).wait() {
         Ok(code) => {
             println!("One-time code for {name}, valid for 7 days: {code}");
-            println!("Start the server, open its address and choose “I have a one-time code”.");
+            println!("Start the server, open its address and choose to set your password with a one-time code.");
             Ending::Fine
         }
         Err(fault) => Ending::could_not(fault),
