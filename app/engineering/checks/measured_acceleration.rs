@@ -20,29 +20,14 @@ pub fn check(inputs: &Inputs) -> Outcome {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::motion::measured_ramp::tests::inputs;
     use crate::outcome::Verdict;
-    use crate::quantity::Duration;
-    use crate::reading::{Accuracy, Reading};
 
-    /// Set 10 s, predicted 10 s; the rule itself is tested in `motion::measured_ramp`.
-    fn took(seconds: f64) -> Outcome {
-        let exact = Accuracy {
-            percent_of_reading: 0.0,
-            digits: 1.0,
-            resolution: 0.01,
-            percent_of_full_scale: 0.0,
-            full_scale: 0.0,
-        };
-        let set = Some(Duration::from_seconds(10.0));
-        let measured = Some(Reading::with(Duration::from_seconds(seconds), exact));
-        check(&Inputs { measured, set_time: set, predicted_time: set })
-    }
-
+    /// The rule itself is tested in `motion::measured_ramp`; here, that it judges under this name.
     #[test]
-    fn ten_percent_is_marginal_and_a_quarter_beyond_the_prediction_is_outside() {
-        assert_eq!(took(10.9).verdict, Verdict::Within);
-        assert_eq!(took(11.2).verdict, Verdict::Marginal);
-        assert_eq!(took(12.6).verdict, Verdict::Outside);
-        assert_eq!(took(10.0).check, NAME);
+    fn the_rule_of_measured_ramps_judges_under_this_name() {
+        assert_eq!(check(&inputs(20.0, Some(20.0))).check, NAME);
+        assert_eq!(check(&inputs(20.0, Some(20.0))).verdict, Verdict::Within);
+        assert_eq!(check(&inputs(26.0, Some(20.0))).verdict, Verdict::Outside);
     }
 }

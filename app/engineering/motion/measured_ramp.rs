@@ -93,11 +93,12 @@ fn limits(b: &mut OutcomeBuilder, set: f64, predicted: Option<f64>, longest: Opt
 }
 
 #[cfg(test)]
-mod tests {
+pub(crate) mod tests {
     use super::*;
     use crate::reading::Accuracy;
 
-    fn run(measured: f64, predicted: Option<f64>) -> Outcome {
+    /// Set to 20 s, taken with a stop-watch of 0.2 s.
+    pub(crate) fn inputs(measured: f64, predicted: Option<f64>) -> Inputs {
         let watch = Accuracy {
             percent_of_reading: 0.0,
             digits: 1.0,
@@ -105,12 +106,15 @@ mod tests {
             percent_of_full_scale: 0.0,
             full_scale: 0.0,
         };
-        let inputs = Inputs {
+        Inputs {
             measured: Some(Reading::with(Duration::from_seconds(measured), watch)),
             set_time: Some(Duration::from_seconds(20.0)),
             predicted_time: predicted.map(Duration::from_seconds),
-        };
-        check("x", "acceleration", &inputs)
+        }
+    }
+
+    fn run(measured: f64, predicted: Option<f64>) -> Outcome {
+        check("x", "acceleration", &inputs(measured, predicted))
     }
 
     /// Common practice, no source: 10 % about the setting, 25 % over the prediction. U is 0.19 s here.
