@@ -25,12 +25,13 @@ pub struct Store {
     inner: Arc<Inner>,
 }
 
-/// Dropped in this order: threads first, then the lock, then a throw-away folder.
+/// Dropped in this order: threads first, then the lock, then a throw-away folder. The writing connection closes last
+/// and alone: of two that close at one time neither finds itself the last, and the write-ahead log would be left.
 struct Inner {
-    writer: Writer,
     readers: Crew<Desk>,
     hashers: Crew<()>,
     keepers: Crew<()>,
+    writer: Writer,
     folder: Folder,
     _throwaway: Option<Throwaway>,
 }
