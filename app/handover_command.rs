@@ -41,6 +41,7 @@ fn make(arguments: &Arguments) -> Result<(), String> {
         .block_on(web::packaging::material(&store, drive.id))
         .map_err(|f| f.to_string())?
         .ok_or("the drive is gone")?;
+    crate::keys::settle(&store, &arguments.data)?;
     let key = handover::key::load_or_create(&arguments.data.join("signing-key.pem")).map_err(|f| f.to_string())?;
     let package = handover::package::assemble(&material, &key).map_err(|f| f.to_string())?;
     let written = if arguments.to.extension().is_some_and(|e| e == "zip") {

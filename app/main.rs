@@ -7,6 +7,7 @@ mod demo;
 mod ending;
 mod evaluate;
 mod handover_command;
+mod keys;
 mod people;
 mod restore;
 mod serve;
@@ -43,6 +44,8 @@ enum Command {
     Restore(restore::Arguments),
     /// Looks at everything in a data folder and changes nothing
     CheckStore(check_store::Arguments),
+    /// Lists the signing keys, or makes a new one in place of the present
+    Keys(keys::Arguments),
     /// Lists people, makes the first administrator, or gives someone a way back in
     People(people::Arguments),
 }
@@ -64,6 +67,7 @@ fn main() -> ExitCode {
         Command::Backup(arguments) => backup::run(&arguments),
         Command::Restore(arguments) => restore::run(&arguments),
         Command::CheckStore(arguments) => check_store::run(&arguments),
+        Command::Keys(arguments) => keys::run(&arguments),
         Command::People(arguments) => people::run(&arguments),
     };
     ended.into_exit_code()

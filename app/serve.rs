@@ -2,12 +2,16 @@
 
 use crate::clock;
 use crate::ending::Ending;
+use crate::keys;
 use clap::Args;
 use std::net::SocketAddr;
 use std::path::{Path, PathBuf};
 use std::sync::Arc;
 use store::Store;
 use web::App;
+
+/// How a store that cannot be written is labelled, on the command line and under the sign-in form.
+const ONLY_READ: &str = "This store was opened only to be read: nothing can be written to its folder. Records can be looked at; nothing can be recorded.";
 
 #[derive(Args)]
 pub struct Arguments {
@@ -28,16 +32,19 @@ pub fn run(arguments: &Arguments) -> Ending {
         Ok(store) => store,
         Err(fault) => return Ending::could_not(fault),
     };
-    if let Err(why) = load_built_in(&store) {
+    let only_read = store.only_read().map(str::to_owned);
+    if only_read.is_none()
+        && let Err(why) = load_built_in(&store)
+    {
         return Ending::could_not(why);
     }
-    serve(store, &arguments.data, arguments.listen, arguments.behind_tls, None, |address, store| {
-        match store.setup_code().wait() {
-            Ok(Some(code)) => {
-                println!("This store is empty. Open {address}, and set it up with this one-time code: {code}");
-            }
-            Ok(None) => println!("Asleft is at {address}"),
-            Err(fault) => eprintln!("asleft: {fault}"),
+    let label = only_read.is_some().then(|| ONLY_READ.to_owned());
+    serve(store, &arguments.data, arguments.listen, arguments.behind_tls, label, |address, store| {
+        if let Some(why) = &only_read {
+            println!("{ONLY_READ} The reason: {why}");
+            println!("Asleft is at {address}");
+        } else {
+            tell(address, store);
         }
         if arguments.behind_tls {
             println!("Pages work only through the TLS proxy in front of this address.");
@@ -52,6 +59,38 @@ pub fn run(arguments: &Arguments) -> Ending {
             );
         }
     })
+}
+
+/// Says where the pages are, or how to set up an empty store.
+fn tell(address: &str, store: &Store) {
+    match store.setup_code().wait() {
+        Ok(Some(code)) => {
+            println!("This store is empty. Open {address}, and set it up with this one-time code: {code}");
+        }
+        Ok(None) => println!("Asleft is at {address}"),
+        Err(fault) => eprintln!("asleft: {fault}"),
+    }
+}
+
+/// The key that packages are signed with; where nothing can be written it may be missing, and there are no packages.
+fn signing_key(store: &Store, data: &Path) -> Result<Option<PathBuf>, String> {
+    let path = data.join(handover::key::rotation::IN_USE);
+    if store.only_read().is_some() {
+        return Ok(match handover::key::load(&path) {
+            Ok(_) => Some(path),
+            Err(fault) => {
+                eprintln!("asleft: no packages can be made: {fault}");
+                None
+            }
+        });
+    }
+    keys::settle(store, data)?;
+    // Made at the first start, so that the first package does not have to wait for it.
+    handover::key::load_or_create(&path).map_err(|f| f.to_string())?;
+    if let Some(strange) = keys::strange(store, data)? {
+        eprintln!("asleft: {strange} `asleft keys list` shows both.");
+    }
+    Ok(Some(path))
 }
 
 /// Loads the built-in procedure where the store does not have this version yet.
@@ -80,11 +119,10 @@ pub fn serve(
     welcome: Option<String>,
     ready: impl FnOnce(&str, &Store),
 ) -> Ending {
-    // The key is made at the first start, so that the first package does not have to wait for it.
-    let key = data.join("signing-key.pem");
-    if let Err(fault) = handover::key::load_or_create(&key) {
-        return Ending::could_not(fault);
-    }
+    let key = match signing_key(&store, data) {
+        Ok(key) => key,
+        Err(why) => return Ending::could_not(why),
+    };
     let runtime = match tokio::runtime::Builder::new_multi_thread().enable_all().build() {
         Ok(runtime) => runtime,
         Err(fault) => return Ending::could_not(fault),
@@ -93,7 +131,7 @@ pub fn serve(
         store: store.clone(),
         clock: Arc::new(clock::now),
         ids: Arc::new(clock::fresh_id),
-        signing_key: Some(Arc::from(key.as_path())),
+        signing_key: key.as_deref().map(Arc::from),
         secure,
         welcome: welcome.map(Arc::from),
     };

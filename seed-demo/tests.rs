@@ -5,12 +5,16 @@ use crate::{Demo, DemoFault, load, site};
 use commissioning::journal::Chain;
 use commissioning::journal::chain::verify_chain;
 use commissioning::judge::{self, Counts, Judged};
+use commissioning::record::canonical::RecordFile;
 use commissioning::record::{Severity, Status};
 use commissioning::{Timestamp, agenda};
 use engineering::Verdict;
 use std::collections::BTreeSet;
 use std::sync::OnceLock;
 use store::{DriveView, SignIn, StatusKey, Store};
+
+#[path = "../app/commissioning/record/canonical/schema/validator.rs"]
+mod validator;
 
 const TAGS: [&str; 8] = ["F-710", "P-620", "V-510", "H-410", "S-320", "P-210", "M-150", "P-110"];
 
@@ -95,7 +99,10 @@ fn the_wet_motor_the_contradiction_and_the_returned_record_show_what_they_are_fo
     let stops = |f: &commissioning::record::Finding| f.is_open() && f.severity == Severity::StopsStartUp;
     assert!(wet.drive.record.as_ref().unwrap().findings.values().any(stops));
 
-    assert_eq!(that_are(&judged("M-150"), Verdict::Outside), BTreeSet::from(["power-balance"]));
+    let contradiction = judged("M-150");
+    assert_eq!(that_are(&contradiction, Verdict::Outside), BTreeSet::from(["misreading", "power-balance"]));
+    let told = contradiction.iter().find(|j| j.outcome.check == "misreading").expect("examined");
+    assert_eq!(told.outcome.notes[0], "1 · Power read as 7.5 kW; 7.5 hp would fit: the unit.");
 
     assert_eq!(that_are(&judged("P-620"), Verdict::Outside), BTreeSet::from(["stop-time"]));
     let returned = view("P-620");
@@ -123,7 +130,7 @@ fn the_wet_motor_the_contradiction_and_the_returned_record_show_what_they_are_fo
 #[test]
 fn the_plates_agree_with_themselves_except_one() {
     for tag in TAGS.iter().filter(|t| **t != "M-150") {
-        for check in ["power-balance", "pole-pairs"] {
+        for check in ["power-balance", "pole-pairs", "misreading"] {
             for one in judged(tag).iter().filter(|j| j.outcome.check == check) {
                 assert_eq!(one.outcome.verdict, Verdict::Within, "{tag} {check}: {}", one.outcome.summary);
             }
@@ -242,4 +249,21 @@ fn every_key_of_the_tables_is_known() {
         let id = crate::gear::instrument(mark);
         assert!(demo().0.installation_blocking().unwrap().instruments.contains_key(&id), "no instrument {mark}");
     }
+}
+
+/// docs/record-format.schema.json describes every record of the demo, and is met with nearly whole in them.
+#[test]
+fn every_record_of_the_demo_is_as_the_published_schema_says() {
+    let schema = validator::Schema::of(include_str!("../docs/record-format.schema.json"));
+    let mut met = BTreeSet::new();
+    for tag in TAGS {
+        let file = RecordFile::shown(&view(tag).view()).to_json();
+        let value = serde_json::from_str(&file).unwrap();
+        assert_eq!(schema.faults(&value), Vec::<String>::new(), "{tag}");
+        schema.meet(&value, &mut met);
+    }
+    let parts = ["accuracy/", "item/", "step/", "signature/", "photo/", "verdict/"];
+    let never: Vec<String> = schema.described().difference(&met).cloned().collect();
+    let surprising: Vec<&String> = never.iter().filter(|n| parts.iter().any(|p| n.starts_with(p))).collect();
+    assert_eq!(surprising, Vec::<&String>::new());
 }

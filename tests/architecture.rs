@@ -12,7 +12,8 @@ const EDGES: &[(&str, &[&str])] = &[
     ("app/drawing", &["engineering", "commissioning"]),
     ("app/store", &["engineering", "commissioning"]),
     ("app/handover", &["engineering", "commissioning", "drawing"]),
-    ("app/web", &["engineering", "commissioning", "drawing", "store", "handover"]),
+    ("app/exchange", &["engineering", "commissioning"]),
+    ("app/web", &["engineering", "commissioning", "drawing", "store", "handover", "exchange"]),
     ("seed-demo", &["engineering", "commissioning", "store"]),
 ];
 
@@ -97,6 +98,7 @@ fn what_a_layer_must_not_know_is_not_in_its_manifest() {
         ("app/drawing", &["rusqlite", "axum", "maud", "typst"]),
         ("app/handover", &["rusqlite", "axum", "maud", "store"]),
         ("app/store", &["axum", "maud", "typst"]),
+        ("app/exchange", &["rusqlite", "axum", "maud", "typst", "store", "handover"]),
         ("app/web", &["rusqlite", "typst"]),
     ] {
         let manifest = fs::read_to_string(root().join(path).join("Cargo.toml")).expect("manifest");

@@ -68,3 +68,23 @@ fn expressions_are_read_as_they_are_written() {
     assert!(!acceptable("MIT AND GPL-3.0-only"));
     assert!(!acceptable(""));
 }
+
+/// `deny.toml` is what cargo-deny reads where it is installed: it must say what this test says.
+#[test]
+fn the_list_for_cargo_deny_is_this_list() {
+    let path = concat!(env!("CARGO_MANIFEST_DIR"), "/deny.toml");
+    let deny: toml::Table = toml::from_str(&std::fs::read_to_string(path).expect("deny.toml")).expect("TOML");
+    let allowed = deny["licenses"]["allow"].as_array().expect("a list").iter();
+    let allowed: BTreeSet<&str> = allowed.map(|l| l.as_str().expect("text")).collect();
+    assert_eq!(allowed, ACCEPTED.iter().copied().collect());
+    for kind in ["unknown-registry", "unknown-git"] {
+        assert_eq!(deny["sources"][kind].as_str(), Some("deny"), "{kind}");
+    }
+    let lock = std::fs::read_to_string(concat!(env!("CARGO_MANIFEST_DIR"), "/Cargo.lock")).expect("Cargo.lock");
+    let banned = deny["bans"]["deny"].as_array().expect("a list");
+    assert!(!banned.is_empty());
+    for entry in banned {
+        let name = entry["crate"].as_str().expect("a name");
+        assert!(!lock.contains(&format!("name = \"{name}\"\n")), "{name} is banned and built in");
+    }
+}

@@ -6,6 +6,7 @@ pub(crate) mod step_parts;
 #[cfg(test)]
 mod tests;
 
+pub use hold::unmet_of;
 pub use parameters::{Difference, differs, left_of_group};
 
 use crate::judge::View;

@@ -12,6 +12,7 @@ mod holds;
 mod instruments;
 mod isolation;
 mod isolation_proof;
+mod keys;
 pub(crate) mod parameters;
 mod people;
 mod plants;
@@ -27,6 +28,7 @@ mod writer;
 
 pub(crate) use fields::field_at;
 pub use roles::needed as roles_needed;
+pub use words::drive_tag;
 
 #[cfg(test)]
 mod tests;
@@ -89,6 +91,7 @@ pub fn decide(act: &Act, around: &Surroundings<'_>) -> Result<Vec<Event>, Refusa
         Deed::Sign { meaning, digest, .. } => signing::sign(act, around, *meaning, digest),
         Deed::Return { reason, .. } => signing::send_back(act, around, reason),
         Deed::Reopen { reason, .. } => signing::reopen(act, around, reason),
+        Deed::RotateKey { .. } => keys::rotate(act, around),
     }
 }
 

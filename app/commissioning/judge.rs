@@ -95,7 +95,7 @@ fn both_columns(view: &View<'_>, functions: &[&str], run: impl Fn(ParameterColum
 }
 
 /// Runs one check of the catalogue as shown at a step.
-fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
+pub(crate) fn run(view: &View<'_>, name: &str, step: &str) -> Vec<Judged> {
     let Some((.., runner)) = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name) else {
         return Vec::new();
     };
@@ -146,6 +146,13 @@ pub fn all(view: &View<'_>) -> Vec<Judged> {
 fn is_the_same_anywhere(name: &str) -> bool {
     let runner = catalogue::CATALOGUE.iter().find(|(known, ..)| *known == name).map(|(.., runner)| runner);
     matches!(runner, Some(catalogue::Runner::Anywhere(_)))
+}
+
+/// One check of the catalogue, as shown at the first step that has it.
+#[must_use]
+pub fn one(view: &View<'_>, name: &str) -> Vec<Judged> {
+    let at = view.procedure.steps().find(|(_, s)| s.checks.iter().any(|c| c == name));
+    run(view, name, at.map_or("", |(_, s)| s.id.as_str()))
 }
 
 /// The checks shown at a step.

@@ -111,6 +111,23 @@ pub struct Instrument {
     pub active: bool,
 }
 
+/// A change of the installation's signing key: public keys and both signatures in lower-case hexadecimal.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct KeyChange {
+    /// The key that was replaced.
+    pub old: String,
+    /// The key in its place.
+    pub new: String,
+    /// Signature of the old key over the change.
+    pub by_old: String,
+    /// Signature of the new key over the change.
+    pub by_new: String,
+    /// Who changed it.
+    pub by_name: String,
+    /// When.
+    pub received: Timestamp,
+}
+
 /// The installation's people, instruments and procedures: the fold of its own chain.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Installation {
@@ -128,6 +145,8 @@ pub struct Installation {
     pub procedures: BTreeMap<u32, std::sync::Arc<crate::procedure::Procedure>>,
     /// Sites by tag.
     pub sites: BTreeMap<String, crate::SiteId>,
+    /// Every change of the signing key, oldest first; former keys stay known, so that old packages can be told.
+    pub key_changes: Vec<KeyChange>,
     /// When the chain was last added to.
     pub last_change: Option<Timestamp>,
 }

@@ -84,6 +84,12 @@ pub enum Condition {
         /// Names in the catalogue.
         checks: Vec<String>,
     },
+    /// None of these checks is outside, unless a finding about it was accepted by name; one that is not assessed
+    /// for want of an input does not hold.
+    NoneOutside {
+        /// Names in the catalogue.
+        checks: Vec<String>,
+    },
 }
 
 /// A step: one thing to do.

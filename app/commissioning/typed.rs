@@ -44,10 +44,10 @@ impl Typed {
         Ok(Self { text, unit, si: Some(numeral::twelve_digits(coherent)) })
     }
 
-    /// The number in the coherent unit.
+    /// The number in the coherent unit; what a damaged record holds in its place, such as `inf`, is none.
     #[must_use]
     pub fn number(&self) -> Option<f64> {
-        self.si.as_deref().and_then(|s| s.parse().ok())
+        self.si.as_deref().and_then(|s| s.parse().ok()).filter(|number: &f64| number.is_finite())
     }
 
     /// The number in the unit that was picked.
@@ -116,5 +116,12 @@ mod tests {
             "the unit must belong to the kind all the same"
         );
         assert!(Typed::quantity("5k", "V", Kind::Voltage).is_err());
+    }
+
+    #[test]
+    fn a_number_that_is_none_counts_as_not_there() {
+        for none in ["NaN", "inf", "-inf", "1e999", "words", ""] {
+            assert_eq!(Typed { si: Some(none.to_owned()), ..resistance("5", "Ω") }.number(), None, "{none}");
+        }
     }
 }

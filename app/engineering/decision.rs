@@ -95,6 +95,7 @@ mod tests {
     use super::*;
     use crate::quantity::Resistance;
     use crate::reading::Accuracy;
+    use proptest::prelude::*;
 
     fn ohms(value: f64, half_width: f64) -> Measured {
         let accuracy = Accuracy {
@@ -122,5 +123,55 @@ mod tests {
         let bare = Measured::direct(&Reading::bare(Resistance::from_ohms(100.0)));
         assert_eq!(bare.at_least(5.0), Verdict::Marginal);
         assert_eq!(bare.at_least(500.0), Verdict::Outside);
+    }
+
+    /// A reading with the instrument's figures, the doubt of an unknown one where asked.
+    fn with(value: f64, percent: f64, digit: f64, doubted: bool) -> Measured {
+        let accuracy = Accuracy {
+            percent_of_reading: percent,
+            digits: 1.0,
+            resolution: digit,
+            percent_of_full_scale: 0.0,
+            full_scale: 0.0,
+        };
+        let measured = Measured::direct(&Reading::with(Resistance::from_ohms(value), accuracy));
+        Measured { doubt: doubted.then(|| "no instrument is named".to_owned()), ..measured }
+    }
+
+    fn every_way(measured: &Measured, low: f64, high: f64) -> [Verdict; 3] {
+        [measured.at_least(low), measured.at_most(high), measured.between(low, high)]
+    }
+
+    proptest! {
+        #![proptest_config(ProptestConfig { failure_persistence: None, ..ProptestConfig::default() })]
+
+        #[test]
+        fn a_better_instrument_keeps_every_definite_verdict(value in -100.0..100.0f64, low in -100.0..100.0f64, width in 0.0..50.0f64, percent in 0.0..20.0f64, digit in 0.0..5.0f64, better in 0.0..=1.0f64, doubted in prop::bool::ANY) {
+            let (worse, good) = (with(value, percent, digit, doubted), with(value, percent * better, digit * better, doubted));
+            prop_assert!(good.expanded <= worse.expanded);
+            for (before, after) in every_way(&worse, low, low + width).into_iter().zip(every_way(&good, low, low + width)) {
+                prop_assert!(before == Verdict::Marginal || after == before, "{before:?} became {after:?}");
+                prop_assert!(!doubted || after != Verdict::Within);
+            }
+        }
+
+        #[test]
+        fn a_wider_limit_is_never_stricter(value in -100.0..100.0f64, low in -100.0..100.0f64, width in 0.0..50.0f64, wider in (0.0..50.0f64, 0.0..50.0f64), percent in 0.0..20.0f64, doubted in prop::bool::ANY) {
+            let reading = with(value, percent, 0.0, doubted);
+            let narrow = every_way(&reading, low, low + width);
+            let wide = every_way(&reading, low - wider.0, low + width + wider.1);
+            for (before, after) in narrow.into_iter().zip(wide) {
+                prop_assert_eq!(after.worse(before), before, "{:?} became {:?}", before, after);
+            }
+        }
+
+        #[test]
+        fn several_terms_are_never_surer_than_one_of_them(value in -100.0..100.0f64, terms in prop::collection::vec(0.0..10.0f64, 1..5)) {
+            let all: Vec<(Option<f64>, Option<String>)> = terms.iter().map(|u| (Some(*u), None)).collect();
+            let combined = Measured::combined(value, &all);
+            prop_assert!(terms.iter().all(|u| combined.expanded >= COMBINED_TERMS * u * (1.0 - 1e-12)));
+            let doubted: Vec<_> = all.iter().cloned().chain([(None, Some("no instrument is named".to_owned()))]).collect();
+            prop_assert_ne!(Measured::combined(value, &doubted).at_least(value - 1e6), Verdict::Within);
+        }
     }
 }

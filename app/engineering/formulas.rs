@@ -12,6 +12,7 @@ pub mod dew_point;
 pub mod distortion_limit;
 pub mod efficiency_class;
 pub mod equivalent_circuit;
+pub mod excess_current;
 pub mod fault_current;
 pub mod full_load_table;
 pub mod installation_insulation;

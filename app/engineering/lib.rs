@@ -13,6 +13,7 @@ pub mod limit_rule;
 pub mod motion;
 pub mod outcome;
 pub mod overload;
+pub mod plate;
 pub mod printed;
 pub mod quantity;
 pub mod reading;
@@ -30,4 +31,4 @@ pub use source::{Source, Status};
 pub use unit::{Kind, Unit};
 
 /// Version of the check catalogue; kept with every verdict. Raise it when any check could answer differently.
-pub const CATALOGUE_VERSION: u32 = 1;
+pub const CATALOGUE_VERSION: u32 = 2;

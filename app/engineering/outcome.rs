@@ -285,10 +285,16 @@ impl OutcomeBuilder {
         let said = &self.outcome;
         let broken = said.figures.iter().any(|f| none(&f.value))
             || [&said.summary, &said.limit, &said.needed].into_iter().any(|text| none(text))
-            || said.working.iter().any(|line| none(&line.numbers) || none(&line.result))
+            || said.working.iter().any(|line| none(&line.what) || none(&line.numbers) || none(&line.result))
+            || said.notes.iter().any(|note| none(note))
+            || said.assumed.iter().any(|a| none(&a.taken))
+            || said.missing.iter().any(|m| none(&m.what))
             || said.rule.as_ref().is_some_and(|r| !r.is_finite());
         if broken {
             self.outcome.figures.retain(|f| !none(&f.value));
+            self.outcome.notes.retain(|note| !none(note));
+            self.outcome.assumed.retain(|a| !none(&a.taken));
+            self.outcome.missing.retain(|m| !none(&m.what));
             self.outcome.rule = None;
             self.outcome.working.clear();
             self.outcome.needed.clear();
@@ -314,11 +320,15 @@ mod tests {
     #[test]
     fn no_text_leaves_with_a_number_that_is_none() {
         let broken = significant(f64::NAN, 3);
-        let fill: [fn(&mut OutcomeBuilder, &str); 4] = [
+        let fill: [fn(&mut OutcomeBuilder, &str); 8] = [
             |b, text| b.limit(text),
             |b, text| b.needed(text),
             |b, text| b.line("what", "a/b", text, "1"),
             |b, text| b.line("what", "a/b", "0/0", text),
+            |b, text| b.line(text, "a/b", "0/0", "1"),
+            |b, text| b.note(text),
+            |b, text| b.assume(None, (), "what", text),
+            |b, text| assert!(b.need(None::<()>, text).is_none()),
         ];
         for fill in fill {
             let mut b = OutcomeBuilder::new("x");

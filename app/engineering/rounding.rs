@@ -24,6 +24,10 @@ pub fn significant(value: f64, digits: u32) -> String {
         return "0".to_owned();
     }
     let rounded = to_significant(value, digits);
+    if !rounded.is_finite() {
+        // Rounded up beyond the largest number there is.
+        return NOT_A_NUMBER.to_owned();
+    }
     let magnitude = rounded.abs();
     if !(1e-4..1e9).contains(&magnitude) {
         let precision = usize::try_from(digits.max(1) - 1).unwrap_or(0);
@@ -56,5 +60,6 @@ mod tests {
         assert_eq!(significant(-133.04, 4), "-133.0");
         assert_eq!(significant(0.99999, 3), "1.00");
         assert_eq!(significant(2.0e-7, 2), "2.0e-7");
+        assert_eq!(significant(f64::MAX, 2), NOT_A_NUMBER);
     }
 }

@@ -1,5 +1,7 @@
 //! The installation's signing key: an Ed25519 key in a file that only its owner reads, never in a package.
 
+pub mod rotation;
+
 use ed25519_dalek::pkcs8::spki::der::pem::LineEnding;
 use ed25519_dalek::pkcs8::{DecodePrivateKey, DecodePublicKey, EncodePrivateKey, EncodePublicKey};
 use ed25519_dalek::{Signer, SigningKey, Verifier, VerifyingKey};

@@ -1,5 +1,6 @@
-//! Verifies a package without the store: sums, signature, chains, record and signatures; then what would be judged today.
+//! Verifies a package without the store: sums, signature, document, chains, record, signatures; then what would be judged today.
 
+mod attached;
 mod chains;
 mod differences;
 
@@ -88,6 +89,7 @@ fn verify_files(
     report.files = files.len();
     check_sums(files, report);
     check_signature(files, report);
+    attached::check(files, report);
     let chains = chains::check(files, report);
     let Some(file) = read_record(files, report) else { return };
     report.tag.clone_from(&file.drive.tag);

@@ -7,6 +7,7 @@ mod copy;
 mod fault;
 mod report;
 mod restore;
+mod signatures;
 mod space;
 
 pub use backup::BackupReceipt;

@@ -2,7 +2,7 @@
 
 use crate::answer::Answer;
 use crate::fault::{Fault, ReadFault};
-use crate::opening::{Folder, MIGRATIONS, OpenFault, Purpose, Throwaway, bring_up_to_date, connect, schema_of};
+use crate::opening::{Ground, MIGRATIONS, OpenFault, Purpose, bring_up_to_date, connect};
 use crate::photos;
 use crate::states::Shelves;
 use crate::work::{Crew, Desk, Writer, WriterHandle};
@@ -25,24 +25,24 @@ pub struct Store {
     inner: Arc<Inner>,
 }
 
-/// Dropped in this order: threads first, then the lock, then a throw-away folder. The writing connection closes last
+/// Dropped in this order: threads first, then the ground with its lock and a throw-away folder. The writing connection closes last
 /// and alone: of two that close at one time neither finds itself the last, and the write-ahead log would be left.
 struct Inner {
     readers: Crew<Desk>,
     hashers: Crew<()>,
     keepers: Crew<()>,
     writer: Writer,
-    folder: Folder,
-    _throwaway: Option<Throwaway>,
+    ground: Ground,
 }
 
 impl Store {
-    /// Opens the store in a folder, making both if they are not there. One process at a time.
+    /// Opens the store in a folder, making both if they are not there. One process at a time. A store that is there but
+    /// cannot be written is opened to be read: `only_read` says so.
     ///
     /// # Errors
     /// In a sentence for whoever started the program: in use, newer, not ours, or broken.
     pub fn open(folder: &Path, now: Timestamp) -> Result<Self, OpenFault> {
-        Self::open_in(Folder::take(folder)?, None, now)
+        Self::open_on(Ground::in_folder(folder)?, now)
     }
 
     /// Opens a store in a throw-away folder, in memory where the system can; it goes with the last handle.
@@ -50,19 +50,19 @@ impl Store {
     /// # Errors
     /// As for `open`.
     pub fn in_memory(now: Timestamp) -> Result<Self, OpenFault> {
-        let throwaway = Throwaway::new()?;
-        Self::open_in(Folder::take(&throwaway.0)?, Some(throwaway), now)
+        Self::open_on(Ground::in_memory()?, now)
     }
 
-    fn open_in(folder: Folder, throwaway: Option<Throwaway>, now: Timestamp) -> Result<Self, OpenFault> {
+    fn open_on(ground: Ground, now: Timestamp) -> Result<Self, OpenFault> {
         if rusqlite::version_number() < OLDEST_SQLITE {
             return Err(OpenFault::OldSqlite(rusqlite::version().to_owned()));
         }
-        let file = folder.database()?;
-        schema_of(&file, MIGRATIONS.len())?;
+        let file = ground.database.clone();
         let mut connection = connect(&file, Purpose::Write)?;
-        bring_up_to_date(&mut connection, MIGRATIONS, &folder.path().join("backups"), now)?;
-        photos::settle_after_a_crash(&connection, &folder.path().join("photos"), now)?;
+        bring_up_to_date(&mut connection, MIGRATIONS, &ground.copies, now)?;
+        if ground.only_read.is_none() {
+            photos::settle_after_a_crash(&connection, &ground.folder.path().join("photos"), now)?;
+        }
 
         let shelves = Arc::new(Shelves::default());
         let mut readers = Vec::new();
@@ -79,8 +79,7 @@ impl Store {
             readers: Crew::start("store-reader", readers)?,
             hashers: Crew::start("store-hasher", vec![(); HASHERS])?,
             keepers: Crew::start("store-keeper", vec![(); KEEPERS])?,
-            folder,
-            _throwaway: throwaway,
+            ground,
         };
         Ok(Self { inner: Arc::new(inner) })
     }
@@ -88,13 +87,25 @@ impl Store {
     /// The data folder.
     #[must_use]
     pub fn folder(&self) -> &Path {
-        self.inner.folder.path()
+        self.inner.ground.folder.path()
     }
 
-    /// Whether writing stopped after a fault of the disk; the next act tries again.
+    /// The database file that is worked with: the folder's own, or a copy where that can only be read.
+    pub(crate) fn database(&self) -> &Path {
+        &self.inner.ground.database
+    }
+
+    /// Whether nothing is recorded at present: writing stopped after a fault of the disk, and the next act tries again,
+    /// or the store was opened to be read.
     #[must_use]
     pub fn is_read_only(&self) -> bool {
-        self.inner.writer.is_read_only()
+        self.only_read().is_some() || self.inner.writer.is_read_only()
+    }
+
+    /// Why this store was opened only to be read, if it was: nothing can be written to its folder.
+    #[must_use]
+    pub fn only_read(&self) -> Option<&str> {
+        self.inner.ground.only_read.as_deref()
     }
 
     /// Reads on one of the reading connections, at one moment.
@@ -111,9 +122,14 @@ impl Store {
         answer
     }
 
-    /// Hands in work for the writing thread.
+    /// Hands in work for the writing thread that may be forgotten with a copy: sessions, attempts, receipts.
     pub(crate) fn writing(&self) -> WriterHandle {
         self.inner.writer.handle()
+    }
+
+    /// Hands in work for the writing thread that is to stay; refused where the store can only be read.
+    pub(crate) fn recording(&self) -> WriterHandle {
+        if self.only_read().is_some() { WriterHandle::refusing() } else { self.writing() }
     }
 
     /// Runs on a thread for password hashes.

@@ -2,6 +2,7 @@
 
 mod acts;
 mod crash;
+mod faults;
 mod guards;
 mod keeping;
 mod lists;
@@ -11,4 +12,5 @@ mod people;
 mod photos;
 mod plans;
 mod property;
+mod reading;
 mod stage;

@@ -13,9 +13,9 @@ mod svg;
 mod verdict;
 
 pub use button::{button, button_named, link_button, main_button, main_link};
-pub use caution::{caution, notice};
-pub use field::{FieldInput, InputKind, date_kind, field, input_id, state_line};
-pub use form::{form, live_form, seal};
+pub use caution::{caution, notice, saved};
+pub use field::{FieldInput, InputKind, date_kind, earlier_values, field, input_id, state_line, who_when};
+pub use form::{form, kept_form, live_form, seal};
 pub use list::{empty, facts, pager, search_box};
 pub use plate::{Plate, plate, small_plate};
 pub use shell::Page;

@@ -23,7 +23,9 @@ pub mod routes;
 pub mod serve;
 pub mod sessions;
 pub mod sheet_form;
+pub mod sheet_words;
 pub mod static_files;
+pub mod unanswered;
 pub mod verdicts;
 pub mod visitor;
 

@@ -1,8 +1,12 @@
 //! Every link: one function per address of `routes.rs`; nothing else spells a path.
 
+mod record;
+
+pub use record::*;
+
 use crate::static_files;
+use commissioning::InstrumentId;
 use commissioning::plant::Sheet;
-use commissioning::{FindingId, InstrumentId};
 
 /// Encodes a segment of a path or a value of a query.
 #[must_use]
@@ -205,164 +209,6 @@ pub fn sheet_live(site: &str, drive: &str, sheet: Sheet) -> String {
 #[must_use]
 pub fn queue() -> String {
     "/queue".to_owned()
-}
-
-/// Begin a drive's record.
-#[must_use]
-pub fn begin(site: &str, drive: &str) -> String {
-    format!("{}/begin", self::drive(site, drive))
-}
-
-/// A step.
-#[must_use]
-pub fn step(site: &str, drive: &str, step: &str) -> String {
-    format!("{}/steps/{}", self::drive(site, drive), encode(step))
-}
-
-/// The live verdicts of a step.
-#[must_use]
-pub fn step_live(site: &str, drive: &str, step: &str) -> String {
-    format!("{}/live", self::step(site, drive, step))
-}
-
-/// Settle a step without its entries; `how` as the form names it.
-#[must_use]
-pub fn otherwise(site: &str, drive: &str, step: &str, how: &str) -> String {
-    let page = format!("{}/otherwise", self::step(site, drive, step));
-    if how.is_empty() { page } else { format!("{page}?how={}", encode(how)) }
-}
-
-/// Take back that a step was settled otherwise.
-#[must_use]
-pub fn resume(site: &str, drive: &str, step: &str) -> String {
-    format!("{}/resume", self::step(site, drive, step))
-}
-
-/// The hold point before a phase.
-#[must_use]
-pub fn hold(site: &str, drive: &str, phase: &str) -> String {
-    format!("{}/hold/{}", self::drive(site, drive), encode(phase))
-}
-
-/// The parameter record.
-#[must_use]
-pub fn parameters(site: &str, drive: &str) -> String {
-    format!("{}/parameters", self::drive(site, drive))
-}
-
-/// A group of the parameter record, by its address name.
-#[must_use]
-pub fn parameter_group(site: &str, drive: &str, group: &str) -> String {
-    format!("{}/{}", parameters(site, drive), encode(group))
-}
-
-/// The live verdicts of a group of the parameter record.
-#[must_use]
-pub fn parameter_group_live(site: &str, drive: &str, group: &str) -> String {
-    format!("{}/live", parameter_group(site, drive, group))
-}
-
-/// Add a free row to the parameter record.
-#[must_use]
-pub fn parameter_rows(site: &str, drive: &str) -> String {
-    format!("{}/rows", parameters(site, drive))
-}
-
-/// Findings.
-#[must_use]
-pub fn findings(site: &str, drive: &str) -> String {
-    format!("{}/findings", self::drive(site, drive))
-}
-
-/// A finding.
-#[must_use]
-pub fn finding(site: &str, drive: &str, finding: FindingId) -> String {
-    format!("{}/{finding}", findings(site, drive))
-}
-
-/// Settle a finding.
-#[must_use]
-pub fn settle_finding(site: &str, drive: &str, finding: FindingId) -> String {
-    format!("{}/settle", self::finding(site, drive, finding))
-}
-
-/// Accept a finding as it is.
-#[must_use]
-pub fn accept_finding(site: &str, drive: &str, finding: FindingId) -> String {
-    format!("{}/accept", self::finding(site, drive, finding))
-}
-
-/// The record, read from top to bottom.
-#[must_use]
-pub fn record(site: &str, drive: &str) -> String {
-    format!("{}/record", self::drive(site, drive))
-}
-
-/// The record with the working of every verdict, as it is printed.
-#[must_use]
-pub fn record_in_full(site: &str, drive: &str) -> String {
-    format!("{}?working=all", record(site, drive))
-}
-
-/// A step in the record.
-#[must_use]
-pub fn record_at(site: &str, drive: &str, step: &str) -> String {
-    format!("{}#step-{}", record(site, drive), encode(step))
-}
-
-/// Make a remark.
-#[must_use]
-pub fn remarks(site: &str, drive: &str) -> String {
-    format!("{}/remarks", self::drive(site, drive))
-}
-
-/// Sign as performed and recorded.
-#[must_use]
-pub fn sign(site: &str, drive: &str) -> String {
-    format!("{}/sign", self::drive(site, drive))
-}
-
-/// Sign as reviewed and accepted.
-#[must_use]
-pub fn accept(site: &str, drive: &str) -> String {
-    format!("{}/accept", self::drive(site, drive))
-}
-
-/// Return a signed record.
-#[must_use]
-pub fn send_back(site: &str, drive: &str) -> String {
-    format!("{}/return", self::drive(site, drive))
-}
-
-/// Reopen an accepted record.
-#[must_use]
-pub fn reopen(site: &str, drive: &str) -> String {
-    format!("{}/reopen", self::drive(site, drive))
-}
-
-/// The handover package.
-#[must_use]
-pub fn package(site: &str, drive: &str) -> String {
-    format!("{}/package", self::drive(site, drive))
-}
-
-/// The handover package as one file.
-#[must_use]
-pub fn package_file(site: &str, drive: &str) -> String {
-    format!("{}/download", package(site, drive))
-}
-
-/// The journal of a drive.
-#[must_use]
-pub fn journal(site: &str, drive: &str, page: u32) -> String {
-    let first = format!("{}/journal", self::drive(site, drive));
-    if page > 1 { format!("{first}?page={page}") } else { first }
-}
-
-/// The journal of a drive as a file.
-#[must_use]
-pub fn journal_file(site: &str, drive: &str) -> String {
-    format!("{}/journal/events", self::drive(site, drive))
 }
 
 /// A picture, turned upright and stripped.

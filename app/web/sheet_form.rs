@@ -4,7 +4,7 @@ use crate::components::{FieldInput, field, input_id};
 use crate::posted::Posted;
 use commissioning::journal::Change;
 use commissioning::plant::{Field, FieldKind, Place, Sheet, Slot, fields};
-use commissioning::{FieldError, Timestamp, Typed};
+use commissioning::{FieldError, Typed};
 use maud::{Markup, html};
 use std::collections::BTreeMap;
 
@@ -89,18 +89,18 @@ fn unit_of(f: &Field, posted: &Posted, name: &str) -> String {
 
 /// All inputs of a sheet, group by group. Rating columns come first: everything else is judged by them.
 #[must_use]
-pub fn inputs(sheet: Sheet, columns: u8, values: &Values, back: &Back<'_>, now: Timestamp) -> Markup {
+pub fn inputs(sheet: Sheet, columns: u8, values: &Values, back: &Back<'_>) -> Markup {
     html! {
         @for (name, of_group) in groups(fields::in_columns(sheet)) {
             fieldset.group.columns data-columns=(columns) {
                 legend { (name) }
                 @if columns > 1 { div.heads aria-hidden="true" { @for c in 0..columns { span { "column " (c + 1) } } } }
                 @for f in of_group {
-                    div.across { @for c in 0..columns { (one(f, &Place::in_column(sheet, c, f.key), (columns > 1).then_some(c), values, back, now)) } }
+                    div.across { @for c in 0..columns { (one(f, &Place::in_column(sheet, c, f.key), (columns > 1).then_some(c), values, back)) } }
                 }
             }
         }
-        @for group in groups(fields::of(sheet)) { (plain_group(sheet, &group, values, back, now)) }
+        @for group in groups(fields::of(sheet)) { (plain_group(sheet, &group, values, back)) }
     }
 }
 
@@ -109,18 +109,17 @@ fn plain_group(
     (name, of_group): &(&str, Vec<&'static Field>),
     values: &Values,
     back: &Back<'_>,
-    now: Timestamp,
 ) -> Markup {
     html! {
         fieldset.group {
             @if !name.is_empty() { legend { (name) } }
-            div.fields { @for f in of_group { (one(f, &Place::new(sheet, f.key), None, values, back, now)) } }
+            div.fields { @for f in of_group { (one(f, &Place::new(sheet, f.key), None, values, back)) } }
         }
     }
 }
 
-fn one(f: &Field, place: &Place, column: Option<u8>, values: &Values, back: &Back<'_>, now: Timestamp) -> Markup {
-    let mut input = FieldInput::of(f, place.to_string()).standing(values.get(place), now);
+fn one(f: &Field, place: &Place, column: Option<u8>, values: &Values, back: &Back<'_>) -> Markup {
+    let mut input = FieldInput::of(f, place.to_string()).standing(values.get(place));
     if let Some(column) = column {
         input.label = format!("{}, column {}", input.label, column + 1);
         if column > 0 {
@@ -135,7 +134,7 @@ fn one(f: &Field, place: &Place, column: Option<u8>, values: &Values, back: &Bac
 }
 
 /// Fields by group, in the order of the table.
-fn groups(fields: &'static [Field]) -> Vec<(&'static str, Vec<&'static Field>)> {
+pub(crate) fn groups(fields: &'static [Field]) -> Vec<(&'static str, Vec<&'static Field>)> {
     let mut groups: Vec<(&str, Vec<&Field>)> = Vec::new();
     for f in fields {
         match groups.iter_mut().find(|(name, _)| *name == f.group) {
@@ -146,15 +145,28 @@ fn groups(fields: &'static [Field]) -> Vec<(&'static str, Vec<&'static Field>)> 
     groups
 }
 
-/// Why a value is overwritten: asked by the domain after a first signature; offered always, folded.
+/// What a page says after a form was kept: how many `things` of what; nothing for what is no number.
+#[must_use]
+pub fn saved_words(what: &str, thing: &str, count: &str) -> Option<String> {
+    match count.parse::<u16>().ok()? {
+        0 => Some(format!("Nothing was changed: {what}.")),
+        1 => Some(format!("Saved: {what}, one {thing} changed.")),
+        n => Some(format!("Saved: {what}, {n} {thing}s changed.")),
+    }
+}
+
+/// Why a value is overwritten: asked where a reading is replaced and after a first signature; offered always, folded until asked.
 #[must_use]
 pub fn reason(back: &Back<'_>) -> Markup {
     let none = Posted::default();
-    let input = FieldInput::new("reason", "Reason for the change", crate::components::InputKind::Lines(500))
-        .hint("Needed once the record was signed; kept beside the earlier value.")
+    let mut input = FieldInput::new("reason", "Reason for the change", crate::components::InputKind::Lines(500))
+        .hint("Needed where a reading is replaced, and for every change once the record was signed; kept beside the earlier value.")
         .sent_back(back.posted.unwrap_or(&none), back.errors);
+    input.focus = input.error.is_some();
+    // A value that is hard to believe asks for a reason too, at its own field.
+    let asked = input.error.is_some() || back.errors.iter().any(|e| e.message.contains("give a reason"));
     html! {
-        details.reason open[input.error.is_some() || !input.text.is_empty()] { summary { "Give a reason for the change" } (field(&input)) }
+        details.reason open[asked || !input.text.is_empty()] { summary { "Give a reason for the change" } (field(&input)) }
     }
 }
 

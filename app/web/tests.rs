@@ -5,6 +5,8 @@ mod accounts;
 mod conflicts;
 mod doors;
 mod every_page;
+mod guidance;
+mod in_words;
 mod job;
 mod pictures;
 mod record_pages;

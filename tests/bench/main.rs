@@ -3,6 +3,7 @@
 #![expect(clippy::expect_used, reason = "a benchmark that cannot go on has nothing better to do than stop")]
 
 mod alternate;
+mod bare_formulas;
 mod checks;
 mod document;
 mod pages;

@@ -1,9 +1,11 @@
 //! Where a hold point stands: which of its conditions are not met, and whether it is released.
 
 use super::{Agenda, HoldAgenda, StepState};
-use crate::judge::{self, Judged, View};
-use crate::procedure::{Condition, Phase};
-use crate::record::{Record, Severity};
+use crate::judge::catalogue::title;
+use crate::judge::{self, View};
+use crate::plant::Sheet;
+use crate::procedure::{Condition, Phase, Step};
+use crate::record::{FindingState, Record, Severity, functions};
 use engineering::Verdict;
 
 /// The hold point before a phase, if it has one; `agenda` holds every step already.
@@ -23,10 +25,12 @@ pub(super) fn of(view: &View<'_>, phase: &Phase, agenda: &Agenda) -> Option<Hold
 
 /// Whether a condition must keep holding after the release.
 const fn must_keep(condition: &Condition) -> bool {
-    matches!(condition, Condition::IsolationInForce | Condition::NoFindingStopsStartUp)
+    matches!(condition, Condition::IsolationInForce | Condition::NoFindingStopsStartUp | Condition::NoneOutside { .. })
 }
 
-fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda) -> Vec<String> {
+/// What keeps a condition from being met, a sentence each; empty where it is met. `agenda` is that of the same view.
+#[must_use]
+pub fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda) -> Vec<String> {
     let record = view.drive.record.as_ref();
     match condition {
         Condition::PhaseSettled { phase } => agenda
@@ -51,6 +55,7 @@ fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda) -> Vec<Stri
         Condition::IsolationInForce | Condition::IsolationLifted => Vec::new(),
         Condition::NoFindingStopsStartUp => record.map_or_else(Vec::new, stopping),
         Condition::ChecksJudged { checks } => checks.iter().filter_map(|check| unjudged(view, check, agenda)).collect(),
+        Condition::NoneOutside { checks } => checks.iter().flat_map(|check| outside(view, check, agenda)).collect(),
     }
 }
 
@@ -61,22 +66,76 @@ fn stopping(record: &Record) -> Vec<String> {
     numbers.iter().map(|n| format!("Finding {n} stops start-up and is open.")).collect()
 }
 
-/// What is wrong with a check at the steps that show it, unless those were settled otherwise.
-fn unjudged(view: &View<'_>, check: &str, agenda: &Agenda) -> Option<String> {
+/// The steps that show a check, leaving out those that do not apply and those that were settled otherwise.
+fn showing<'a>(view: &View<'a>, check: &str, agenda: &Agenda) -> Vec<&'a Step> {
     let counts = |id: &str| {
         let state = agenda.step(id).map(|(_, s)| &s.state);
         state.is_some_and(|s| !matches!(s, StepState::NotApplicable(_) | StepState::CouldNotBeDone(_)))
     };
-    let showing = view.procedure.steps().map(|(_, s)| s).filter(|s| s.checks.iter().any(|c| c == check));
-    showing.filter(|s| counts(&s.id)).find_map(|step| {
-        let judged = judge::step(view, &step.id);
-        let outcomes: Vec<&Judged> = judged.iter().filter(|j| j.outcome.check == check).collect();
-        let at = format!("at “{}”", step.title);
+    let steps = view.procedure.steps().map(|(_, s)| s);
+    steps.filter(|s| s.checks.iter().any(|c| c == check) && counts(&s.id)).collect()
+}
+
+/// What is wrong with a check at the steps that show it.
+fn unjudged(view: &View<'_>, check: &str, agenda: &Agenda) -> Option<String> {
+    showing(view, check, agenda).into_iter().find_map(|step| {
+        let outcomes = judge::run(view, check, &step.id);
+        let named = format!("“{}” at “{}”", title(check), step.title);
         if outcomes.is_empty() {
-            return Some(format!("The check {check} {at} has not been judged."));
+            return Some(format!("{named} has not been judged."));
         }
         let first = |verdict| outcomes.iter().find(|j| j.outcome.verdict == verdict);
         let bad = first(Verdict::Outside).or_else(|| first(Verdict::NotAssessed))?;
-        Some(format!("The check {check} {at} is {}: {}", bad.outcome.verdict.words(), bad.outcome.summary))
+        Some(format!("{named} is {}: {}", bad.outcome.verdict.words(), bad.outcome.summary))
     })
+}
+
+/// Every outside verdict of a check, each said once, unless it was accepted by name.
+fn outside(view: &View<'_>, check: &str, agenda: &Agenda) -> Vec<String> {
+    let steps = showing(view, check, agenda);
+    let mut sentences: Vec<String> = Vec::new();
+    let mut said: Vec<String> = Vec::new();
+    for step in &steps {
+        for one in judge::run(view, check, &step.id) {
+            let summary = one.outcome.summary;
+            if one.outcome.verdict != Verdict::Outside || said.contains(&summary) {
+                continue;
+            }
+            let of = if one.of.is_empty() { String::new() } else { format!(" ({})", one.of) };
+            sentences.push(format!(
+                "“{name}”{of} at “{at}” is outside: {summary} Put it right, or raise a finding at that step that names “{name}” and have it accepted by name.",
+                name = title(check),
+                at = step.title
+            ));
+            said.push(summary);
+        }
+    }
+    if !sentences.is_empty() && accepted(view, check, &steps) { Vec::new() } else { sentences }
+}
+
+/// Whether a finding that names the check, raised at a step that shows it, was accepted after all that was entered there.
+fn accepted(view: &View<'_>, check: &str, steps: &[&Step]) -> bool {
+    let Some(record) = view.drive.record.as_ref() else { return false };
+    let name = title(check).to_lowercase();
+    let newest = steps.iter().filter_map(|step| newest(view, record, step)).max().unwrap_or(0);
+    record.findings.values().any(|f| {
+        let here = f.step.as_ref().is_some_and(|at| steps.iter().any(|s| s.id == *at));
+        let by_name = matches!(f.state, FindingState::Accepted { sequence, .. } if sequence > newest);
+        here && by_name && f.text.to_lowercase().contains(&name)
+    })
+}
+
+/// The place in the drive's chain of the last thing entered at a step: readings, its sheet, its settings.
+fn newest(view: &View<'_>, record: &Record, step: &Step) -> Option<u64> {
+    let entries = record.entries.iter().filter(|(place, _)| step.items.iter().any(|i| i.key == place.item));
+    let entries = entries.flat_map(|(_, slot)| slot.standing().iter().map(|r| r.sequence));
+    let sheet = step.sheet.as_deref().and_then(Sheet::from_key);
+    let fields = view.drive.fields.iter().filter(|(place, _)| Some(place.sheet) == sheet);
+    let fields = fields.flat_map(|(_, slot)| slot.standing().iter().map(|r| r.sequence));
+    let group = step.parameters.as_deref();
+    // The last look at all settings (`*`) is no new setting.
+    let ours = |function: &str| functions::find(function).is_some_and(|f| Some(f.group) == group);
+    let settings = record.parameters.iter().filter(|(place, _)| ours(&place.function));
+    let settings = settings.flat_map(|(_, slot)| slot.standing().iter().map(|r| r.sequence));
+    entries.chain(fields).chain(settings).max()
 }

@@ -1,4 +1,5 @@
-//! Whether the readings of an isolation step prove it dead: a live or unmeasured bus keeps isolation out of force.
+//! Whether the readings of an isolation step prove it dead: a live or unmeasured bus or terminal keeps isolation out of
+//! force.
 
 use super::Surroundings;
 use crate::Refusal;
@@ -8,7 +9,7 @@ use crate::procedure::Step;
 use crate::record::apply;
 use engineering::Verdict;
 
-/// What speaks against isolation once these events have happened: the first verdict at the step that is outside or not
+/// What speaks against isolation once these events have happened: every verdict at the step that is outside or not
 /// assessed, in its own words; `None` when nothing does.
 pub(super) fn against(around: &Surroundings<'_>, step: &Step, events: &[Event]) -> Result<Option<String>, Refusal> {
     let mut drive = around.drive.cloned();
@@ -21,6 +22,7 @@ pub(super) fn against(around: &Surroundings<'_>, step: &Step, events: &[Event]) 
     let Some(record) = drive.record.as_ref() else { return Ok(None) };
     let view = around.view(&drive, record)?;
     let judged = judge::step(&view, &step.id);
-    let bad = judged.iter().find(|j| matches!(j.outcome.verdict, Verdict::Outside | Verdict::NotAssessed));
-    Ok(bad.map(|j| j.outcome.summary.clone()))
+    let bad = judged.iter().filter(|j| matches!(j.outcome.verdict, Verdict::Outside | Verdict::NotAssessed));
+    let said: Vec<&str> = bad.map(|j| j.outcome.summary.as_str()).collect();
+    Ok((!said.is_empty()).then(|| said.join(" ")))
 }

@@ -68,7 +68,7 @@ fn faults(procedure: &Procedure) -> Vec<String> {
         let lost = match condition {
             Condition::PhaseSettled { phase } => procedure.phase(phase).is_none(),
             Condition::StepSettled { step } => procedure.step(step).is_none(),
-            Condition::ChecksJudged { checks } => {
+            Condition::ChecksJudged { checks } | Condition::NoneOutside { checks } => {
                 !checks.iter().all(|c| procedure.steps().any(|(_, s)| s.checks.contains(c)))
             }
             Condition::IsolationInForce | Condition::IsolationLifted | Condition::NoFindingStopsStartUp => false,

@@ -206,7 +206,9 @@ fn one(
     };
     let reading = matches!(item.kind, ItemKind::Reading { .. });
     if !supersedes.is_empty() && !again && (reading || record.ever_signed) {
-        form.overwrites(label);
+        // The figure stays as it is, yet another meter gives it another doubt: that wants its reason too.
+        let only_instrument = standing.zip(entry.as_ref()).is_some_and(|(s, e)| s.value == e.value);
+        if only_instrument { form.overwrites(&format!("{label}, its instrument")) } else { form.overwrites(label) }
     }
     let new = supersedes.is_empty() || again;
     Some(Made { place: change.place.clone(), entry, supersedes, new })

@@ -32,6 +32,7 @@ pub const fn needed(deed: &Deed) -> (&'static [Role], &'static str) {
         Deed::Sign { meaning: Meaning::Accepted, .. } => (&[Supervisor], "accept a record"),
         Deed::Return { .. } => (&[Supervisor], "return a record"),
         Deed::Reopen { .. } => (&[Supervisor], "reopen a record"),
+        Deed::RotateKey { .. } => (&[Administrator], "change the signing key"),
     }
 }
 

@@ -5,6 +5,7 @@ mod fields;
 mod findings;
 mod holds;
 mod isolation;
+mod keys;
 mod moves;
 mod parameters;
 mod people;

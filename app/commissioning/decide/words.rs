@@ -51,7 +51,10 @@ pub(super) fn reason(text: &str, what: &str) -> Result<String, Refusal> {
 }
 
 /// A drive's plant tag: 1 to 24 letters, digits, `-`, `_` and `.`.
-pub(super) fn drive_tag(text: &str) -> Result<String, String> {
+///
+/// # Errors
+/// A sentence that says what a tag may have.
+pub fn drive_tag(text: &str) -> Result<String, String> {
     let text = text.trim();
     let right = (1..=24).contains(&text.chars().count())
         && text.chars().all(|c| c.is_ascii_alphanumeric() || matches!(c, '-' | '_' | '.'))

@@ -85,6 +85,8 @@ pub enum Deed {
     Return { drive: DriveId, reason: String },
     /// Reopens an accepted record as the next revision.
     Reopen { drive: DriveId, reason: String },
+    /// Changes the installation's signing key: public keys and both signatures in hexadecimal.
+    RotateKey { old: String, new: String, by_old: String, by_new: String },
 }
 
 impl Deed {

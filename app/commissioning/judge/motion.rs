@@ -32,6 +32,7 @@ fn acceleration_inputs(view: &View<'_>, set: Settings) -> acceleration_time::Inp
         from_speed: None,
         to_speed,
         set_time,
+        s_curve: set.quantity(view, "s-curve-share"),
         plain_volts_per_hertz: set.choice(view, "control-mode").map(|mode| mode == "volts-per-hertz"),
     }
 }
@@ -82,6 +83,7 @@ fn deceleration_inputs(view: &View<'_>, set: Settings) -> deceleration_time::Inp
         from_speed,
         to_speed: None,
         set_time,
+        s_curve: set.quantity(view, "s-curve-share"),
         bus_voltage: bus_volts(view),
         bus_capacitance: view.plate(DrivePlate, "bus-capacitance"),
         trip_voltage: view.plate(DrivePlate, "trip-high"),
@@ -112,6 +114,7 @@ pub(super) fn braking(view: &View<'_>) -> Runs {
             from_speed,
             to_speed: None,
             set_time,
+            s_curve: set.quantity(view, "s-curve-share"),
             holding_time: view.plate(Load, "overhauling-time"),
             cycle_time: cycle,
             chopper_voltage: chopper(view, set),

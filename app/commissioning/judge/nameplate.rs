@@ -3,10 +3,13 @@
 use super::{Runs, View, once};
 use crate::plant::Sheet::{Drive, DrivePlate, Further, Load, Motor, Site, Supply};
 use engineering::checks::{
-    connection_fit, drive_current_fit, efficiency_class, full_load_current, low_speed_cooling, overload_fit,
-    pole_pairs, power_balance, rated_torque, rated_volts_per_hertz,
+    connection_fit, drive_current_fit, efficiency_class, full_load_current, low_speed_cooling, misreading,
+    overload_fit, pole_pairs, power_balance, rated_torque, rated_volts_per_hertz,
 };
+use engineering::formulas::efficiency_class::Class;
 use engineering::overload::Overload;
+use engineering::plate::usual::is_rating;
+use engineering::plate::{MOST_COLUMNS, Mark, Name, Plate};
 use engineering::printed::Printed;
 use engineering::quantity::Quantity;
 use engineering::{Frequency, Kind, Ratio, Voltage};
@@ -27,6 +30,10 @@ fn columns(view: &View<'_>) -> Vec<(u8, String)> {
 fn printed<Q: Quantity>(view: &View<'_>, column: u8, field: &str, kind: Kind) -> Option<Printed<Q>> {
     let typed = view.value(Motor, column, field)?;
     let unit = kind.unit(typed.unit.as_deref().unwrap_or_default()).unwrap_or(kind.usual());
+    // A rating by name is exact: 11 kW is no rounding of 11.4 kW.
+    if kind == Kind::Power && typed.number_in_unit(kind).is_some_and(|n| is_rating(n, *unit)) {
+        return Some(Printed::nominal(Q::from_coherent(typed.number()?)));
+    }
     Some(Printed::from_text(Q::from_coherent(typed.number()?), &typed.text, Q::from_coherent(unit.factor)))
 }
 
@@ -61,6 +68,40 @@ pub(super) fn power_balance(view: &View<'_>) -> Runs {
         .collect()
 }
 
+/// The whole plate with its figures as typed.
+fn whole_plate(view: &View<'_>) -> Plate {
+    let mark = |column: u8, name: Name, field: &str| -> Option<Mark> {
+        let typed = view.value(Motor, column, field)?;
+        let as_typed = Mark::read(name, &typed.text, typed.unit.as_deref().unwrap_or_default());
+        // Text that is understood but no plain decimal: its number alone, without digits to be misread.
+        as_typed.or_else(|| {
+            let coherent = name.kind().units().iter().find(|u| (u.factor - 1.0).abs() < f64::EPSILON)?;
+            Mark::read(name, typed.si.as_deref()?, coherent.symbol)
+        })
+    };
+    let mut plate = Plate { class: printed_class(view), poles: mark(0, Name::Poles, "poles"), ..Plate::default() };
+    for (column, place) in (0..Motor.columns()).zip(0..MOST_COLUMNS) {
+        for name in Name::OF_A_COLUMN {
+            let field = match name {
+                Name::Volts => "volts",
+                Name::Amps => "amps",
+                Name::Hertz => "hertz",
+                Name::Speed => "rpm",
+                Name::Power => "power",
+                Name::PowerFactor => "power-factor",
+                Name::Efficiency => "efficiency",
+                Name::Poles => continue,
+            };
+            plate.columns[place] = plate.columns[place].with(name, mark(column, name, field));
+        }
+    }
+    plate
+}
+
+pub(super) fn misreading(view: &View<'_>) -> Runs {
+    once(misreading::check(&misreading::Inputs { plate: whole_plate(view) }))
+}
+
 pub(super) fn rated_torque(view: &View<'_>) -> Runs {
     once(rated_torque::check(&rated_torque::Inputs {
         rated_power: view.motor("power"),
@@ -75,16 +116,18 @@ pub(super) fn rated_volts_per_hertz(view: &View<'_>) -> Runs {
     }))
 }
 
-pub(super) fn efficiency_class(view: &View<'_>) -> Runs {
-    use efficiency_class::{Inputs, check};
-    use engineering::formulas::efficiency_class::Class;
-    let printed_class = match view.choice(Motor, "efficiency-class") {
+fn printed_class(view: &View<'_>) -> Option<Class> {
+    match view.choice(Motor, "efficiency-class") {
         Some("ie1") => Some(Class::Ie1),
         Some("ie2") => Some(Class::Ie2),
         Some("ie3") => Some(Class::Ie3),
         Some("ie4") => Some(Class::Ie4),
         _ => None,
-    };
+    }
+}
+
+pub(super) fn efficiency_class(view: &View<'_>) -> Runs {
+    use efficiency_class::{Inputs, check};
     let poles = match (view.motor::<Frequency>("hertz"), view.motor("rpm")) {
         (Some(f), Some(n)) => engineering::formulas::synchronous::pole_pairs(f, n).map(|pairs| pairs * 2),
         _ => None,
@@ -94,7 +137,7 @@ pub(super) fn efficiency_class(view: &View<'_>) -> Runs {
         poles,
         rated_frequency: view.motor("hertz"),
         efficiency: view.motor("efficiency"),
-        printed_class,
+        printed_class: printed_class(view),
     }))
 }
 

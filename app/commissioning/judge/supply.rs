@@ -3,8 +3,8 @@
 use super::{Runs, View, once};
 use crate::plant::Sheet::{Cable, Drive, DrivePlate, Further, Site, Supply};
 use engineering::checks::{
-    bus_discharged, bus_voltage, disconnection, line_current_balance, pe_conductor, short_circuit_rating,
-    supply_unbalance, supply_voltage, waiting_time,
+    bus_discharged, bus_voltage, disconnection, earth_voltages, line_current_balance, pe_conductor,
+    short_circuit_rating, supply_unbalance, supply_voltage, terminals_dead, waiting_time,
 };
 use engineering::formulas::copper::Conductor;
 use engineering::quantity::Quantity;
@@ -65,24 +65,77 @@ pub(super) fn waiting_time(view: &View<'_>) -> Runs {
     }))
 }
 
+/// What the item keys of a proof begin with: each time it is made again it has its own.
+fn proof(step: &str) -> &'static str {
+    match step {
+        "isolate-for-exchange" => "exchange-",
+        "isolate-to-couple" => "couple-",
+        _ => "",
+    }
+}
+
+/// Whether the proof was left alone, since no lead is exchanged.
+fn no_proof_needed(view: &View<'_>, step: &str) -> bool {
+    step == "isolate-for-exchange" && view.chosen("exchange-isolation") == Some("not-needed")
+}
+
 pub(super) fn bus_discharged(view: &View<'_>, step: &str) -> Runs {
-    if step == "isolate-for-exchange" && view.chosen("exchange-isolation") == Some("not-needed") {
+    if no_proof_needed(view, step) {
         return Vec::new();
     }
-    let first = step == "prove-dead" || step.is_empty();
-    let between = match step {
-        "isolate-for-exchange" => "exchange-bus-after-waiting",
-        "isolate-to-couple" => "couple-bus-after-waiting",
-        _ => "bus-after-waiting",
-    };
+    let read = |point: &str| view.reading(&format!("{}{point}", proof(step)));
     once(bus_discharged::check(&bus_discharged::Inputs {
-        between_poles: view.reading(between),
-        plus_to_earth: view.reading("bus-plus-to-earth").filter(|_| first),
-        minus_to_earth: view.reading("bus-minus-to-earth").filter(|_| first),
+        between_poles: read("bus-after-waiting"),
+        plus_to_earth: read("bus-plus-to-earth"),
+        minus_to_earth: read("bus-minus-to-earth"),
         site_applies_iec_60204: view.choice(Site, "residual-voltage").map(|rule| rule == "60"),
         maker_limit: view.plate(DrivePlate, "bus-limit"),
         site_limit: view.plate(Site, "residual-voltage-other"),
     }))
+}
+
+pub(super) fn terminals_dead(view: &View<'_>, step: &str) -> Runs {
+    if no_proof_needed(view, step) {
+        return Vec::new();
+    }
+    let read = |point: &str| view.reading(&format!("{}{point}", proof(step)));
+    once(terminals_dead::check(&terminals_dead::Inputs {
+        supply: read("input-dead"),
+        output: read("output-dead"),
+        site_limit: view.plate(Site, "residual-voltage-other"),
+    }))
+}
+
+/// The earthing that a choice names.
+fn earthing(key: &str) -> Option<earth_voltages::Earthing> {
+    use earth_voltages::Earthing::{CornerEarthed, EarthedStar, HighResistance, Insulated};
+    match key {
+        "tn" | "tn-s" | "tn-c-s" | "tn-c" | "tt" => Some(EarthedStar),
+        "corner-earthed" => Some(CornerEarthed),
+        "it" => Some(Insulated),
+        "high-resistance" => Some(HighResistance),
+        _ => None,
+    }
+}
+
+/// Once for the earthing chosen; for the sheet's and for the one found apart where the two differ.
+pub(super) fn earth_voltages(view: &View<'_>) -> Runs {
+    let sheet = view.choice(Supply, "earthing").and_then(earthing);
+    let found = view.chosen("earthing-found").and_then(earthing);
+    let run = |earthing| {
+        earth_voltages::check(&earth_voltages::Inputs {
+            to_earth: lines(view, ["supply-u1-pe", "supply-u2-pe", "supply-u3-pe"]),
+            lines: lines(view, ["supply-u12", "supply-u23", "supply-u31"]),
+            nominal: view.plate(Supply, "volts"),
+            earthing,
+        })
+    };
+    match (sheet, found) {
+        (Some(sheet), Some(found)) if sheet != found => {
+            vec![("by the supply sheet".to_owned(), run(Some(sheet))), ("as found".to_owned(), run(Some(found)))]
+        }
+        _ => once(run(sheet.or(found))),
+    }
 }
 
 pub(super) fn bus_voltage(view: &View<'_>) -> Runs {
@@ -176,6 +229,7 @@ pub(super) fn disconnection(view: &View<'_>) -> Runs {
         design_impedance: view.plate(Supply, "loop-impedance"),
         proved_by_design: view.chosen("disconnection-proof").map(|proof| proof == "design"),
         accepted_proof,
+        site_share: view.plate(Site, "loop-share"),
     }))
 }
 

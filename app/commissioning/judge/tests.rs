@@ -1,6 +1,7 @@
 //! Every key that a check asks for exists; every check is in the list and at a step of the built-in procedure.
 
 mod case;
+mod fuzz;
 mod motion;
 mod plates;
 mod readings;

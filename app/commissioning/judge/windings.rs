@@ -6,7 +6,7 @@ use engineering::checks::insulation_resistance::{Construction, System};
 use engineering::checks::{
     above_dew_point, brake_resistor_ohms, dielectric_absorption, discharge_time, identified_resistance,
     insulation_resistance, insulation_test_voltage, joint_resistance, polarization_index, sensor_resistance,
-    winding_balance,
+    terminal_torque, winding_balance,
 };
 use engineering::{Duration, Power, Resistance};
 
@@ -63,6 +63,10 @@ pub(super) fn insulation_resistance(view: &View<'_>) -> Runs {
         system: system(view),
         construction: construction(view),
         maker_minimum: view.plate(Motor, "insulation-minimum"),
+        test_voltage: view.entered("test-voltage", 0),
+        maker_test_voltage: view.plate(Motor, "insulation-test-volts"),
+        air_temperature: view.entered("ambient-temperature", 0),
+        humidity: view.entered("relative-humidity", 0),
     }))
 }
 
@@ -124,6 +128,20 @@ pub(super) fn winding_balance(view: &View<'_>) -> Runs {
         w_u: view.reading("winding-r-wu"),
         construction: construction(view),
         maker_maximum: view.plate(Motor, "balance-maximum"),
+    }))
+}
+
+/// Not where the joints were judged by their resistance alone and nobody entered a torque.
+pub(super) fn terminal_torque(view: &View<'_>) -> Runs {
+    let (input, output) = (view.reading("torque-input"), view.reading("torque-output"));
+    if view.chosen("joint-method") == Some("ohmmeter") && input.is_none() && output.is_none() {
+        return Vec::new();
+    }
+    once(terminal_torque::check(&terminal_torque::Inputs {
+        input,
+        output,
+        stated: view.plate(DrivePlate, "terminal-torque"),
+        stated_highest: view.plate(DrivePlate, "terminal-torque-high"),
     }))
 }
 
@@ -192,7 +210,7 @@ pub(super) fn identified_resistance(view: &View<'_>) -> Runs {
         u_v: view.reading("winding-r-uv"),
         v_w: view.reading("winding-r-vw"),
         w_u: view.reading("winding-r-wu"),
-        measured_at: view.entered("winding-temperature", 0),
+        measured_at: view.reading("winding-temperature"),
         identified_at: view.entered("identified-at-temperature", 0),
         // Measured at the drive's end of the cable, the cable is in the reading already.
         cable_conductor: cable_conductor(view).filter(|_| view.chosen("winding-r-place") != Some("cable")),

@@ -5,7 +5,10 @@ mod numbers;
 mod parts;
 mod rebuild;
 #[cfg(test)]
+mod schema;
+#[cfg(test)]
 mod tests;
+mod unread;
 
 pub use parts::{
     DrivePart, EntryPart, FieldPart, FreeRow, OtherwisePart, ParameterPart, RecordPart, RemarkPart, SitePart,
@@ -124,10 +127,15 @@ impl RecordFile {
             ));
         }
         let mut reader = serde_json::Deserializer::from_str(text);
-        let file = serde_path_to_error::deserialize(&mut reader)
+        let file: Self = serde_path_to_error::deserialize(&mut reader)
             .map_err(|e| fault(&e.path().to_string(), e.inner().to_string()))?;
         reader.end().map_err(|e| fault(".", e.to_string()))?;
-        Ok(file)
+        let given = serde_json::from_str(text).map_err(|e| fault(".", e.to_string()))?;
+        let taken = serde_json::to_value(&file).map_err(|e| fault(".", e.to_string()))?;
+        match unread::first(&given, &taken) {
+            Some(path) => Err(fault(&path, "this version knows no such member".to_owned())),
+            None => Ok(file),
+        }
     }
 
     /// SHA-256 over the canonical bytes of all that a signature put now would bind.

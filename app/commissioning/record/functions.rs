@@ -22,6 +22,19 @@ pub struct Function {
     pub kind: FieldKind,
 }
 
+impl Function {
+    /// Whether it is set for a test only and put back: it has no place in the list that restores a drive.
+    #[must_use]
+    pub fn is_for_tests(&self) -> bool {
+        self.group == TEST
+    }
+}
+
+/// The functions to be keyed into a drive that is restored, in the order of the sheet: all but those for tests.
+pub fn to_restore() -> impl Iterator<Item = &'static Function> {
+    FUNCTIONS.iter().filter(|f| !f.is_for_tests())
+}
+
 /// Motor data, as keyed in.
 pub const MOTOR: &str = "motor data";
 /// Control mode and volts per hertz.
@@ -135,6 +148,13 @@ mod tests {
         });
         assert_eq!(order, GROUPS);
         assert_eq!(group("*").count(), FUNCTIONS.len());
+    }
+
+    #[test]
+    fn what_is_set_for_tests_is_not_keyed_into_a_restored_drive() {
+        let keyed: Vec<&str> = to_restore().map(|f| f.key).collect();
+        assert!(keyed.contains(&"current-limit") && !keyed.iter().any(|key| key.starts_with("test-")));
+        assert_eq!(keyed.len() + group(TEST).count(), FUNCTIONS.len());
     }
 
     #[test]

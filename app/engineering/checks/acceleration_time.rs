@@ -4,21 +4,23 @@
 //!
 //! The motor's torque within the current limit is T = T_N·(1/r)·√(I_lim² − (I_m/r)²)/√(I_N² − I_m²), r = n/n_N but at
 //! least 1, and never above λ·T_N/(1.3·r²). What the load leaves of it speeds up the inertia: dt = J·dω/(T − T_L),
-//! integrated in 400 even steps of speed. The shortest even ramp is J·Δω over the least spare torque on the way.
-//! Set at least that: within. Shorter: the limit stretches the ramp, marginal. Shorter than the least time there is,
+//! integrated in 400 steps. The shortest even ramp is J·Δω over the least spare torque on the way; rounded ends within
+//! the set time (an S-curve share s of it) ask 1/(1 − s/2) of the mean acceleration between them. Set at least that: within. Shorter: the limit stretches the ramp, marginal. Shorter than the least time there is,
 //! stalled on the way, or held at standstill: outside. A plate without λ counts as 1.6, a gear not stated as a direct
-//! coupling. Inertia and load come from their makers; nothing here replaces the first careful run.
+//! coupling. The start's r.m.s. current and heat are figures: heat beyond rated current over (1.5² − 1) × 120 s, which
+//! IEC 60034-1 asks a warm motor to stand, with no heat given off meanwhile (row OL-09, from memory). Inertia and load come from their makers; nothing here replaces the first careful run.
 
 use crate::decision::Measured;
-use crate::formulas::plausible;
+use crate::formulas::{excess_current, plausible};
 use crate::limit_rule::LimitRule;
 use crate::motion::machine::newton_metres;
 use crate::motion::ramp_up::{RampUp, asked};
-use crate::motion::{End, Machine, Trace};
+use crate::motion::set_ramp::{STRAIGHT, s_curve, steepness};
+use crate::motion::{End, Machine, SetRamp, Trace};
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Duration, Speed, Torque};
+use crate::quantity::{Duration, Ratio, Speed, Torque};
 use crate::rounding::significant;
-use crate::sources::motion::{RM_01, RM_08, VF_04};
+use crate::sources::motion::{EXCESS_CURRENT, RM_01, RM_08, RM_09, VF_04};
 
 /// Name in the catalogue.
 pub const NAME: &str = "acceleration-time";
@@ -34,6 +36,8 @@ pub struct Inputs {
     pub to_speed: Option<Speed>,
     /// Set time for this very change of speed.
     pub set_time: Option<Duration>,
+    /// S-curve share of that time; a straight ramp is assumed.
+    pub s_curve: Option<Ratio>,
     /// Whether the drive runs on plain volts per hertz without boost.
     pub plain_volts_per_hertz: Option<bool>,
 }
@@ -43,8 +47,8 @@ pub struct Inputs {
 pub fn trace(inputs: &Inputs) -> Option<Trace> {
     let mut b = OutcomeBuilder::new(NAME);
     let run = run_up(&mut b, inputs)?;
-    let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
-    Some(run.on_ramp(set))
+    let time = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
+    Some(run.on_ramp(SetRamp { time, s_curve: s_curve(&mut b, inputs.s_curve)? }))
 }
 
 /// The largest torque at the motor's shaft that the set ramp asks, not cut by the current limit: what a current limit
@@ -55,7 +59,8 @@ pub fn torque_asked(inputs: &Inputs) -> Option<Torque> {
     let train = inputs.machine.train(&mut b)?;
     let from = plausible::not_negative(&mut b, inputs.from_speed.or(Some(Speed::from_rpm(0.0))), "speed at the start")?;
     let to = plausible::positive(&mut b, inputs.to_speed.or(inputs.machine.rated_speed), "speed at the end")?;
-    let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
+    let time = plausible::positive(&mut b, inputs.set_time, "set acceleration time")?;
+    let set = SetRamp { time, s_curve: s_curve(&mut b, inputs.s_curve)? };
     (to.rpm() > from.rpm()).then(|| asked(&train, from, to, set)).filter(|t| t.newton_metres().is_finite())
 }
 
@@ -66,12 +71,13 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.cite(RM_01);
     b.cite(RM_08);
     let run = run_up(&mut b, inputs);
+    let share = s_curve(&mut b, inputs.s_curve);
     let set = plausible::positive(&mut b, inputs.set_time, "set acceleration time");
     if inputs.plain_volts_per_hertz != Some(false) {
         b.cite(VF_04);
         b.note("Plain volts per hertz without boost does not reach this torque at breakaway.");
     }
-    let Some(run) = run else { return b.not_assessed() };
+    let (Some(run), Some(share)) = (run, share) else { return b.not_assessed() };
 
     let standstill = Speed::from_rpm(0.0);
     let at_start = run.motor.available(run.limit, standstill);
@@ -93,7 +99,8 @@ pub fn check(inputs: &Inputs) -> Outcome {
         ),
         newton_metres(at_start),
     );
-    let (place, spare) = run.tightest();
+    let tightest = run.tightest(share);
+    let (place, spare) = (tightest.speed, tightest.spare);
     b.line(
         &format!("least spare torque, at {} rpm ({})", significant(place.rpm(), 4), run.train.load.words()),
         "T − T_L",
@@ -106,15 +113,16 @@ pub fn check(inputs: &Inputs) -> Outcome {
     );
     b.figure("least spare torque", spare.newton_metres(), 3, "N·m");
     let fastest = run.fastest();
-    let (Some(even), Some(least)) = (run.shortest_even_ramp(), fastest.time()) else {
+    let (Some(even), Some(least)) = (run.shortest_ramp(share), fastest.time()) else {
         return cannot(b, &run, &fastest.end);
     };
     let (even, least) = (even.seconds(), least.seconds());
+    let (formula, steep) = steepness(&mut b, share, tightest.slope);
     b.line(
         "shortest even ramp",
-        "t = J·2π·Δn/(60·(T − T_L))",
+        &format!("t = {formula}J·2π·Δn/(60·(T − T_L))"),
         format!(
-            "{} kg·m² × 2π × {} rpm/(60 × {})",
+            "{steep}{} kg·m² × 2π × {} rpm/(60 × {})",
             significant(run.train.inertia.kilogram_square_metres(), 4),
             significant(run.to.rpm() - run.from.rpm(), 4),
             newton_metres(spare)
@@ -136,7 +144,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             .tick(least, format!("least {} s", significant(least, 3))),
     );
     let Some(set) = set else { return b.not_assessed() };
-    judge(b, &run, set, even, least)
+    judge(b, &run, SetRamp { time: set, s_curve: share }, even, least)
 }
 
 fn run_up(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<RampUp> {
@@ -155,7 +163,7 @@ fn run_up(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<RampUp> {
 /// No setting helps: the load is held or stalls with all the torque that the limit leaves.
 fn cannot(mut b: OutcomeBuilder, run: &RampUp, end: &End) -> Outcome {
     b.limit("more torque than the load asks, at every speed on the way");
-    let (place, _) = run.tightest();
+    let place = run.tightest(STRAIGHT).speed;
     let (available, asked, because) = match end {
         End::HeldAtStandstill { available, asked } => (
             *available,
@@ -190,9 +198,9 @@ fn cannot(mut b: OutcomeBuilder, run: &RampUp, end: &End) -> Outcome {
     )
 }
 
-fn judge(mut b: OutcomeBuilder, run: &RampUp, set: Duration, even: f64, least: f64) -> Outcome {
+fn judge(mut b: OutcomeBuilder, run: &RampUp, set: SetRamp, even: f64, least: f64) -> Outcome {
     let predicted = run.on_ramp(set);
-    let seconds = set.seconds();
+    let seconds = set.time.seconds();
     let taken = predicted.time().map_or(f64::NAN, Duration::seconds);
     b.figure("predicted time on the set ramp", taken, 3, "s");
     b.figure("highest current on the set ramp", predicted.peak_current().amperes(), 3, "A");
@@ -211,6 +219,7 @@ fn judge(mut b: OutcomeBuilder, run: &RampUp, set: Duration, even: f64, least: f
         format!("{set} s set"),
         format!("{taken} s"),
     );
+    heat(&mut b, run, &predicted);
     let between = predicted.limited_between().map_or_else(String::new, |(from, to)| {
         format!(" from {} to {} rpm", significant(from.rpm(), 3), significant(to.rpm(), 3))
     });
@@ -225,6 +234,31 @@ fn judge(mut b: OutcomeBuilder, run: &RampUp, set: Duration, even: f64, least: f
             _ => format!("Set {set} s; the current limit acts{between} and stretches it to {taken} s. Set {even} s or more."),
         },
     )
+}
+
+/// Peak and r.m.s. current of the start, and its heat against what a warm motor stands; figures, no verdict.
+fn heat(b: &mut OutcomeBuilder, run: &RampUp, start: &Trace) {
+    let rated = run.motor.rated_current;
+    let Some(mean) = start.root_mean_square_current() else { return };
+    b.cite(RM_09);
+    b.cite(EXCESS_CURRENT);
+    let (peak, amperes) = (significant(start.peak_current().amperes(), 3), significant(mean.amperes(), 3));
+    b.line("r.m.s. current over the start", "I = √(∫I²·dt/t)", format!("peak {peak} A"), format!("{amperes} A"));
+    b.figure("r.m.s. current over the start", mean.amperes(), 3, "A");
+    let excess = start.excess_heat(rated);
+    let share = excess_current::share(excess).fraction() * 100.0;
+    let (beyond, stood) = (significant(excess.seconds(), 3), significant(excess_current::STOOD.seconds(), 3));
+    b.line(
+        "heat beyond rated current, over what a warm motor stands",
+        "∫((I/I_N)² − 1)·dt/((1.5² − 1)·120 s)",
+        format!("{beyond} s/{stood} s"),
+        format!("{} %", significant(share, 3)),
+    );
+    b.figure("heat of the start, over what a warm motor stands", share, 3, "%");
+    b.note("Heat of the start: motor at working temperature, no heat given off meanwhile, 1.5 times rated current for 2 min counted as 100 %. Ask the maker above 315 kW, and for frequent starts.");
+    if share > 100.0 {
+        b.note("The start heats the motor more than the standard asks every motor to stand: ask its maker, or set a longer ramp with less current.");
+    }
 }
 
 #[cfg(test)]
@@ -278,6 +312,35 @@ mod tests {
             assert!((torque_asked(&inputs).expect("complete").newton_metres() - 131.575).abs() < 0.01);
         }
         assert!(torque_asked(&Inputs::default()).is_none());
+    }
+
+    /// Arithmetic (row RM-14): at a share of 100 % the steepest part is twice the mean, so a constant load needs twice
+    /// the shortest straight ramp; what was within is then stretched by the limit.
+    #[test]
+    fn rounded_ends_within_the_set_time_need_a_longer_one() {
+        let eased = |share: f64| {
+            let mut inputs = Inputs { s_curve: Some(Ratio::from_fraction(share)), ..set(30.0) };
+            inputs.machine.load = Some(LoadTorque::Constant(Torque::from_newton_metres(70.0)));
+            check(&inputs)
+        };
+        let (straight, round) = (figure(&eased(0.0), "shortest even ramp"), figure(&eased(1.0), "shortest even ramp"));
+        assert!((round / straight - 2.0).abs() < 0.01, "{straight} {round}");
+        assert!(straight < 30.0 && round > 30.0);
+        assert_eq!((eased(0.0).verdict, eased(1.0).verdict), (Verdict::Within, Verdict::Marginal));
+        assert!(eased(1.0).working.iter().any(|line| line.formula.starts_with("t = k·J")));
+        assert_eq!(eased(1.5).verdict, Verdict::NotAssessed);
+        assert!(check(&set(30.0)).assumed.iter().any(|a| a.what == "S-curve share of the ramp"));
+    }
+
+    /// Row OL-09 by hand: 31 A on a motor of 28.5 A all along is ((31/28.5)² − 1)/150 s = 0.1221 % for each second.
+    #[test]
+    fn the_start_tells_its_current_and_its_heat() {
+        let outcome = check(&set(1.0));
+        let taken = figure(&outcome, "predicted time on the set ramp");
+        assert!((figure(&outcome, "r.m.s. current over the start") - 31.0).abs() < 0.05);
+        let heat = figure(&outcome, "heat of the start, over what a warm motor stands");
+        assert!((heat / (0.1221 * taken) - 1.0).abs() < 0.01, "{heat} {taken}");
+        assert_eq!(figure(&check(&set(60.0)), "heat of the start, over what a warm motor stands"), 0.0);
     }
 
     #[test]

@@ -2,19 +2,22 @@
 //!
 //! What the brake resistor has to take on the set ramp, and whether the one that is fitted can.
 //!
-//! T = J·ω/t − T_L, peak power T·ω at the start, energy its integral; losses of motor and inverter are left out, so all
-//! are upper bounds (row RM-05). The resistor lies between the chopper's minimum and V²/P_peak (row RM-06). Mean power
-//! over the cycle, ramp and any time the load pushes at full speed together, is at most the resistor's rating. Minimum
-//! ohms and chopper volts are the drive maker's; duty beyond the printed one is the resistor maker's to allow.
+//! T = J·ω/t − T_L, peak power the highest T·ω on the way, energy its integral; rounded ends within the set time (an
+//! S-curve share s of it) ask 1/(1 − s/2) of the mean slowing down between them. Losses of motor and inverter are left
+//! out, so all are upper bounds (row RM-05). The resistor lies between the chopper's minimum and V²/P_peak (row RM-06).
+//! Mean power over the cycle, ramp and any time the load pushes at full speed together, is at most the resistor's
+//! rating. Minimum ohms and chopper volts are the drive maker's; duty beyond the printed one is the resistor maker's to
+//! allow.
 
 use crate::decision::Measured;
 use crate::formulas::plausible;
 use crate::limit_rule::LimitRule;
 use crate::motion::braking::{Returned, even_ramp};
 use crate::motion::machine::newton_metres;
-use crate::motion::{Machine, Train, resistor};
+use crate::motion::set_ramp::{s_curve, steepness};
+use crate::motion::{Machine, SetRamp, Train, resistor};
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Duration, Energy, Power, Resistance, Speed, Torque, Voltage};
+use crate::quantity::{Duration, Energy, Power, Ratio, Resistance, Speed, Torque, Voltage};
 use crate::rounding::significant;
 use crate::sources::motion::{RM_05, RM_06};
 
@@ -32,6 +35,8 @@ pub struct Inputs {
     pub to_speed: Option<Speed>,
     /// Set time for this very change of speed.
     pub set_time: Option<Duration>,
+    /// S-curve share of that time; a straight ramp is assumed.
+    pub s_curve: Option<Ratio>,
     /// Time in each cycle during which an overhauling load is held at the first speed; asked only of such a load.
     pub holding_time: Option<Duration>,
     /// From one braking to the next.
@@ -103,7 +108,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.judged(verdict, sentence(by_ohms, by_power, &shown, (&low_words, &high_words)))
 }
 
-fn ramp(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<(Train, Speed, Speed, Duration)> {
+fn ramp(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<(Train, Speed, Speed, SetRamp)> {
     let train = inputs.machine.braked_train(b);
     let from = match (inputs.from_speed, inputs.machine.rated_speed) {
         (None, Some(rated)) => Some(b.assume(None, rated, "speed at the start", "the motor's rated speed")),
@@ -113,21 +118,23 @@ fn ramp(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<(Train, Speed, Speed,
     let to = b.assume(inputs.to_speed, Speed::from_rpm(0.0), "speed at the end", "standstill");
     let to = plausible::not_negative(b, Some(to), "speed at the end");
     let set = plausible::positive(b, inputs.set_time, "set deceleration time");
-    let (train, from, to, set) = (train?, from?, to?, set?);
+    let share = s_curve(b, inputs.s_curve);
+    let (train, from, to, set) = (train?, from?, to?, SetRamp { time: set?, s_curve: share? });
     let from = b.need((from.rpm() > to.rpm()).then_some(from), "speed at the start above the speed at the end")?;
     Some((train, from, to, set))
 }
 
-fn figures(b: &mut OutcomeBuilder, train: &Train, from: Speed, to: Speed, set: Duration, back: &Returned) {
+fn figures(b: &mut OutcomeBuilder, train: &Train, from: Speed, to: Speed, set: SetRamp, back: &Returned) {
+    let (formula, steep) = steepness(b, set.s_curve, back.slope);
     b.line(
-        "braking torque, highest on the way",
-        "T = J·2π·Δn/(60·t) − T_L",
+        &format!("braking torque, highest on the way, at {} rpm", significant(back.at.rpm(), 4)),
+        &format!("T = {formula}J·2π·Δn/(60·t) − T_L"),
         format!(
-            "{} kg·m² × 2π × {} rpm/(60 × {} s) − {}",
+            "{steep}{} kg·m² × 2π × {} rpm/(60 × {} s) − {}",
             significant(train.inertia.kilogram_square_metres(), 4),
             significant(from.rpm() - to.rpm(), 4),
-            significant(set.seconds(), 3),
-            newton_metres(train.slowing(from))
+            significant(set.time.seconds(), 3),
+            newton_metres(train.slowing(back.at))
         ),
         newton_metres(back.torque),
     );
@@ -140,7 +147,7 @@ fn figures(b: &mut OutcomeBuilder, train: &Train, from: Speed, to: Speed, set: D
     b.figure("braking torque", back.torque.newton_metres(), 4, "N·m");
     b.figure("peak braking power", back.peak.watts(), 4, "W");
     b.figure("braking energy of one ramp", back.energy.joules(), 4, "J");
-    b.figure("mean power during the ramp", resistor::mean_power(back.energy, set).watts(), 4, "W");
+    b.figure("mean power during the ramp", resistor::mean_power(back.energy, set.time).watts(), 4, "W");
 }
 
 /// Mean power over the cycle, when it can be said, and whether it can be held against a rating.
@@ -149,7 +156,7 @@ fn cycle(
     inputs: &Inputs,
     train: &Train,
     from: Speed,
-    set: Duration,
+    set: SetRamp,
     back: &Returned,
 ) -> (Option<Power>, bool) {
     let pull = -train.slowing(from).newton_metres();
@@ -165,7 +172,7 @@ fn cycle(
     let held = resistor::shaft_power(Torque::from_newton_metres(pull.max(0.0)), from).watts() * hold;
     let all = Energy::from_joules(back.energy.joules() + held);
     let mean = resistor::mean_power(all, cycle);
-    let duty = resistor::duty(Duration::from_seconds(set.seconds() + hold), cycle);
+    let duty = resistor::duty(Duration::from_seconds(set.time.seconds() + hold), cycle);
     let duty = b
         .need(Some(duty).filter(|d| d.fraction() <= 1.0), "time from one braking to the next, longer than the braking");
     let Some(duty) = duty else { return (None, false) };

@@ -18,9 +18,10 @@ use crate::limit_rule::LimitRule;
 use crate::motion::bus::energy_between;
 use crate::motion::machine::newton_metres;
 use crate::motion::ramp_down::RampDown;
-use crate::motion::{Bus, End, Machine, Trace};
+use crate::motion::set_ramp::{s_curve, steepness};
+use crate::motion::{Bus, End, Machine, SetRamp, Trace};
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Capacitance, Duration, Power, Speed, Voltage};
+use crate::quantity::{Capacitance, Duration, Power, Ratio, Speed, Voltage};
 use crate::rounding::significant;
 use crate::sources::motion::{BRAKING_LOSSES, BUS_MARGIN, DC_09, RM_05, RM_08};
 
@@ -42,6 +43,8 @@ pub struct Inputs {
     pub to_speed: Option<Speed>,
     /// Set time for this very change of speed.
     pub set_time: Option<Duration>,
+    /// S-curve share of that time; a straight ramp is assumed.
+    pub s_curve: Option<Ratio>,
     /// Bus voltage before braking.
     pub bus_voltage: Option<Voltage>,
     /// Bus capacitance.
@@ -66,7 +69,8 @@ struct Ends {
 pub fn trace(inputs: &Inputs) -> Option<Trace> {
     let mut b = OutcomeBuilder::new(NAME);
     let run = run_down(&mut b, inputs)?;
-    let set = plausible::positive(&mut b, inputs.set_time, "set deceleration time")?;
+    let time = plausible::positive(&mut b, inputs.set_time, "set deceleration time")?;
+    let set = SetRamp { time, s_curve: s_curve(&mut b, inputs.s_curve)? };
     let bus = bus(&mut b, inputs).map(|ends| ends.most);
     Some(RampDown { bus, ..run }.on_ramp(set))
 }
@@ -82,8 +86,10 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let run = run_down(&mut b, inputs);
     let set = plausible::positive(&mut b, inputs.set_time, "set deceleration time");
     let ends = bus(&mut b, inputs);
-    let Some(run) = run else { return b.not_assessed() };
-    let (place, torque) = run.tightest();
+    let share = s_curve(&mut b, inputs.s_curve);
+    let (Some(run), Some(share)) = (run, share) else { return b.not_assessed() };
+    let tightest = run.tightest(share);
+    let (place, torque) = (tightest.speed, tightest.spare);
     b.line(
         &format!("least torque to slow down with, at {} rpm ({})", significant(place.rpm(), 4), run.train.load.words()),
         "T + T_L",
@@ -94,18 +100,19 @@ pub fn check(inputs: &Inputs) -> Outcome {
         ),
         newton_metres(torque),
     );
-    let Some(even) = run.shortest_even_ramp().map(Duration::seconds) else {
+    let Some(even) = run.shortest_ramp(share).map(Duration::seconds) else {
         b.limit("more braking torque than the load's pull, at every speed on the way");
         return b.judged(
             Verdict::Outside,
             "The load pulls harder than the current limit lets the motor hold. Look at the limit and the gear before any run with this load.",
         );
     };
+    let (formula, steep) = steepness(&mut b, share, tightest.slope);
     b.line(
         "shortest even ramp within the current limit",
-        "t = J·2π·Δn/(60·(T + T_L))",
+        &format!("t = {formula}J·2π·Δn/(60·(T + T_L))"),
         format!(
-            "{} kg·m² × 2π × {} rpm/(60 × {})",
+            "{steep}{} kg·m² × 2π × {} rpm/(60 × {})",
             significant(run.train.inertia.kilogram_square_metres(), 4),
             significant(run.from.rpm() - run.to.rpm(), 4),
             newton_metres(torque)
@@ -113,15 +120,15 @@ pub fn check(inputs: &Inputs) -> Outcome {
         format!("{} s", significant(even, 3)),
     );
     b.figure("shortest even ramp within the current limit", even, 3, "s");
-    limits(&mut b, inputs, &run, ends.as_ref(), even);
+    limits(&mut b, inputs, &run, ends.as_ref(), (share, even));
     let (Some(set), Some(ends)) = (set, ends) else { return b.not_assessed() };
-    judge(b, &run, &ends, set, even)
+    judge(b, &run, &ends, SetRamp { time: set, s_curve: share }, even)
 }
 
 /// Limit and ruler, before the setting is there.
-fn limits(b: &mut OutcomeBuilder, inputs: &Inputs, run: &RampDown, ends: Option<&Ends>, even: f64) {
+fn limits(b: &mut OutcomeBuilder, inputs: &Inputs, run: &RampDown, ends: Option<&Ends>, (share, even): (Ratio, f64)) {
     let shortest =
-        |bus: Bus| RampDown { bus: Some(bus), ..run.clone() }.shortest_without_chopper().map(Duration::seconds);
+        |bus: Bus| RampDown { bus: Some(bus), ..run.clone() }.shortest_without_chopper(share).map(Duration::seconds);
     let trip = ends.and_then(|ends| ends.least.trip);
     let ends = ends.filter(|_| inputs.chopper_voltage.is_none());
     if let Some((ends, capacitance)) = ends.and_then(|e| Some((e, e.least.capacitance?)))
@@ -214,8 +221,8 @@ fn bus(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<Ends> {
     Some(Ends { least: bus, most: Bus { losses: most, ..bus } })
 }
 
-fn judge(mut b: OutcomeBuilder, run: &RampDown, ends: &Ends, set: Duration, even: f64) -> Outcome {
-    let seconds = set.seconds();
+fn judge(mut b: OutcomeBuilder, run: &RampDown, ends: &Ends, set: SetRamp, even: f64) -> Outcome {
+    let seconds = set.time.seconds();
     let shown = significant(seconds, 3);
     let [worst, best] = [ends.least, ends.most].map(|bus| RampDown { bus: Some(bus), ..run.clone() }.on_ramp(set));
     let mut verdict = Verdict::Within;

@@ -3,21 +3,27 @@
 //! Automatic disconnection ahead of the drive: Z_s ≤ U₀/I_a, Z_s the earth-fault loop impedance, U₀ the nominal volts
 //! to earth, I_a the current that operates the protective device in the time that the rules ask for (TN system,
 //! IEC 60364-4-41, from memory). Without a loop reading the design's proof can stand in, as a figure, unless the site
-//! takes measured loops only. U₀ is that of an earthed star; any other earthing is for the design's own proof.
+//! takes measured loops only. A loop measured cold is compared with 2/3 of U₀/I_a (IEC 60364-6, informative annex, from
+//! memory), or with the share that the site names; the design's is taken at working temperature. U₀ is that of an earthed star; any other earthing is for the design's own proof.
 //! Behind the drive's output its own electronics limit the fault current: that part rests on the drive's manual.
 
 use crate::decision::Measured;
 use crate::formulas::marking::mark;
 use crate::formulas::plausible::{positive, positive_reading};
+use crate::limit::Limit;
 use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Current, Duration, Resistance, Voltage};
+use crate::quantity::{Current, Duration, Ratio, Resistance, Voltage};
 use crate::reading::Reading;
 use crate::rounding::significant;
-use crate::sources::earthing::{DISCONNECTION, PE_08};
+use crate::sources::earthing::{COLD_LOOP, DISCONNECTION, PE_08};
 
 /// Name in the catalogue.
 pub const NAME: &str = "disconnection";
+
+/// Share of U₀/I_a that a loop measured cold may reach, until the site names another.
+pub const COLD_SHARE: Limit =
+    Limit { name: "loop measured cold, over U₀/I_a", value: 2.0 / 3.0, unit: "1", source: COLD_LOOP };
 
 /// Which proof the site takes.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -49,6 +55,8 @@ pub struct Inputs {
     pub proved_by_design: Option<bool>,
     /// Which proof the site takes; either until it has chosen.
     pub accepted_proof: Option<Proof>,
+    /// Share of U₀/I_a that the site allows a measured loop.
+    pub site_share: Option<Ratio>,
 }
 
 /// Largest loop impedance, U₀/I_a.
@@ -63,7 +71,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let mut b = OutcomeBuilder::new(NAME);
     b.cite(DISCONNECTION);
     b.cite(PE_08);
-    b.note("A loop measured cold reads lower than at working temperature; a site rule may ask for a smaller limit. Local rules go first.");
+    b.note("A loop measured cold reads lower than at working temperature. Local rules go first.");
     let by_design = inputs.loop_impedance.is_none() && inputs.accepted_proof != Some(Proof::MeasuredLoop);
     let seen = by_design && inputs.proved_by_design == Some(true);
     if inputs.earthed_star == Some(false) && !seen {
@@ -83,7 +91,11 @@ pub fn check(inputs: &Inputs) -> Outcome {
             "No loop impedance measured; the design's own proof of disconnection was seen and is relied on.",
         );
     }
-    let Some(limit) = limit(&mut b, inputs) else {
+    let Some(full) = limit(&mut b, inputs) else {
+        return b.not_assessed();
+    };
+    let by_calculation = by_design && inputs.design_impedance.is_some();
+    let Some(limit) = (if by_calculation { Some(full) } else { measured_limit(&mut b, inputs, full) }) else {
         return b.not_assessed();
     };
     let limit_shown = significant(limit, 3);
@@ -153,6 +165,25 @@ fn limit(b: &mut OutcomeBuilder, inputs: &Inputs) -> Option<f64> {
     Some(ohms)
 }
 
+/// The limit in ohms of a loop that is measured, with its working.
+fn measured_limit(b: &mut OutcomeBuilder, inputs: &Inputs, full: f64) -> Option<f64> {
+    let (share, words) = match inputs.site_share {
+        Some(share) => (positive(b, Some(share), "share of U₀/Iₐ for a measured loop")?.fraction(), "by the site"),
+        None => {
+            b.cite(COLD_SHARE.source);
+            (COLD_SHARE.value, "measured cold")
+        }
+    };
+    let limit = full * share;
+    b.line(
+        &format!("limit for a measured loop, {words}"),
+        "Z_s(m) ≤ k·U₀/I_a",
+        format!("{} × {} Ω", significant(share, 3), significant(full, 3)),
+        format!("{} Ω", significant(limit, 3)),
+    );
+    Some(limit)
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -175,13 +206,20 @@ mod tests {
         }
     }
 
-    /// IEC 60364-4-41 clause 411.4 (from memory): 230 V and a device that needs 320 A allow 0.719 Ω.
+    /// IEC 60364-4-41 clause 411.4 (from memory): 230 V and a device that needs 320 A allow 0.719 Ω; a loop measured cold
+    /// may reach 2/3 of that, 0.479 Ω (IEC 60364-6, informative annex, from memory).
     #[test]
     fn at_just_inside_and_just_outside() {
         for (ohms, verdict) in
-            [(0.68, Verdict::Within), (0.719, Verdict::Marginal), (0.75, Verdict::Marginal), (0.76, Verdict::Outside)]
+            [(0.45, Verdict::Within), (0.479, Verdict::Marginal), (0.50, Verdict::Marginal), (0.51, Verdict::Outside)]
         {
             assert_eq!(check(&measured(ohms)).verdict, verdict, "{ohms}");
+        }
+        let site = |share, ohms| Inputs { site_share: Some(Ratio::from_fraction(share)), ..measured(ohms) };
+        for (share, ohms, verdict) in
+            [(1.0, 0.68, Verdict::Within), (1.0, 0.76, Verdict::Outside), (0.5, 0.45, Verdict::Outside)]
+        {
+            assert_eq!(check(&site(share, ohms)).verdict, verdict, "{share} of it, {ohms}");
         }
         let bare = Inputs { loop_impedance: Some(Reading::bare(Resistance::from_ohms(0.1))), ..measured(0.0) };
         assert_eq!(check(&bare).verdict, Verdict::Marginal);
@@ -220,7 +258,7 @@ mod tests {
         let of = |device, site| Inputs {
             operating_time: Some(Duration::from_seconds(device)),
             longest_time: Some(Duration::from_seconds(site)),
-            ..measured(0.5)
+            ..measured(0.45)
         };
         assert_eq!(
             (check(&of(5.0, 0.4)).verdict, check(&of(0.4, 5.0)).verdict),
@@ -231,7 +269,7 @@ mod tests {
     #[test]
     fn the_limit_is_there_before_the_reading() {
         let outcome = check(&Inputs { loop_impedance: None, ..measured(0.0) });
-        assert_eq!((outcome.limit.as_str(), outcome.rule.is_some()), ("loop impedance at most 0.719 Ω", true));
+        assert_eq!((outcome.limit.as_str(), outcome.rule.is_some()), ("loop impedance at most 0.479 Ω", true));
         assert_eq!(outcome.missing[0].what, "earth-fault loop impedance");
         assert_eq!(check(&measured(0.0)).verdict, Verdict::NotAssessed);
         assert_eq!(

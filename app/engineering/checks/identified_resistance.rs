@@ -48,7 +48,7 @@ pub struct Inputs {
     /// Measured between W and U.
     pub w_u: Option<Reading<Resistance>>,
     /// Winding temperature when measured.
-    pub measured_at: Option<Temperature>,
+    pub measured_at: Option<Reading<Temperature>>,
     /// Winding temperature when identified.
     pub identified_at: Option<Temperature>,
     /// Resistance of one conductor of the motor cable; zero when measured through the cable.
@@ -72,7 +72,8 @@ pub fn check(inputs: &Inputs) -> Outcome {
     ];
     let readings = named.map(|(r, what)| plausible::positive_reading(&mut b, r.as_ref(), what));
     let warm = "20 °C, as if nothing had warmed up";
-    let from = b.assume(inputs.measured_at, Temperature::from_celsius(20.0), "winding temperature when measured", warm);
+    let read = inputs.measured_at.as_ref().map(|r| r.value);
+    let from = b.assume(read, Temperature::from_celsius(20.0), "winding temperature when measured", warm);
     let to = b.assume(inputs.identified_at, from, "winding temperature when identified", "the same as when measured");
     let cable = b.assume(
         inputs.cable_conductor,
@@ -128,7 +129,12 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.figure("apart", apart, 2, "%");
     // Relative doubt of the mean of three, carried to the percentage.
     let scale = (apart + 100.0) / (3.0 * spread.mean) * (warmed / expected);
-    let terms = readings.map(|r| (r.standard_uncertainty().map(|u| u * scale.abs()), r.doubt()));
+    let mut terms = readings.map(|r| (r.standard_uncertainty().map(|u| u * scale.abs()), r.doubt())).to_vec();
+    // One temperature taken for both moments moves nothing; two that were entered do, even where they read alike.
+    if let Some(thermometer) = inputs.measured_at.as_ref().filter(|_| inputs.identified_at.is_some()) {
+        let each_kelvin = (apart + 100.0) * (warmed / expected) / (Conductor::Copper.constant() + from.celsius());
+        terms.push((thermometer.standard_uncertainty().map(|u| u * each_kelvin.abs()), thermometer.doubt()));
+    }
     let measured = Measured::combined(apart, &terms);
     let verdict = marking::hint(measured.between(-APART.value, APART.value));
     marking::mark(&mut b, &measured, format!("{off} %"), verdict);
@@ -147,6 +153,34 @@ mod tests {
     use super::*;
     use crate::reading::Accuracy;
 
+    /// A thermometer that may be this many kelvins off.
+    fn thermometer(celsius: f64, off: f64) -> Reading<Temperature> {
+        let accuracy = Accuracy {
+            percent_of_reading: 0.0,
+            digits: 1.0,
+            resolution: off,
+            percent_of_full_scale: 0.0,
+            full_scale: 0.0,
+        };
+        Reading::with(Temperature::from_celsius(celsius), accuracy)
+    }
+
+    /// MN-19 by hand: 0.5 Ω at 20 °C is 0.5 × 275/255 Ω at 40 °C. 19 % apart is within 20 %; a kelvin is 119 %/255 of it,
+    /// so a thermometer 4 K off, U = 2 × 4/√3 K, moves it by 2.2 % and cannot tell. Taken for both moments it moves nothing.
+    #[test]
+    fn the_thermometer_counts_where_two_temperatures_were_entered() {
+        let with = |off: f64, identified_at: f64| {
+            let seen = 1.19 * 0.5 * (235.0 + identified_at) / 255.0;
+            let at = Some(Temperature::from_celsius(identified_at));
+            Inputs { measured_at: Some(thermometer(20.0, off)), identified_at: at, ..of(seen, 1.0) }
+        };
+        assert_eq!(check(&with(0.1, 40.0)).verdict, Verdict::Within);
+        assert_eq!(check(&with(4.0, 40.0)).verdict, Verdict::Marginal);
+        assert_eq!(check(&Inputs { identified_at: None, ..with(4.0, 20.0) }).verdict, Verdict::Within);
+        let bare = Some(Reading::bare(Temperature::from_celsius(20.0)));
+        assert_eq!(check(&Inputs { measured_at: bare, ..with(0.1, 40.0) }).verdict, Verdict::Marginal);
+    }
+
     fn of(identified: f64, line_to_line: f64) -> Inputs {
         let meter = Accuracy {
             percent_of_reading: 0.1,
@@ -162,7 +196,7 @@ mod tests {
             u_v: reading.clone(),
             v_w: reading.clone(),
             w_u: reading,
-            measured_at: Some(Temperature::from_celsius(20.0)),
+            measured_at: Some(thermometer(20.0, 0.0)),
             identified_at: Some(Temperature::from_celsius(20.0)),
             cable_conductor: Some(Resistance::from_ohms(0.0)),
         }
@@ -195,7 +229,7 @@ mod tests {
         assert_eq!(outcome.missing[0].what, "winding resistance V-W");
         assert!(outcome.assumed.len() == 1 && outcome.rule.is_some());
         assert_eq!(check(&of(0.0, 1.0)).verdict, Verdict::NotAssessed);
-        let absurd = Inputs { measured_at: Some(Temperature::from_celsius(-235.0)), ..of(0.5, 1.0) };
+        let absurd = Inputs { measured_at: Some(thermometer(-235.0, 0.0)), ..of(0.5, 1.0) };
         assert_eq!(check(&absurd).verdict, Verdict::NotAssessed);
     }
 }

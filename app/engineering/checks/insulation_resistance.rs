@@ -8,14 +8,19 @@
 //! thermometer counts as an instrument: without its word the verdict is marginal at best.
 //! Minimum: 5 MΩ random-wound or below 1 kV; 100 MΩ most form-wound windings after about 1970;
 //! kV + 1 for older ones. Measured with its cable, the limit is the pair's. The motor maker's limit goes first.
+//! Taken with a test voltage other than the one asked for (insulation-test-voltage), or with the winding at or below the
+//! dew point of its air, the reading is marginal at best.
 
+use super::insulation_test_voltage;
 use crate::decision::Measured;
+use crate::formulas::dew_point::dew_point;
 use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
-use crate::quantity::{Resistance, Temperature, Voltage};
+use crate::quantity::{Ratio, Resistance, Temperature, Voltage};
 use crate::reading::Reading;
 use crate::rounding::significant;
-use crate::sources::insulation::{IR_02, IR_03, IR_04};
+use crate::sources::insulation::{IR_01, IR_02, IR_03, IR_04, IR_11};
+use crate::sources::windings::MAGNUS;
 
 /// Name in the catalogue.
 pub const NAME: &str = "insulation-resistance";
@@ -55,6 +60,14 @@ pub struct Inputs {
     pub construction: Option<Construction>,
     /// The motor maker's own minimum at 40 °C.
     pub maker_minimum: Option<Resistance>,
+    /// Direct voltage set on the tester.
+    pub test_voltage: Option<Voltage>,
+    /// The motor maker's own test voltage.
+    pub maker_test_voltage: Option<Voltage>,
+    /// Air temperature at the motor.
+    pub air_temperature: Option<Temperature>,
+    /// Relative humidity of that air.
+    pub humidity: Option<Ratio>,
 }
 
 /// Worst-case factor and the words for the rule applied; `None` where no rule corrects.
@@ -142,7 +155,9 @@ pub fn check(inputs: &Inputs) -> Outcome {
             significant(at_this * (1.0 + measured.expanded / measured.value), 3)
         ));
     }
+    let circumstances = circumstances(&mut b, inputs, celsius);
     let verdict = measured.at_least(limit);
+    let verdict = if circumstances.is_empty() { verdict } else { verdict.worse(Verdict::Marginal) };
     let shown = significant(measured.value, 3);
     b.figure("insulation resistance at 40 °C", measured.value, 3, "MΩ");
     b.figure("correction factor", k, 3, "");
@@ -160,10 +175,38 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("At 40 °C: {shown} MΩ, below {limit} MΩ. Look for moisture, dirt or a damaged cable; test the cable alone; do not energise until the cause is known."),
+            Verdict::Marginal if !circumstances.is_empty() => format!("At 40 °C: {shown} MΩ against {limit} MΩ, but marginal at best: {}. Put that right and repeat the test.", circumstances.join("; ")),
             Verdict::Marginal => format!("At 40 °C: {shown} MΩ. The instrument cannot tell it from the {limit} MΩ limit, or its word does not count."),
             _ => format!("At 40 °C: {shown} MΩ, at least {limit} MΩ."),
         },
     )
+}
+
+/// Why the reading is marginal at best, whatever its size: how the test was made.
+fn circumstances(b: &mut OutcomeBuilder, inputs: &Inputs, winding: f64) -> Vec<String> {
+    let mut why = Vec::new();
+    let tested = insulation_test_voltage::check(&insulation_test_voltage::Inputs {
+        test_voltage: inputs.test_voltage,
+        rated_voltage: inputs.rated_voltage,
+        maker_test_voltage: inputs.maker_test_voltage,
+    });
+    if let (Verdict::Outside, Some(volts)) = (tested.verdict, inputs.test_voltage) {
+        b.cite(IR_01);
+        let volts = significant(volts.volts(), 4);
+        why.push(format!("the test voltage was {volts} V, where {} is asked for", tested.limit));
+    }
+    if let Some(dew) = inputs.air_temperature.zip(inputs.humidity).and_then(|(air, humidity)| dew_point(air, humidity))
+        && winding <= dew.celsius()
+    {
+        b.cite(IR_11);
+        b.cite(MAGNUS);
+        let (winding, dew) = (significant(winding, 3), significant(dew.celsius(), 3));
+        why.push(format!("the winding at {winding} °C was not above the dew point of {dew} °C and may have been wet"));
+    }
+    for one in &why {
+        b.note(format!("Marginal at best: {one}."));
+    }
+    why
 }
 
 /// Minimum at 40 °C in ohms, with its line of working.
@@ -252,6 +295,28 @@ mod tests {
         assert_eq!(check(&bare(400.0)).verdict, Verdict::Marginal);
         assert!(check(&bare(400.0)).notes.iter().any(|n| n.contains("no instrument is named")));
         assert_eq!(check(&bare(12.0)).verdict, Verdict::Outside);
+    }
+
+    /// IEEE 43-2013, table 1 (row IR-01): 500 V up to 1 kV; and clause 5 (row IR-11): winding above the dew point.
+    #[test]
+    fn the_wrong_test_voltage_or_a_wet_winding_makes_it_marginal_at_best_and_says_why() {
+        let volts = |v| Some(Voltage::from_volts(v));
+        let tested = |v| check(&Inputs { test_voltage: volts(v), ..reading(400.0, 20.0) });
+        assert_eq!((tested(500.0).verdict, tested(250.0).verdict), (Verdict::Within, Verdict::Marginal));
+        let said = tested(250.0).summary;
+        assert!(said.contains("the test voltage was 250.0 V, where 500 V dc is asked for"), "{said}");
+        let own = Inputs { test_voltage: volts(1000.0), maker_test_voltage: volts(1000.0), ..reading(400.0, 20.0) };
+        assert_eq!(check(&own).verdict, Verdict::Within, "the maker asked for it");
+        // 20 °C and 100 % humidity: the dew point is the air's own 20 °C.
+        let damp = |humidity| {
+            let (air_temperature, humidity) =
+                (Some(Temperature::from_celsius(20.0)), Some(Ratio::from_fraction(humidity)));
+            check(&Inputs { air_temperature, humidity, ..reading(400.0, 20.0) })
+        };
+        assert_eq!((damp(0.5).verdict, damp(1.0).verdict), (Verdict::Within, Verdict::Marginal));
+        assert!(damp(1.0).summary.contains("not above the dew point of 20.0 °C"), "{}", damp(1.0).summary);
+        let low = Inputs { test_voltage: volts(250.0), ..reading(12.0, 20.0) };
+        assert_eq!(check(&low).verdict, Verdict::Outside, "outside stays outside");
     }
 
     #[test]

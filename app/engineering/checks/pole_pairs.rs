@@ -2,7 +2,9 @@
 //!
 //! Pole pairs that frequency and speed of the plate imply: p = ⌊60·f/n⌋, n_s = 60·f/p, s = (n_s − n)/n_s.
 //! At or up to 0.5 % above a synchronous speed: outside, an induction motor does not reach it. A printed pole number
-//! that disagrees: outside. Slip above 8 % from 1 kW, above 15 % below (common practice): marginal. Power not stated:
+//! that disagrees: outside. A speed that as the larger pole pair would slip by far too much, and lies nearer above the
+//! synchronous speed of the next pole count, is outside too: a motor does not reach it under load; the plate's 60 Hz or
+//! 50 Hz column and single digits that would explain it are named. Slip above 8 % from 1 kW, above 15 % below (common practice): marginal. Power not stated:
 //! assumed 1 kW or more, which is stricter. The printed speed counts as rounded to its last digit.
 
 use crate::decision::Measured;
@@ -27,6 +29,9 @@ pub const SMALL_SLIP: Limit = Limit { name: "rated slip below 1 kW", value: 0.15
 
 /// Up to here above a synchronous speed a plate is read as that speed, not as a large slip of the next one.
 const ABOVE: f64 = 1.005;
+
+/// Beyond so many times the largest usual slip nobody takes a plate as that pole count (common practice, no source).
+const HOPELESS: f64 = 1.5;
 
 /// What the check takes.
 #[derive(Clone, Debug, Default, PartialEq)]
@@ -89,6 +94,9 @@ pub fn check(inputs: &Inputs) -> Outcome {
             format!("{rpm} rpm lies above {fastest} rpm, the fastest synchronous speed at this frequency. Read speed and frequency again, from the same column of the plate."),
         );
     };
+    if let Some(meant) = meant_pairs(inputs, frequency, speed, pairs, limit.value) {
+        return above_synchronous(b, (frequency, speed), (pairs, meant), limit.value);
+    }
     let n_s = synchronous_speed(frequency, pairs);
     let s = slip(n_s, speed).fraction();
     let n_s_shown = significant(n_s.rpm(), 4);
@@ -155,6 +163,102 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.judged(verdict, summary)
 }
 
+/// The pole pairs of the plate, where its speed lies above their synchronous speed: those printed, else the next count
+/// when the larger one slips beyond hope and the speed is nearer to the next.
+fn meant_pairs(inputs: &Inputs, frequency: Frequency, speed: Speed, pairs: u32, usual_slip: f64) -> Option<u32> {
+    let above = |p: u32| speed.rpm() > synchronous_speed(frequency, p).rpm() * ABOVE;
+    let as_these = slip(synchronous_speed(frequency, pairs), speed).fraction();
+    if as_these <= usual_slip {
+        return None;
+    }
+    let printed = inputs.printed_poles.filter(|poles| *poles >= 2 && poles % 2 == 0).map(|poles| poles / 2);
+    if let Some(printed) = printed.filter(|p| above(*p)) {
+        return Some(printed);
+    }
+    let next = pairs.checked_add(1)?;
+    let nearer = speed.rpm() / synchronous_speed(frequency, next).rpm()
+        < synchronous_speed(frequency, pairs).rpm() / speed.rpm();
+    (as_these > HOPELESS * usual_slip && nearer && above(next)).then_some(next)
+}
+
+/// Ends outside: faster than the synchronous speed of the pole count that the plate means, with what would explain it.
+fn above_synchronous(
+    mut b: OutcomeBuilder,
+    (frequency, speed): (Frequency, Speed),
+    (pairs, meant): (u32, u32),
+    usual_slip: f64,
+) -> Outcome {
+    let n_s = synchronous_speed(frequency, meant);
+    let (rpm, n_s_shown) = (significant(speed.rpm(), 5), significant(n_s.rpm(), 4));
+    let hertz = significant(frequency.hertz(), 4);
+    let as_these = significant(slip(synchronous_speed(frequency, pairs), speed).fraction() * 100.0, 2);
+    b.line("synchronous speed", "n_s = 60·f/p", format!("60 × {hertz} Hz/{meant}"), format!("{n_s_shown} rpm"));
+    b.line(
+        "speed above it",
+        "n − n_s",
+        format!("{rpm} rpm − {n_s_shown} rpm"),
+        format!("{} rpm", significant(speed.rpm() - n_s.rpm(), 3)),
+    );
+    b.text_figure("poles", (2 * meant).to_string());
+    b.figure("synchronous speed", n_s.rpm(), 4, "rpm");
+    b.rule(
+        LimitRule::linear("rpm")
+            .between(
+                n_s.rpm() * (1.0 - usual_slip),
+                format!("{} % slip", significant(usual_slip * 100.0, 2)),
+                n_s.rpm(),
+                format!("{n_s_shown} rpm"),
+            )
+            .reading(speed.rpm(), 0.0, format!("{rpm} rpm"), Verdict::Outside),
+    );
+    let likely = likely_readings(frequency, speed, meant, usual_slip);
+    let likely = if likely.is_empty() { String::new() } else { format!(" Likely: {}.", likely.join("; or ")) };
+    b.judged(
+        Verdict::Outside,
+        format!("{rpm} rpm lies above the synchronous speed of {n_s_shown} rpm of {} poles at {hertz} Hz; an induction motor does not reach that under load, and as {} poles it would slip {as_these} %.{likely} Read speed and frequency again, from the same column of the plate.", 2 * meant, 2 * pairs),
+    )
+}
+
+/// Readings of the same plate that would fit: the column of the other public frequency, one digit, two digits exchanged.
+fn likely_readings(frequency: Frequency, speed: Speed, meant: u32, usual_slip: f64) -> Vec<String> {
+    let fits = |frequency: Frequency, rpm: f64| {
+        let s = slip(synchronous_speed(frequency, meant), Speed::from_rpm(rpm)).fraction();
+        (s > 0.0 && s <= usual_slip).then_some(s)
+    };
+    let mut likely = Vec::new();
+    for (is, other) in [(50.0, 60.0), (60.0, 50.0)] {
+        if (frequency.hertz() - is).abs() < 0.5 && fits(Frequency::from_hertz(other), speed.rpm()).is_some() {
+            likely.push(format!("the speed of the {other} Hz column beside {is} Hz"));
+        }
+    }
+    let digits: Vec<char> = format!("{:.0}", speed.rpm()).chars().collect();
+    let mut readings: Vec<(f64, String, &str)> = Vec::new();
+    let mut take = |changed: Vec<char>, how: &'static str| {
+        let text: String = changed.into_iter().collect();
+        if let Some(s) = text.parse().ok().and_then(|rpm| fits(frequency, rpm)) {
+            readings.push((s, text, how));
+        }
+    };
+    for at in 0..digits.len() {
+        let mut swapped = digits.clone();
+        if at + 1 < digits.len() && digits.get(at) != digits.get(at + 1) {
+            swapped.swap(at, at + 1);
+            take(swapped, "two digits exchanged");
+        }
+        for other in '0'..='9' {
+            let mut changed = digits.clone();
+            if let Some(digit) = changed.get_mut(at).filter(|d| **d != other) {
+                *digit = other;
+                take(changed, "one digit misread");
+            }
+        }
+    }
+    // The least slip first: that is how full-load speeds are.
+    readings.sort_by(|a, b| a.0.total_cmp(&b.0));
+    likely.extend(readings.into_iter().take(2).map(|(_, text, how)| format!("{text} rpm, {how}")));
+    likely
+}
+
 #[cfg(test)]
 mod tests {
     use super::*;
@@ -193,6 +297,28 @@ mod tests {
         assert_eq!(check(&plate(50.0, 1499.0)).verdict, Verdict::Within);
         // C-MN-005: 1250 rpm at 50 Hz is no whole pole count with a usual slip.
         assert_eq!(check(&plate(50.0, 1250.0)).verdict, Verdict::Marginal);
+    }
+
+    /// Row MN-03: n_s = 60·f/p, which an induction motor does not reach under load.
+    #[test]
+    fn a_speed_above_the_synchronous_one_is_no_two_pole_motor_with_half_its_speed_lost() {
+        let fast = check(&plate(50.0, 1575.0));
+        assert_eq!((fast.verdict, fast.figures[0].value.as_str()), (Verdict::Outside, "4"));
+        let said = &fast.summary;
+        assert!(said.contains("above the synchronous speed of 1500 rpm of 4 poles at 50.00 Hz"), "{said}");
+        assert!(
+            said.contains("as 2 poles it would slip 48 %") && said.contains("1475 rpm, one digit misread"),
+            "{said}"
+        );
+        let column = check(&plate(50.0, 1760.0)).summary;
+        assert!(column.contains("the speed of the 60 Hz column beside 50 Hz"), "{column}");
+        assert_eq!(check(&plate(60.0, 1850.0)).verdict, Verdict::Outside);
+        assert_eq!(check(&plate(50.0, 1050.0)).figures[0].value, "6", "5 % above 1000 rpm");
+        let swapped = check(&plate(50.0, 1745.0)).summary;
+        assert!(swapped.contains("1475 rpm, two digits exchanged"), "{swapped}");
+        let printed = check(&Inputs { printed_poles: Some(4), ..plate(50.0, 2300.0) }).summary;
+        assert!(printed.contains("of 4 poles") && printed.contains("as 2 poles"), "{printed}");
+        assert!(check(&plate(50.0, 1475.0)).summary.starts_with("4 poles"), "a sound plate stays as it was");
     }
 
     #[test]

@@ -20,7 +20,7 @@ use crate::sources::nameplate::{MN_05, MN_11, PLAUSIBLE_PRODUCT};
 pub const NAME: &str = "power-balance";
 
 /// Power factors that induction motors have (common practice).
-const POWER_FACTORS: (f64, f64) = (0.40, 0.95);
+pub(crate) const POWER_FACTORS: (f64, f64) = (0.40, 0.95);
 
 /// What the check takes: one column of the plate.
 #[derive(Clone, Debug, Default, PartialEq)]
@@ -163,6 +163,15 @@ pub fn check(inputs: &Inputs) -> Outcome {
     b.judged(verdict, summary)
 }
 
+/// Least and most efficiency times power factor that a motor of this power has (common practice, row MN-22).
+pub(crate) fn least_and_most_product(power: Power) -> (f64, f64) {
+    match power.watts() {
+        watts if watts < 1000.0 => (0.15, 0.85),
+        watts if watts < 10_000.0 => (0.35, 0.90),
+        _ => (0.45, 0.93),
+    }
+}
+
 /// Lowest and highest possible value, and of what, with its line of working.
 fn limits(
     b: &mut OutcomeBuilder,
@@ -170,11 +179,7 @@ fn limits(
     cosine: Option<Printed<Ratio>>,
     efficiency: Option<Printed<Ratio>>,
 ) -> (f64, f64, &'static str) {
-    let (least, most) = match power.number() {
-        watts if watts < 1000.0 => (0.15, 0.85),
-        watts if watts < 10_000.0 => (0.35, 0.90),
-        _ => (0.45, 0.93),
-    };
+    let (least, most) = least_and_most_product(power.value);
     if cosine.is_none() || efficiency.is_none() {
         b.cite(PLAUSIBLE_PRODUCT);
         b.note("A figure is not on the plate, so only bounds that hold for any induction motor are applied.");

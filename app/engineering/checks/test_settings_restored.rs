@@ -82,9 +82,9 @@ pub fn check(inputs: &Inputs) -> Outcome {
     }
 }
 
-/// A value that says something.
+/// A value that says something; a number out of all range says nothing.
 fn filled(text: Option<&str>) -> Option<&str> {
-    text.map(str::trim).filter(|t| !t.is_empty())
+    text.map(str::trim).filter(|t| !t.is_empty() && t.parse::<f64>().map_or(true, f64::is_finite))
 }
 
 /// Equal as numbers where both are numbers, else as words.
@@ -136,5 +136,7 @@ mod tests {
             (outcome.verdict, outcome.missing[0].what.as_str()),
             (Verdict::NotAssessed, "current limit as left")
         );
+        // Found by the records made of anything (commissioning, judge/tests/fuzz.rs).
+        assert_eq!(check(&of("50", "-inf", "50")).missing[0].what, "current limit as intended");
     }
 }

@@ -1,12 +1,13 @@
-//! What comes back on an even ramp down: peak power, energy and torque at the shaft (row RM-05).
+//! What comes back on a set ramp down: peak power, energy and torque at the shaft (row RM-05).
 //!
 //! The ramp is taken as followed whatever it takes, and without motor and inverter losses: an upper bound. The gear's
 //! losses are counted.
 
 use super::available_torque::angular;
+use super::set_ramp::{SetRamp, done, slope};
 use super::time_to_speed::{STEPS, acceleration};
 use super::train::Train;
-use crate::quantity::{Duration, Energy, Power, Speed, Torque};
+use crate::quantity::{Energy, Power, Ratio, Speed, Torque};
 
 /// What comes back on the way down.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -17,18 +18,23 @@ pub struct Returned {
     pub energy: Energy,
     /// Highest braking torque; negative when the motor has to drive all the way down.
     pub torque: Torque,
+    /// The speed at which it is that high.
+    pub at: Speed,
+    /// The ramp's own slope there over its mean one; 1 all along a straight ramp.
+    pub slope: Ratio,
 }
 
-/// Peak power, energy and torque of an even ramp of this length.
+/// Peak power, energy and torque of a ramp set like this.
 #[must_use]
-pub fn even_ramp(train: &Train, from: Speed, to: Speed, set: Duration) -> Returned {
-    let change = from.rpm() - to.rpm();
-    let slowing = change / set.seconds() / acceleration(1.0, train.inertia);
-    let torque = |n: Speed| slowing - train.slowing(n).newton_metres();
+pub fn even_ramp(train: &Train, from: Speed, to: Speed, set: impl Into<SetRamp>) -> Returned {
+    let (set, change) = (set.into(), from.rpm() - to.rpm());
+    let mean = change / set.time.seconds() / acceleration(1.0, train.inertia);
     let halves = 2 * STEPS;
-    let (mut peak, mut energy, mut highest) = (0.0_f64, 0.0, f64::NEG_INFINITY);
+    let (mut peak, mut energy) = (0.0_f64, 0.0);
+    let mut highest = (f64::NEG_INFINITY, from, 1.0);
     for half in 0..=halves {
-        let n = Speed::from_rpm(from.rpm() - change * f64::from(half) / f64::from(halves));
+        let x = f64::from(half) / f64::from(halves);
+        let (n, slope) = (Speed::from_rpm(from.rpm() - change * done(set.s_curve, x)), slope(set.s_curve, x));
         let weight = if half == 0 || half == halves {
             1.0
         } else if half % 2 == 1 {
@@ -36,14 +42,20 @@ pub fn even_ramp(train: &Train, from: Speed, to: Speed, set: Duration) -> Return
         } else {
             2.0
         };
-        let power = (torque(n) * angular(n)).max(0.0);
-        (peak, highest) = (peak.max(power), highest.max(torque(n)));
-        energy += weight * power * set.seconds() / f64::from(halves) / 3.0;
+        let torque = mean * slope - train.slowing(n).newton_metres();
+        let power = (torque * angular(n)).max(0.0);
+        peak = peak.max(power);
+        if torque > highest.0 {
+            highest = (torque, n, slope);
+        }
+        energy += weight * power * set.time.seconds() / f64::from(halves) / 3.0;
     }
     Returned {
         peak: Power::from_watts(peak),
         energy: Energy::from_joules(energy),
-        torque: Torque::from_newton_metres(highest),
+        torque: Torque::from_newton_metres(highest.0),
+        at: highest.1,
+        slope: Ratio::from_fraction(highest.2),
     }
 }
 
@@ -53,7 +65,7 @@ mod tests {
     use crate::motion::gear::Gear;
     use crate::motion::load_torque::LoadTorque;
     use crate::motion::resistor::{duty, largest, mean_power};
-    use crate::quantity::{Inertia, Ratio, Voltage};
+    use crate::quantity::{Duration, Inertia, Voltage};
 
     fn train(load: f64, gear: Gear) -> Train {
         let (motor, driven) = (Inertia::from_kilogram_square_metres(1.5), Inertia::from_kilogram_square_metres(0.0));

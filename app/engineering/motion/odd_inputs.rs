@@ -100,24 +100,25 @@ proptest! {
     #[test]
     fn ramps_and_brakes_stay_sound(
         machine in any_machine(),
+        share in any::<Ratio>(0.0, 1.0),
         speeds in (any::<Speed>(0.0, 3000.0), any::<Speed>(100.0, 3000.0)),
         times in (any::<Duration>(0.1, 100.0), any::<Duration>(0.0, 100.0), any::<Duration>(1.0, 1000.0)),
         bus in (any::<Voltage>(300.0, 600.0), any::<Capacitance>(1e-4, 1e-2), any::<Voltage>(600.0, 900.0), any::<Voltage>(600.0, 900.0), any::<Power>(0.0, 1e4)),
         brake in (any::<Resistance>(5.0, 100.0), any::<Resistance>(5.0, 500.0), any::<Power>(10.0, 1e5)),
     ) {
         let up = acceleration_time::Inputs {
-            machine: machine.clone(), from_speed: speeds.0, to_speed: speeds.1, set_time: times.0, plain_volts_per_hertz: None,
+            machine: machine.clone(), from_speed: speeds.0, to_speed: speeds.1, set_time: times.0, s_curve: share, plain_volts_per_hertz: None,
         };
         let outcome = acceleration_time::check(&up);
         prop_assert!(sound(&outcome), "{outcome:?}");
         let down = deceleration_time::Inputs {
-            machine: machine.clone(), from_speed: speeds.1, to_speed: speeds.0, set_time: times.0,
+            machine: machine.clone(), from_speed: speeds.1, to_speed: speeds.0, set_time: times.0, s_curve: share,
             bus_voltage: bus.0, bus_capacitance: bus.1, trip_voltage: bus.2, chopper_voltage: bus.3.filter(|v| v.volts() > 700.0), losses: bus.4,
         };
         let outcome = deceleration_time::check(&down);
         prop_assert!(sound(&outcome), "{outcome:?}");
         let stop = braking::Inputs {
-            machine, from_speed: speeds.1, to_speed: speeds.0, set_time: times.0, holding_time: times.1, cycle_time: times.2,
+            machine, from_speed: speeds.1, to_speed: speeds.0, set_time: times.0, s_curve: share, holding_time: times.1, cycle_time: times.2,
             chopper_voltage: bus.3, minimum_resistor: brake.0, resistor: brake.1, resistor_power: brake.2,
         };
         let outcome = braking::check(&stop);

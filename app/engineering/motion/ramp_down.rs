@@ -5,10 +5,12 @@
 
 use super::available_torque::{Motor, angular};
 use super::bus::{Bus, energy_between, voltage_after};
-use super::time_to_speed::{COARSE_STEPS, STEPS, Step, acceleration, walk, walk_in};
+use super::ramp_up::Tightest;
+use super::set_ramp::{STRAIGHT, SetRamp, done, slope};
+use super::time_to_speed::{COARSE_STEPS, Place, STEPS, Step, acceleration, walk_in};
 use super::trace::{End, Sample, Trace};
 use super::train::Train;
-use crate::quantity::{Current, Duration, Energy, Speed, Torque, Voltage};
+use crate::quantity::{Current, Duration, Energy, Ratio, Speed, Torque, Voltage};
 
 /// A run down, ready to be worked out.
 #[derive(Clone, Debug, PartialEq)]
@@ -31,42 +33,52 @@ impl RampDown {
     /// The run with all the braking torque that the limit leaves.
     #[must_use]
     pub fn fastest(&self) -> Trace {
-        self.run(f64::INFINITY)
+        self.run(None)
     }
 
-    /// The run on an even ramp set to last this long; it ends where the bus trips, if it does.
+    /// The run on a ramp set like this; it ends where the bus trips, if it does.
     #[must_use]
-    pub fn on_ramp(&self, set: Duration) -> Trace {
-        self.run((self.from.rpm() - self.to.rpm()) / set.seconds())
+    pub fn on_ramp(&self, set: impl Into<SetRamp>) -> Trace {
+        self.run(Some(set.into()))
     }
 
-    /// The speed with the least torque to slow down with, the load's help counted in, and that torque.
+    /// Where a ramp with this S-curve share first meets the current limit: the least torque to slow down with, the
+    /// load's help counted in, for the slope that the ramp has there.
     #[must_use]
-    pub fn tightest(&self) -> (Speed, Torque) {
+    pub fn tightest(&self, s_curve: Ratio) -> Tightest {
         let change = self.from.rpm() - self.to.rpm();
-        let place = |i: u32| Speed::from_rpm(self.to.rpm() + change * f64::from(i) / f64::from(2 * STEPS));
-        (0..=2 * STEPS)
-            .map(|i| (place(i), self.slowing_torque(place(i))))
-            .min_by(|a, b| a.1.newton_metres().total_cmp(&b.1.newton_metres()))
-            .unwrap_or((self.from, self.slowing_torque(self.from)))
+        let place = |i: u32| {
+            let x = f64::from(i) / f64::from(2 * STEPS);
+            let speed = Speed::from_rpm(self.from.rpm() - change * done(s_curve, x));
+            Tightest { speed, spare: self.slowing_torque(speed), slope: Ratio::from_fraction(slope(s_curve, x)) }
+        };
+        Tightest::least((0..=2 * STEPS).rev().map(place)).unwrap_or_else(|| place(0))
     }
 
-    /// The shortest ramp, even from start to end, that never meets the current limit; none where it runs away.
+    /// The shortest straight ramp that never meets the current limit; none where it runs away.
     #[must_use]
     pub fn shortest_even_ramp(&self) -> Option<Duration> {
-        let slowest = acceleration(self.tightest().1.newton_metres(), self.train.inertia);
-        (slowest > 0.0).then(|| Duration::from_seconds((self.from.rpm() - self.to.rpm()) / slowest))
+        self.shortest_ramp(STRAIGHT)
     }
 
-    /// The shortest even ramp, up to one hour, whose bus stays below the trip voltage without a chopper; none if not
-    /// even that hour does, or the bus is not known.
+    /// The shortest ramp with this S-curve share that never meets the current limit; none where it runs away.
     #[must_use]
-    pub fn shortest_without_chopper(&self) -> Option<Duration> {
+    pub fn shortest_ramp(&self, s_curve: Ratio) -> Option<Duration> {
+        let tightest = self.tightest(s_curve);
+        let possible = acceleration(tightest.spare.newton_metres(), self.train.inertia);
+        let change = self.from.rpm() - self.to.rpm();
+        (possible > 0.0).then(|| Duration::from_seconds(change * tightest.slope.fraction() / possible))
+    }
+
+    /// The shortest ramp with this S-curve share, up to one hour, whose bus stays below the trip voltage without a
+    /// chopper; none if not even that hour does, or the bus is not known.
+    #[must_use]
+    pub fn shortest_without_chopper(&self, s_curve: Ratio) -> Option<Duration> {
         let bus = self.bus?;
         bus.capacitance?;
         bus.trip?;
         let bare = Self { bus: Some(Bus { chopper: None, ..bus }), ..self.clone() };
-        let holds = |seconds: f64| bare.bus_holds(Duration::from_seconds(seconds));
+        let holds = |seconds: f64| bare.bus_holds(SetRamp { time: Duration::from_seconds(seconds), s_curve });
         let (mut low, mut high) = (0.01, 3600.0);
         if !holds(high) {
             return None;
@@ -89,13 +101,12 @@ impl RampDown {
         Torque::from_newton_metres(motor + self.train.slowing(speed).newton_metres())
     }
 
-    /// Whether the ramp set to last this long ends without a trip; the same sums as [`Self::on_ramp`] in fewer steps.
-    fn bus_holds(&self, set: Duration) -> bool {
-        let set_rate = (self.from.rpm() - self.to.rpm()) / set.seconds();
-        let rate = |n: Speed| -self.possible_rate(n).min(set_rate);
+    /// Whether the ramp ends without a trip; the same sums as [`Self::on_ramp`] in fewer steps.
+    fn bus_holds(&self, set: SetRamp) -> bool {
+        let possible = |n: Speed| -self.possible_rate(n);
         let mut filling = Filling::new(self.bus);
         let mut tripped = false;
-        let walked = walk_in(COARSE_STEPS, self.from, self.to, rate, |step| {
+        let walked = walk_in(COARSE_STEPS, (self.from, self.to), Some(set), possible, |step| {
             if !tripped {
                 filling.take(self.returned(step), step.seconds);
                 tripped = filling.tripped();
@@ -116,40 +127,40 @@ impl RampDown {
 
     /// Energy that comes back through the shaft in one step, by Simpson's rule.
     fn returned(&self, step: &Step) -> f64 {
-        let width = (step.to.rpm() - step.from.rpm()) / 6.0;
-        let places = [step.from, step.middle, step.to].into_iter().zip(step.rates).zip([1.0, 4.0, 1.0]);
-        places.map(|((n, rate), weight)| weight * -self.motor_torque(n, rate) * angular(n) * width / rate).sum()
+        let power = |at: &Place| -self.motor_torque(at.speed, at.rate) * angular(at.speed) * at.pace;
+        let [first, middle, last] = &step.places;
+        (power(first) + 4.0 * power(middle) + power(last)) / 6.0
     }
 
-    fn run(&self, set_rate: f64) -> Trace {
-        let rate = |n: Speed| -self.possible_rate(n).min(set_rate);
-        let sample = |seconds: f64, speed: Speed, rate: f64, bus: Option<Voltage>| {
-            let torque = Torque::from_newton_metres(self.motor_torque(speed, rate));
+    fn run(&self, set: Option<SetRamp>) -> Trace {
+        let possible = |n: Speed| -self.possible_rate(n);
+        let sample = |seconds: f64, place: Place, bus: Option<Voltage>| {
+            let torque = Torque::from_newton_metres(self.motor_torque(place.speed, place.rate));
             Sample {
                 time: Duration::from_seconds(seconds),
-                speed,
+                speed: place.speed,
                 torque,
-                load: self.train.slowing(speed),
-                current: self.motor.current(torque, speed),
+                load: self.train.slowing(place.speed),
+                current: self.motor.current(torque, place.speed),
                 bus,
-                limited: -rate < set_rate,
+                limited: place.limited,
             }
         };
         let mut samples = Vec::new();
         let mut filling = Filling::new(self.bus);
         let (mut seconds, mut tripped) = (0.0, None);
-        let walked = walk(self.from, self.to, rate, |step| {
+        let walked = walk_in(STEPS, (self.from, self.to), set, possible, |step| {
             if tripped.is_some() {
                 return;
             }
             if samples.is_empty() {
-                samples.push(sample(0.0, step.from, step.rates[0], filling.voltage()));
+                samples.push(sample(0.0, step.places[0], filling.voltage()));
             }
             seconds += step.seconds;
             filling.take(self.returned(step), step.seconds);
-            samples.push(sample(seconds, step.to, step.rates[2], filling.voltage()));
+            samples.push(sample(seconds, step.places[2], filling.voltage()));
             if filling.tripped() {
-                tripped = Some(End::BusTripped { after: Duration::from_seconds(seconds), at: step.to });
+                tripped = Some(End::BusTripped { after: Duration::from_seconds(seconds), at: step.places[2].speed });
             }
         });
         let end = tripped.unwrap_or_else(|| walked.map_or_else(|at| End::Stalled { at }, |()| End::Reached));
@@ -239,7 +250,7 @@ pub(crate) mod tests {
         let bus = run.bus.expect("set");
         run.bus = Some(Bus { trip: Some(Voltage::from_volts(800.0)), ..bus });
         assert!(matches!(run.on_ramp(Duration::from_seconds(5.0)).end, End::BusTripped { .. }));
-        let shortest = run.shortest_without_chopper().expect("within the hour");
+        let shortest = run.shortest_without_chopper(STRAIGHT).expect("within the hour");
         // Row RM-05: the load alone stops it in J·ω/T_L = 23.2 s; somewhat shorter fills the capacitors to the trip.
         assert!(shortest.seconds() > 20.0 && shortest.seconds() < 23.3, "{shortest:?}");
         run.bus =

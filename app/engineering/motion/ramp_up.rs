@@ -1,10 +1,11 @@
 //! Speeding up: the least time, the shortest even ramp, and the trace of the set ramp.
 
 use super::available_torque::Motor;
-use super::time_to_speed::{STEPS, acceleration, walk};
+use super::set_ramp::{STRAIGHT, SetRamp, done, slope};
+use super::time_to_speed::{Place, STEPS, acceleration, walk_in};
 use super::trace::{End, Sample, Trace};
 use super::train::Train;
-use crate::quantity::{Current, Duration, Speed, Torque};
+use crate::quantity::{Current, Duration, Ratio, Speed, Torque};
 
 /// A run up, ready to be worked out.
 #[derive(Clone, Debug, PartialEq)]
@@ -21,17 +22,29 @@ pub struct RampUp {
     pub to: Speed,
 }
 
-/// The largest torque that an even ramp of this length asks of the motor, whatever any limit would leave of it:
-/// the load's torque and J·dω/dt together.
+/// The largest torque that a set ramp asks of the motor, whatever any limit would leave of it: the load's torque and
+/// J·dω/dt together.
 #[must_use]
-pub fn asked(train: &Train, from: Speed, to: Speed, set: Duration) -> Torque {
-    let change = to.rpm() - from.rpm();
-    let moving = change / set.seconds() / acceleration(1.0, train.inertia);
-    let load = |i: u32| {
-        let n = Speed::from_rpm(from.rpm() + change * f64::from(i) / f64::from(2 * STEPS));
-        train.opposing(n).newton_metres()
+pub fn asked(train: &Train, from: Speed, to: Speed, set: impl Into<SetRamp>) -> Torque {
+    let (set, change) = (set.into(), to.rpm() - from.rpm());
+    let mean = change / set.time.seconds() / acceleration(1.0, train.inertia);
+    let torque = |i: u32| {
+        let x = f64::from(i) / f64::from(2 * STEPS);
+        let n = Speed::from_rpm(from.rpm() + change * done(set.s_curve, x));
+        train.opposing(n).newton_metres() + mean * slope(set.s_curve, x)
     };
-    Torque::from_newton_metres((0..=2 * STEPS).map(load).fold(f64::NEG_INFINITY, f64::max) + moving)
+    Torque::from_newton_metres((0..=2 * STEPS).map(torque).fold(f64::NEG_INFINITY, f64::max))
+}
+
+/// The place on a ramp where the torque is scarcest.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Tightest {
+    /// Where.
+    pub speed: Speed,
+    /// What is left there over and above the load.
+    pub spare: Torque,
+    /// The ramp's acceleration there over its mean one; 1 all along a straight ramp.
+    pub slope: Ratio,
 }
 
 impl RampUp {
@@ -42,38 +55,47 @@ impl RampUp {
         Torque::from_newton_metres(available - self.train.opposing(speed).newton_metres())
     }
 
-    /// The speed with the least spare torque, and that torque.
+    /// Where a ramp with this S-curve share first meets the current limit: the least spare torque, for the
+    /// acceleration that the ramp has there.
     #[must_use]
-    pub fn tightest(&self) -> (Speed, Torque) {
+    pub fn tightest(&self, s_curve: Ratio) -> Tightest {
         let change = self.to.rpm() - self.from.rpm();
-        let places =
-            (0..=2 * STEPS).map(|i| Speed::from_rpm(self.from.rpm() + change * f64::from(i) / f64::from(2 * STEPS)));
-        places
-            .map(|n| (n, self.spare(n)))
-            .min_by(|a, b| a.1.newton_metres().total_cmp(&b.1.newton_metres()))
-            .unwrap_or((self.from, self.spare(self.from)))
+        let place = |i: u32| {
+            let x = f64::from(i) / f64::from(2 * STEPS);
+            let speed = Speed::from_rpm(self.from.rpm() + change * done(s_curve, x));
+            Tightest { speed, spare: self.spare(speed), slope: Ratio::from_fraction(slope(s_curve, x)) }
+        };
+        Tightest::least((0..=2 * STEPS).map(place)).unwrap_or_else(|| place(0))
     }
 
-    /// The shortest ramp, even from start to end, that never meets the current limit; none where it stalls.
+    /// The shortest straight ramp that never meets the current limit; none where it stalls.
     #[must_use]
     pub fn shortest_even_ramp(&self) -> Option<Duration> {
-        let slowest = acceleration(self.tightest().1.newton_metres(), self.train.inertia);
-        (slowest > 0.0).then(|| Duration::from_seconds((self.to.rpm() - self.from.rpm()) / slowest))
+        self.shortest_ramp(STRAIGHT)
+    }
+
+    /// The shortest ramp with this S-curve share that never meets the current limit; none where it stalls.
+    #[must_use]
+    pub fn shortest_ramp(&self, s_curve: Ratio) -> Option<Duration> {
+        let tightest = self.tightest(s_curve);
+        let possible = acceleration(tightest.spare.newton_metres(), self.train.inertia);
+        let change = self.to.rpm() - self.from.rpm();
+        (possible > 0.0).then(|| Duration::from_seconds(change * tightest.slope.fraction() / possible))
     }
 
     /// The run with all the torque that the limit leaves; its time is the least there is.
     #[must_use]
     pub fn fastest(&self) -> Trace {
-        self.run(f64::INFINITY)
+        self.run(None)
     }
 
-    /// The run on an even ramp set to last this long.
+    /// The run on a ramp set like this.
     #[must_use]
-    pub fn on_ramp(&self, set: Duration) -> Trace {
-        self.run((self.to.rpm() - self.from.rpm()) / set.seconds())
+    pub fn on_ramp(&self, set: impl Into<SetRamp>) -> Trace {
+        self.run(Some(set.into()))
     }
 
-    fn run(&self, set_rate: f64) -> Trace {
+    fn run(&self, set: Option<SetRamp>) -> Trace {
         if self.from.rpm() == 0.0 {
             let (available, asked) = (self.motor.available(self.limit, self.from), self.train.to_start());
             if available.newton_metres() <= asked.newton_metres() {
@@ -81,33 +103,44 @@ impl RampUp {
             }
         }
         let possible = |n: Speed| acceleration(self.spare(n).newton_metres(), self.train.inertia);
-        let rate = |n: Speed| possible(n).min(set_rate);
-        let sample = |seconds: f64, speed: Speed, rate: f64| {
-            let load = self.train.opposing(speed);
-            let moving = rate / acceleration(1.0, self.train.inertia);
+        let sample = |seconds: f64, place: Place| {
+            let load = self.train.opposing(place.speed);
+            let moving = place.rate / acceleration(1.0, self.train.inertia);
             let torque = Torque::from_newton_metres(load.newton_metres() + moving);
-            let current = self.motor.current(torque, speed);
             Sample {
                 time: Duration::from_seconds(seconds),
-                speed,
+                speed: place.speed,
                 torque,
                 load,
-                current,
+                current: self.motor.current(torque, place.speed),
                 bus: None,
-                limited: rate < set_rate,
+                limited: place.limited,
             }
         };
         let mut samples = Vec::new();
         let mut seconds = 0.0;
-        let walked = walk(self.from, self.to, rate, |step| {
+        let walked = walk_in(STEPS, (self.from, self.to), set, possible, |step| {
             if samples.is_empty() {
-                samples.push(sample(0.0, step.from, step.rates[0]));
+                samples.push(sample(0.0, step.places[0]));
             }
             seconds += step.seconds;
-            samples.push(sample(seconds, step.to, step.rates[2]));
+            samples.push(sample(seconds, step.places[2]));
         });
         let end = walked.map_or_else(|at| End::Stalled { at }, |()| End::Reached);
         Trace { samples, end }
+    }
+}
+
+impl Tightest {
+    /// The first of those with the least room.
+    pub(super) fn least(places: impl Iterator<Item = Self>) -> Option<Self> {
+        places.min_by(|a, b| a.room().total_cmp(&b.room()))
+    }
+
+    /// Spare torque over the slope that has to be had of it; what is not there at all comes first.
+    fn room(&self) -> f64 {
+        let spare = self.spare.newton_metres();
+        if spare > 0.0 { spare / self.slope.fraction() } else { spare }
     }
 }
 
@@ -197,7 +230,7 @@ pub(crate) mod tests {
         assert_eq!(run.fastest().end, End::Reached);
     }
 
-    fn any_load() -> impl Strategy<Value = LoadTorque> {
+    pub(crate) fn any_load() -> impl Strategy<Value = LoadTorque> {
         (0..4, 5.0..120.0f64).prop_map(|(kind, torque)| {
             let (torque, speed) = (Torque::from_newton_metres(torque), Speed::from_rpm(1470.0));
             match kind {

@@ -4,6 +4,7 @@
 //! turn "more inertia" into "faster".
 
 use super::available_torque::angular;
+use super::set_ramp::{SetRamp, done, slope};
 use crate::quantity::{Duration, Inertia, Speed, Torque};
 
 /// Steps of a ramp; even ones, in speed.
@@ -14,41 +15,56 @@ pub(crate) const COARSE_STEPS: u32 = 48;
 
 /// One step: its ends and middle, and how long it takes.
 pub(crate) struct Step {
-    pub from: Speed,
-    pub middle: Speed,
-    pub to: Speed,
     pub seconds: f64,
-    /// Acceleration at the two ends and in the middle, rpm/s, signed.
-    pub rates: [f64; 3],
+    /// At both ends and in the middle.
+    pub places: [Place; 3],
 }
 
-/// Walks from one speed to the other; `rate` is the acceleration in rpm/s and `visit` is told each step. Stops at the
-/// first place where the rate does not lead towards `to`, and gives that speed back.
-pub(crate) fn walk(from: Speed, to: Speed, rate: impl Fn(Speed) -> f64, visit: impl FnMut(&Step)) -> Result<(), Speed> {
-    walk_in(STEPS, from, to, rate, visit)
+/// One place on the way.
+#[derive(Clone, Copy)]
+pub(crate) struct Place {
+    pub speed: Speed,
+    /// Acceleration, rpm/s, signed.
+    pub rate: f64,
+    /// How long the step would take if all of it were like this place.
+    pub pace: f64,
+    /// Whether the torque, not the set ramp, governs here.
+    pub limited: bool,
 }
 
-/// The same in a given number of steps.
+/// Walks from one speed to the other; `possible` is the acceleration in rpm/s that the torque allows, `set` the ramp
+/// that must not be outrun. Stops at the first place where the torque does not lead towards `to`, and gives that speed
+/// back. Steps are even in the set ramp's time, without one even in speed.
 pub(crate) fn walk_in(
     steps: u32,
-    from: Speed,
-    to: Speed,
-    rate: impl Fn(Speed) -> f64,
+    (from, to): (Speed, Speed),
+    set: Option<SetRamp>,
+    possible: impl Fn(Speed) -> f64,
     mut visit: impl FnMut(&Step),
 ) -> Result<(), Speed> {
     let change = to.rpm() - from.rpm();
     if change == 0.0 {
         return Ok(());
     }
-    let leads = |r: f64| (r * change > 0.0).then_some(r);
-    let place = |halves: u32| Speed::from_rpm(from.rpm() + change * f64::from(halves) / f64::from(2 * steps));
-    let mut first = leads(rate(from)).ok_or(from)?;
+    let place = |halves: u32| {
+        let x = f64::from(halves) / f64::from(2 * steps);
+        let speed = Speed::from_rpm(from.rpm() + change * set.map_or(x, |s| done(s.s_curve, x)));
+        let possible = possible(speed);
+        if possible * change <= 0.0 || possible.is_nan() {
+            return Err(speed);
+        }
+        // Time for the whole change at this acceleration; the set ramp's own slope may be zero at its ends.
+        let (least, asked) = set.map_or((0.0, 1.0), |s| (s.time.seconds(), slope(s.s_curve, x)));
+        let by_torque = change * asked / possible;
+        let limited = set.is_none() || by_torque > least;
+        let rate = if limited { possible } else { change * asked / least };
+        Ok(Place { speed, rate, pace: by_torque.max(least) / f64::from(steps), limited })
+    };
+    let mut first = place(0)?;
     for step in 0..steps {
-        let (start, middle, end) = (place(2 * step), place(2 * step + 1), place(2 * step + 2));
-        let half = leads(rate(middle)).ok_or(middle)?;
-        let last = leads(rate(end)).ok_or(end)?;
-        let seconds = change / f64::from(steps) / 6.0 * (1.0 / first + 4.0 / half + 1.0 / last);
-        visit(&Step { from: start, middle, to: end, seconds, rates: [first, half, last] });
+        let (middle, last) = (place(2 * step + 1)?, place(2 * step + 2)?);
+        let seconds = (first.pace + 4.0 * middle.pace + last.pace) / 6.0;
+        visit(&Step { seconds, places: [first, middle, last] });
         first = last;
     }
     Ok(())
@@ -70,7 +86,8 @@ pub fn time_to_speed(
     net: impl Fn(Speed) -> Torque,
 ) -> Result<Duration, Speed> {
     let mut seconds = 0.0;
-    walk(from, to, |n| acceleration(net(n).newton_metres(), inertia), |step| seconds += step.seconds)?;
+    let possible = |n| acceleration(net(n).newton_metres(), inertia);
+    walk_in(STEPS, (from, to), None, possible, |step| seconds += step.seconds)?;
     Ok(Duration::from_seconds(seconds))
 }
 

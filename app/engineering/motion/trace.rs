@@ -83,6 +83,37 @@ impl Trace {
         Current::from_amperes(self.samples.iter().map(|s| s.current.amperes()).fold(0.0, f64::max))
     }
 
+    /// The highest torque of the motor in size.
+    #[must_use]
+    pub fn peak_torque(&self) -> Torque {
+        Torque::from_newton_metres(self.samples.iter().map(|s| s.torque.newton_metres().abs()).fold(0.0, f64::max))
+    }
+
+    /// √(∫I²·dt/t), what an unchanging current of the same heat would be (row RM-09); none on a run of no length.
+    #[must_use]
+    pub fn root_mean_square_current(&self) -> Option<Current> {
+        let time = self.samples.last()?.time.seconds();
+        let squares = self.over_time(|s| s.current.amperes() * s.current.amperes());
+        (time > 0.0).then(|| Current::from_amperes((squares / time).sqrt()))
+    }
+
+    /// ∫((I/I_N)² − 1)·dt while the current is above rated: heat beyond what the motor stands all the time, in seconds
+    /// of rated heat. What is below rated current gives nothing back.
+    #[must_use]
+    pub fn excess_heat(&self, rated: Current) -> Duration {
+        Duration::from_seconds(self.over_time(|s| {
+            let load = s.current.amperes() / rated.amperes();
+            (load * load - 1.0).max(0.0)
+        }))
+    }
+
+    /// By trapezoids over the samples.
+    fn over_time(&self, value: impl Fn(&Sample) -> f64) -> f64 {
+        let step =
+            |(a, b): (&Sample, &Sample)| (b.time.seconds() - a.time.seconds()) * f64::midpoint(value(a), value(b));
+        self.samples.iter().zip(self.samples.iter().skip(1)).map(step).sum()
+    }
+
     /// The highest bus voltage, where one is known.
     #[must_use]
     pub fn peak_bus(&self) -> Option<Voltage> {

@@ -39,3 +39,27 @@ pub const CONTINUITY_ALLOWANCE: Source = grave(
     "common practice: 0.05 Ω on top of the conductor for clamps and joints; beyond twice the sum a fault to find",
     Status::CommonPractice,
 );
+/// Loops measured cold.
+pub const COLD_LOOP: Source = grave(
+    "PE-11",
+    "IEC 60364-6, informative annex on measured loops: Z_s(m) ≤ 2/3·U₀/I_a, since the conductors are warmer in a fault than in the test",
+    Status::Memory,
+);
+/// Volts that count as live at a terminal.
+pub const EXTRA_LOW_VOLTAGE: Source = grave(
+    "PE-12",
+    "IEC 60364-4-41 and IEC 61140: 50 V alternating, the upper end of extra-low voltage",
+    Status::Memory,
+);
+/// Volts to earth by the way a supply is earthed.
+pub const TO_EARTH: Source = grave(
+    "PE-13",
+    "geometry of three phases: U/√3 to an earthed star point; 0, U and U with one corner earthed",
+    Status::Arithmetic,
+);
+/// How far volts to earth may lie from the geometry.
+pub const TO_EARTH_ALLOWANCE: Source = grave(
+    "PE-14",
+    "common practice: volts to earth within 10 % of what the geometry gives; beyond 25 % another earthing, or a fault",
+    Status::CommonPractice,
+);

@@ -36,6 +36,27 @@ pub const RM_02: Source = Source {
     status: Status::Confirmed,
     safety: false,
 };
+/// Root mean square over a cycle.
+pub const RM_09: Source = Source {
+    id: "RM-09",
+    text: "Dubey, Fundamentals of Electrical Drives, Ex. 4.2: the root mean square over the cycle stands for its heat",
+    status: Status::Confirmed,
+    safety: false,
+};
+/// What a warm motor stands beyond rated current.
+pub const EXCESS_CURRENT: Source = Source {
+    id: "OL-09",
+    text: "IEC 60034-1, clause 9.3 (NEMA MG 1, 12.48 the same): motors up to 315 kW and 1 kV stand 1.5 times rated current for 2 min",
+    status: Status::Memory,
+    safety: false,
+};
+/// Rounded ends of a ramp.
+pub const S_CURVE: Source = Source {
+    id: "RM-14",
+    text: "arithmetic: easing in and out over a share s of the time raises the highest acceleration to 1/(1 − s/2) of the mean",
+    status: Status::Arithmetic,
+    safety: false,
+};
 /// Braking.
 pub const RM_05: Source = Source {
     id: "RM-05",

@@ -25,6 +25,24 @@ pub const PLAUSIBLE_PRODUCT: Source = plain(
     "common practice: efficiency times power factor of an induction motor is 0.15 to 0.85 below 1 kW, 0.35 to 0.90 below 10 kW, 0.45 to 0.93 above; power factor 0.40 to 0.95",
     Status::CommonPractice,
 );
+/// What slip and poles suggest.
+pub const SLIP_LOSSES: Source = plain(
+    "MN-23",
+    "derived: the rotor takes s/(1 − s) of the shaft power out of all losses; common practice: 5 to 75 % of them, 16 poles at most, and columns of one plate that agree",
+    Status::CommonPractice,
+);
+/// How far from the class tables an efficiency may lie before it is asked about.
+pub const CLASS_RANGE: Source = plain(
+    "MN-24",
+    "common practice: losses between 0.6 times those of the highest and 2.2 times those of the lowest class listed at 50 Hz, 0.5 and 3 times at 60 Hz; a printed class less 15 % of its losses, 40 % at 60 Hz",
+    Status::CommonPractice,
+);
+/// How readily a figure is misread in one way or another.
+pub const MISREADINGS: Source = plain(
+    "MN-25",
+    "common practice: units, frequencies, connections and decimal points are mistaken more readily than digits; ratings and volts in common use are likelier than others",
+    Status::CommonPractice,
+);
 /// Efficiency classes at 50 Hz.
 pub const MN_08: Source =
     plain("MN-08", "IEC 60034-30-1:2014, tables and interpolation (EU 2019/1781, annex I)", Status::Confirmed);

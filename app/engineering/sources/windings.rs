@@ -37,3 +37,10 @@ pub const JOINTS: Source = Source {
     status: Status::CommonPractice,
     safety: false,
 };
+/// Torque of terminals.
+pub const TERMINAL_TORQUE: Source = Source {
+    id: "WB-04",
+    text: "common practice: power terminals within 10 % of the maker's torque; a range that the maker gives goes first",
+    status: Status::CommonPractice,
+    safety: false,
+};

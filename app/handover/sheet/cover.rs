@@ -5,7 +5,7 @@ use super::verdicts::{full, gravity, heading};
 use super::words::{grouped, of_field};
 use commissioning::judge::{Counts, Judged};
 use commissioning::plant::{Place, Sheet, fields};
-use commissioning::record::functions::FUNCTIONS;
+use commissioning::record::functions::to_restore;
 use commissioning::record::{FindingState, ParameterColumn};
 use engineering::Verdict;
 use serde_json::{Value, json};
@@ -132,10 +132,10 @@ impl Pages<'_> {
         }
     }
 
-    /// The first of the parameters as left, in the order of the sheet, and how many more there are.
+    /// The first of the parameters as left, in the order of the sheet, and how many more there are; rows that were set for
+    /// a test only are not keyed into a restored drive.
     fn keys(&self) -> (Vec<Value>, usize) {
-        let all: Vec<Value> = FUNCTIONS
-            .iter()
+        let all: Vec<Value> = to_restore()
             .map(|f| (f.key, f.label))
             .chain(self.record.free_rows.iter().map(|r| (r.key.as_str(), r.label.as_str())))
             .filter_map(|(key, label)| {

@@ -46,7 +46,7 @@ impl Store {
     ) -> Answer<Receipt, PerformFault> {
         // Hashed here, on the thread of the asker: the writing thread has better things to do.
         let hash = content_hash(actor, &act);
-        self.writing().give(move |desk| perform(desk, actor, &act, hash?, proof, now))
+        self.recording().give(move |desk| perform(desk, actor, &act, hash?, proof, now))
     }
 
     /// As `perform`, waiting.

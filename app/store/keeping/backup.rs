@@ -47,7 +47,7 @@ fn backup(store: &Store, to: &Path, now: Timestamp) -> Result<BackupReceipt, Bac
     if std::fs::read_dir(to)?.next().is_some() {
         return Err(BackupFault::NotEmpty(to.display().to_string()));
     }
-    let source = connect(&store.folder().join("store.sqlite"), Purpose::Read)?;
+    let source = connect(store.database(), Purpose::Read)?;
     // One read transaction: the copy is of one moment, and acts meanwhile do not make it start over.
     let moment = source.unchecked_transaction().map_err(crate::fault::Fault::from)?;
     stream_head(&moment)?;

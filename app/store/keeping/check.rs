@@ -3,6 +3,7 @@
 use super::compare::compare;
 use super::copy::sound;
 use super::report::Report;
+use super::signatures::check_signatures;
 use super::space::Space;
 use crate::fault::Fault;
 use crate::journal::{ahead_of_the_store, stream_head, verify_journal};
@@ -35,6 +36,8 @@ pub fn check_store(folder: &Path, now: Timestamp) -> Result<Report, OpenFault> {
     report.add("journal", format!("{events} events, stream ends in {}", short(&end.hash)), [faults, more].concat());
     report.add("heads seen elsewhere", "none knows more than this store", flat(ahead_of_the_store(&moment)));
     report.add("lists", "rebuilt from the events they are the same", flat(compare(&moment)));
+    let (faults, count) = seen(check_signatures(&moment), 0);
+    report.add("signatures", format!("{count} signatures, each on the record as the events give it"), faults);
     let (faults, count) = seen(check_photos(&moment, &folder.join("photos")), 0);
     report.add("photos", format!("{count} photos, each as its hash says"), faults);
     report.add("modes", "open to nobody else", modes(folder));

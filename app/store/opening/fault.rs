@@ -34,6 +34,14 @@ pub enum OpenFault {
         /// As set.
         wanted: String,
     },
+    /// The store can only be read, and the copy to read from has no place.
+    #[error(
+        "Nothing can be written to the data folder, and the copy of the store to read from needs {megabytes} MB in memory or among the temporary files. Make room, or set TMPDIR to a folder that has it."
+    )]
+    NoRoomToRead {
+        /// How much.
+        megabytes: u64,
+    },
     /// The disk or the file.
     #[error("The data folder could not be opened: {0}")]
     Broken(String),

@@ -41,7 +41,11 @@ pub(crate) fn schema_of(file: &Path, known: usize) -> Result<u32, OpenFault> {
 
 /// A file without marks is ours when it is empty still, or when its marks are in the write-ahead log beside it.
 fn unmarked_is_ours(file: &Path) -> Result<bool, OpenFault> {
-    let connection = connect_unchanging(file, false)?;
+    // A journal of the older kind lies there only when the very first opening was cut short: it wants to be played back
+    // by whoever may write, and is passed over by whoever only looks.
+    let mut journal = file.as_os_str().to_owned();
+    journal.push("-journal");
+    let connection = connect_unchanging(file, Path::new(&journal).exists())?;
     let tables: i64 = connection.query_row("SELECT count(*) FROM sqlite_schema", [], |row| row.get(0))?;
     Ok(tables == 0 || setting(&connection, "application_id")? == APPLICATION.to_string())
 }

@@ -21,7 +21,7 @@ impl Store {
     /// That it was made, and `by` whom, is kept and shown to that person and to everyone at "Who can sign": whoever
     /// holds the code can sign under that name. `None` is the program itself, at the server.
     pub fn invite(&self, person: PersonId, by: Option<PersonId>, now: Timestamp) -> Answer<String, PerformFault> {
-        self.writing().give(move |desk| {
+        self.recording().give(move |desk| {
             if by_id(&desk.connection, person)?.is_none() {
                 return Err(Fault::Broken("There is no such account here.".to_owned()));
             }

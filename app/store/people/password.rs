@@ -73,7 +73,7 @@ pub(crate) fn set(
     will_do(new, &login)?;
     let hash = hashed(new)?;
     store
-        .writing()
+        .recording()
         .give(move |desk| {
             // In the same transaction: of two that come with one code, one finds it used.
             if let Some(code) = &invitation

@@ -15,7 +15,7 @@ use rusqlite::{Connection, OptionalExtension, named_params};
 impl Store {
     /// A fresh code for the first administrator, in place of any before; `None` once someone has an account.
     pub fn setup_code(&self) -> Answer<Option<String>, PerformFault> {
-        self.writing().give(|desk| {
+        self.recording().give(|desk| {
             if somebody_is_here(desk)? {
                 close(&desk.connection)?;
                 return Ok(Ok(None));

@@ -95,7 +95,7 @@ impl Store {
 
     /// Unlocks a person's signing.
     pub fn unlock_signing(&self, person: PersonId) -> Answer<(), PerformFault> {
-        self.writing().give(move |desk| {
+        self.recording().give(move |desk| {
             forget(&desk.connection, &Subject::Signing(person))?;
             Ok(Ok(()))
         })

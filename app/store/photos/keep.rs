@@ -57,6 +57,9 @@ fn keep(store: &Store, bytes: &[u8], now: Timestamp) -> Result<Photo, PhotoFault
     if bytes.len() > LARGEST_PHOTO {
         return Err(PhotoFault::TooLarge);
     }
+    if store.only_read().is_some() {
+        return Err(Fault::ReadOnly.into());
+    }
     let media = media_of(bytes).ok_or(PhotoFault::UnknownKind)?;
     let hash = file_hash(bytes);
     write_file(&store.folder().join("photos"), &hash, bytes)?;

@@ -1,6 +1,7 @@
 //! Backups, restoring, and a check that notices what was planted.
 
 use super::stage::*;
+use crate::photos::file_hash;
 use crate::{BackupFault, BoardFilter, Report, Store, check_store};
 use std::path::Path;
 
@@ -142,6 +143,95 @@ fn what_is_planted_is_noticed() {
         let report = check_store(folder.path(), at(30)).unwrap();
         assert!(report.findings.iter().any(|f| f.starts_with(part)), "{sql}: {}", report.to_text());
         assert!(!report.ok);
+    }
+}
+
+/// Somebody with the file, a copy of the program and time: an entry changed, every hash after it made anew, the
+/// signature's own head too. Chains, stream and lists agree with each other; the digest does not agree with the record.
+#[test]
+fn a_record_rewritten_beneath_its_signature_is_noticed_and_named() {
+    let folder = tempfile::tempdir().unwrap();
+    drop(kept_store(folder.path()));
+    let rewritten = |from: &str, to: &str| {
+        let other = rusqlite::Connection::open(folder.path().join("store.sqlite")).unwrap();
+        other.execute_batch("PRAGMA foreign_keys = OFF").unwrap();
+        rewrite_chain(&other, &format!("drive:{}", drive(1)), from, to);
+        rewrite_stream(&other);
+        drop(other);
+        check_store(folder.path(), at(30)).unwrap()
+    };
+    let report = rewritten("", "");
+    assert_eq!(wrong(&report), Vec::<String>::new(), "hashes made anew over the same events change nothing");
+    assert!(report.lines.iter().any(|l| l.part == "signatures" && l.found.starts_with("1 signature")));
+    let report = rewritten(r#""text":"yes""#, r#""text":"off""#);
+    let found = wrong(&report);
+    assert_eq!(found.len(), 1, "{found:?}");
+    assert!(found[0].starts_with("signatures: drive P-1 (") && found[0].contains("revision 1"), "{found:?}");
+    assert!(found[0].contains("the signature of Rowan Vale binds another content"), "{found:?}");
+}
+
+/// The site as the signature froze it, against the site's own chain.
+#[test]
+fn a_site_rewritten_beneath_a_signature_is_noticed_too() {
+    let folder = tempfile::tempdir().unwrap();
+    drop(kept_store(folder.path()));
+    let other = rusqlite::Connection::open(folder.path().join("store.sqlite")).unwrap();
+    other.execute_batch("PRAGMA foreign_keys = OFF").unwrap();
+    rewrite_chain(&other, &format!("site:{SITE}"), "pumping", "dumping");
+    rewrite_stream(&other);
+    other.execute("UPDATE sites SET name = replace(name, 'pumping', 'dumping')", []).unwrap();
+    drop(other);
+    let found = wrong(&check_store(folder.path(), at(30)).unwrap());
+    assert_eq!(found.len(), 1, "{found:?}");
+    assert!(found[0].contains("froze another site than the one that stood then"), "{found:?}");
+}
+
+/// Replaces words in the first event of a chain that has them, and makes every hash and every signature's head anew.
+fn rewrite_chain(other: &rusqlite::Connection, chain: &str, from: &str, to: &str) {
+    other
+        .execute_batch("DROP TRIGGER IF EXISTS events_never_changed; DROP TRIGGER IF EXISTS stream_never_changed")
+        .unwrap();
+    let rows: Vec<(i64, String, String)> = other
+        .prepare("SELECT sequence, hash, bytes FROM events WHERE chain = ?1 ORDER BY sequence")
+        .unwrap()
+        .query_map([chain], |r| Ok((r.get(0)?, r.get(1)?, r.get(2)?)))
+        .unwrap()
+        .map(Result::unwrap)
+        .collect();
+    let (mut previous, mut renamed, mut done) = (String::new(), Vec::new(), from.is_empty());
+    for (sequence, hash, bytes) in rows {
+        let mut bytes: String = renamed.iter().fold(bytes, |b, (old, new): &(String, String)| b.replace(old, new));
+        if !done && bytes.contains(from) {
+            (bytes, done) = (bytes.replacen(from, to, 1), true);
+        }
+        let fresh = file_hash(format!("{previous}\n{bytes}").as_bytes());
+        let row = rusqlite::params![chain, sequence, previous, fresh, bytes];
+        other
+            .execute("UPDATE events SET previous = ?3, hash = ?4, bytes = ?5 WHERE chain = ?1 AND sequence = ?2", row)
+            .unwrap();
+        renamed.push((hash, fresh.clone()));
+        previous = fresh;
+    }
+    assert!(done, "{from} is in no event of {chain}");
+}
+
+fn rewrite_stream(other: &rusqlite::Connection) {
+    let rows: Vec<(i64, String)> = other
+        .prepare(
+            "SELECT stream.sequence, events.hash FROM stream
+             JOIN events ON events.chain = stream.chain AND events.sequence = chain_sequence ORDER BY stream.sequence",
+        )
+        .unwrap()
+        .query_map([], |r| Ok((r.get(0)?, r.get(1)?)))
+        .unwrap()
+        .map(Result::unwrap)
+        .collect();
+    let mut previous = String::new();
+    for (sequence, hash) in rows {
+        let fresh = file_hash(format!("{previous}\n{hash}").as_bytes());
+        let row = rusqlite::params![sequence, hash, previous, fresh];
+        other.execute("UPDATE stream SET hash = ?2, previous = ?3, stream_hash = ?4 WHERE sequence = ?1", row).unwrap();
+        previous = fresh;
     }
 }
 

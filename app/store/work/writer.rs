@@ -108,6 +108,11 @@ impl Writer {
 pub(crate) struct WriterHandle(Option<Sender<Box<dyn Job>>>);
 
 impl WriterHandle {
+    /// Takes no work: whoever asks hears that nothing is recorded.
+    pub(crate) const fn refusing() -> Self {
+        Self(None)
+    }
+
     /// Puts a piece of writing in the queue.
     pub(crate) fn give<T, F, W>(&self, work: W) -> Answer<T, F>
     where
@@ -116,8 +121,10 @@ impl WriterHandle {
         W: FnOnce(&mut Desk) -> Result<Result<T, F>, Fault> + Send + 'static,
     {
         let (reply, answer) = Answer::pair();
-        if let Some(queue) = &self.0 {
-            let _ = queue.send(Box::new(Task { work: Some(work), got: None, reply }));
+        // Whoever asked may have gone already; then nobody is told.
+        match &self.0 {
+            Some(queue) => drop(queue.send(Box::new(Task { work: Some(work), got: None, reply }))),
+            None => drop(reply.send(Err(F::from(Fault::ReadOnly)))),
         }
         answer
     }

@@ -16,6 +16,12 @@ pub fn caution(words: &str) -> Markup {
     }
 }
 
+/// What was just kept: stays in sight wherever the page stands.
+#[must_use]
+pub fn saved(words: &str) -> Markup {
+    html! { p.notice.saved #saved role="status" { (words) } }
+}
+
 /// Something to know, without a sign.
 #[must_use]
 pub fn notice(words: &str) -> Markup {

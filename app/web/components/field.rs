@@ -2,7 +2,7 @@
 
 use crate::clock_words;
 use commissioning::plant::{Field, FieldKind, Recorded, Slot};
-use commissioning::{EventId, Timestamp, Typed};
+use commissioning::{EventId, Typed};
 use engineering::Kind;
 use maud::{Markup, html};
 
@@ -52,6 +52,10 @@ pub struct FieldInput {
     pub big: bool,
     /// Browser's autocomplete hint.
     pub autocomplete: &'static str,
+    /// Shown as words to somebody who may not change it.
+    pub fixed: bool,
+    /// The cursor stands here when the page opens.
+    pub focus: bool,
 }
 
 /// An input for a date.
@@ -77,6 +81,8 @@ impl FieldInput {
             seen: Vec::new(),
             big: false,
             autocomplete: "off",
+            fixed: false,
+            focus: false,
         }
     }
 
@@ -103,7 +109,7 @@ impl FieldInput {
 
     /// With what stands in a slot of a sheet.
     #[must_use]
-    pub fn standing(mut self, slot: Option<&Slot<Option<Typed>>>, now: Timestamp) -> Self {
+    pub fn standing(mut self, slot: Option<&Slot<Option<Typed>>>) -> Self {
         let Some(slot) = slot else { return self };
         self.seen = slot.seen();
         if let Some(typed) = slot.current().and_then(|r| r.value.as_ref()) {
@@ -112,7 +118,7 @@ impl FieldInput {
                 self.unit.clone_from(unit);
             }
         }
-        self.state = Some(state_line(slot.standing(), slot.earlier(), now, |v| {
+        self.state = Some(state_line(slot.standing(), slot.earlier(), |v| {
             v.as_ref().map_or_else(|| "empty".to_owned(), Typed::shown)
         }));
         self
@@ -137,6 +143,28 @@ impl FieldInput {
     pub const fn needed(mut self) -> Self {
         self.required = true;
         self
+    }
+
+    /// As words, for somebody who may not change it.
+    #[must_use]
+    pub fn fixed(mut self) -> Self {
+        self.fixed = true;
+        self.hint.clear();
+        self
+    }
+
+    /// What stands in it, in words; empty where nothing does.
+    #[must_use]
+    pub fn words(&self) -> String {
+        match &self.kind {
+            InputKind::Choice(options) => {
+                options.iter().find(|(key, _)| *key == self.text).map_or_else(|| self.text.clone(), |(_, l)| l.clone())
+            }
+            InputKind::Quantity(_) if !self.text.is_empty() && !self.unit.is_empty() => {
+                format!("{} {}", self.text, self.unit)
+            }
+            _ => self.text.clone(),
+        }
     }
 
     /// With the browser's autocomplete hint.
@@ -171,26 +199,33 @@ pub fn input_id(name: &str) -> String {
 }
 
 /// Who recorded what stands, when; earlier values one tap away; two that stand beside each other are both shown.
-pub fn state_line<T>(
-    standing: &[Recorded<T>],
-    earlier: &[Recorded<T>],
-    now: Timestamp,
-    words: impl Fn(&T) -> String,
-) -> Markup {
-    let line = |r: &Recorded<T>| format!("{} · {}", clock_words::moment(r.received, now), r.by_name);
+pub fn state_line<T>(standing: &[Recorded<T>], earlier: &[Recorded<T>], words: impl Fn(&T) -> String) -> Markup {
     html! {
         @match standing {
             [] => {}
-            [one] => { span { "recorded " (line(one)) } }
+            [one] => { span { "recorded " (who_when(one)) } }
             several => {
                 strong { "needs a choice: " }
-                @for (n, r) in several.iter().enumerate() { @if n > 0 { " or " } (words(&r.value)) " (" (line(r)) ")" }
+                @for (n, r) in several.iter().enumerate() { @if n > 0 { " or " } (words(&r.value)) " (" (who_when(r)) ")" }
             }
         }
+        (earlier_values(earlier, words))
+    }
+}
+
+/// When and by whom.
+#[must_use]
+pub fn who_when<T>(r: &Recorded<T>) -> String {
+    format!("{} · {}", clock_words::moment(r.received), r.by_name)
+}
+
+/// What stood before, folded.
+pub fn earlier_values<T>(earlier: &[Recorded<T>], words: impl Fn(&T) -> String) -> Markup {
+    html! {
         @if !earlier.is_empty() {
             details.earlier {
                 summary { "earlier values: " (earlier.len()) }
-                ul { @for r in earlier.iter().rev() { li { s { (words(&r.value)) } " " (line(r)) @if let Some(reason) = &r.reason { ": " (reason) } } } }
+                ul { @for r in earlier.iter().rev() { li { s { (words(&r.value)) } " " (who_when(r)) @if let Some(reason) = &r.reason { ": " (reason) } } } }
             }
         }
     }
@@ -199,6 +234,9 @@ pub fn state_line<T>(
 /// The field.
 #[must_use]
 pub fn field(f: &FieldInput) -> Markup {
+    if f.fixed {
+        return as_words(f);
+    }
     let id = input_id(&f.name);
     let grouped =
         matches!(&f.kind, InputKind::Flag) || matches!(&f.kind, InputKind::Choice(options) if options.len() <= 4);
@@ -221,6 +259,17 @@ pub fn field(f: &FieldInput) -> Markup {
                 (input(f, &id))
                 (below)
             }
+        }
+    }
+}
+
+fn as_words(f: &FieldInput) -> Markup {
+    let words = f.words();
+    html! {
+        div.field.fixed {
+            p.label { (f.label) }
+            @if words.is_empty() { p.value-words.quiet { "not stated" } } @else { p.value-words { (words) } }
+            @if let Some(state) = &f.state { div.state { (state) } }
         }
     }
 }
@@ -250,7 +299,7 @@ fn input(f: &FieldInput, id: &str) -> Markup {
                     @if !f.text.is_empty() && options.iter().all(|(k, _)| *k != f.text) { option value=(f.text) selected { (commissioning::typed::shorten(&f.text)) } }
                 }
             }
-            InputKind::Lines(most) => { textarea.input id=(id) name=(f.name) rows="3" data-most=(most) aria-describedby=[described] aria-invalid=[invalid] { "\n" (f.text) } }
+            InputKind::Lines(most) => { textarea.input id=(id) name=(f.name) rows="3" data-most=(most) autofocus[f.focus] aria-describedby=[described] aria-invalid=[invalid] { "\n" (f.text) } }
             InputKind::Table => { textarea.input.table id=(id) name=(f.name) rows="6" spellcheck="false" aria-describedby=[described] aria-invalid=[invalid] { "\n" (f.text) } }
             InputKind::Line(_) | InputKind::Flag => { input.input id=(id) name=(f.name) value=(f.text) autocomplete=(f.autocomplete) aria-describedby=[described] aria-invalid=[invalid]; }
             InputKind::Html(kind) => { input.input id=(id) type=(kind) name=(f.name) value=(if *kind == "password" { "" } else { f.text.as_str() }) autocomplete=(f.autocomplete) aria-describedby=[described] aria-invalid=[invalid]; }

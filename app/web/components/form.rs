@@ -18,8 +18,14 @@ pub fn form(visitor: &Visitor, action: &str, body: Markup) -> Markup {
     html! { form method="post" action=(action) { (seal(visitor)) (body) } }
 }
 
-/// A form whose `[data-live]` region is refreshed from `judge` while its fields are being filled in.
+/// A form that is shown again after it was kept, where it stood.
+#[must_use]
+pub fn kept_form(visitor: &Visitor, action: &str, body: Markup) -> Markup {
+    html! { form method="post" action=(action) data-keeps { (seal(visitor)) (body) } }
+}
+
+/// Such a form whose `[data-live]` region is refreshed from `judge` while its fields are being filled in.
 #[must_use]
 pub fn live_form(visitor: &Visitor, action: &str, judge: &str, body: Markup) -> Markup {
-    html! { form method="post" action=(action) data-judge=(judge) { (seal(visitor)) (body) } }
+    html! { form method="post" action=(action) data-judge=(judge) data-keeps { (seal(visitor)) (body) } }
 }

@@ -23,13 +23,13 @@ pub fn verdict_mark(verdict: Verdict) -> Markup {
     html! { span class=(format!("mark {}", class(verdict))) { span aria-hidden="true" { (verdict.shape()) } " " (verdict.words()) } }
 }
 
-/// Counts of verdicts in a row; those that are nought are left out.
+/// Counts of verdicts in a row, in shapes and words; those that are nought are left out.
 #[must_use]
 pub fn counts(counts: &[(Verdict, usize)]) -> Markup {
     html! {
         span.counts {
             @for (verdict, count) in counts.iter().filter(|(_, n)| *n > 0) {
-                span class=(format!("mark {}", class(*verdict))) title=(verdict.words()) { span aria-hidden="true" { (verdict.shape()) } " " (count) span.unseen { " " (verdict.words()) } }
+                span class=(format!("mark {}", class(*verdict))) { span aria-hidden="true" { (verdict.shape()) } " " (count) " " (verdict.words()) @if *verdict == Verdict::Figure && *count > 1 { "s" } }
             }
         }
     }
@@ -37,8 +37,17 @@ pub fn counts(counts: &[(Verdict, usize)]) -> Markup {
 
 /// A check as screens name it: its name in the catalogue, as words.
 #[must_use]
-pub fn check_title(name: &str) -> &str {
-    commissioning::judge::catalogue::title(name)
+pub fn check_title(name: &str) -> String {
+    let title = commissioning::judge::catalogue::title(name);
+    // A record frozen long ago may hold a check that the catalogue no longer has: its name as words then.
+    if title == name { in_words(name) } else { title.to_owned() }
+}
+
+fn in_words(name: &str) -> String {
+    let mut letters = name.chars();
+    letters
+        .next()
+        .map_or_else(String::new, |c| c.to_uppercase().collect::<String>() + &letters.as_str().replace('-', " "))
 }
 
 /// One check. `open` shows the working unfolded.
@@ -109,7 +118,7 @@ fn panels(judged: &[Judged], open: impl Fn(Verdict) -> bool) -> Markup {
     said.sort_by_key(|j| std::cmp::Reverse(j.outcome.verdict));
     let waiting: Vec<&Judged> = judged.iter().filter(|j| j.outcome.verdict == Verdict::NotAssessed).collect();
     html! {
-        @for j in &said { (verdict_panel(check_title(&j.outcome.check), j, open(j.outcome.verdict))) }
+        @for j in &said { (verdict_panel(&check_title(&j.outcome.check), j, open(j.outcome.verdict))) }
         @if !waiting.is_empty() {
             details.waiting open[said.is_empty()] {
                 summary { (verdict_mark(Verdict::NotAssessed)) span.quiet { " " (waiting.len()) @if waiting.len() == 1 { " check waits" } @else { " checks wait" } " for inputs" } }

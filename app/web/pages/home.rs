@@ -2,12 +2,15 @@
 
 use crate::components::{Page, empty, link_button, main_link, search_box, small_plate};
 use crate::pages::people::codes;
+use crate::pages::records::returned;
 use crate::visitor::Signed;
 use crate::{App, PageError, links};
 use axum::extract::State;
+use commissioning::DriveId;
 use commissioning::people::Role;
 use maud::{Markup, html};
-use store::{FoundRow, SiteRow};
+use std::collections::BTreeMap;
+use store::{FoundRow, SiteRow, StatusKey};
 
 /// Shows it.
 ///
@@ -15,6 +18,12 @@ use store::{FoundRow, SiteRow};
 /// When the store cannot be read.
 pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, PageError> {
     let mine = app.store.my_open_drives(signed.person.id).await?;
+    let mut reasons = BTreeMap::new();
+    for row in mine.iter().filter(|row| row.status == StatusKey::Returned) {
+        let view = app.store.drive_view_by_id(row.drive).await?;
+        let reason = view.and_then(|v| v.drive.record.as_ref().and_then(returned::reason).map(str::to_owned));
+        reasons.extend(reason.map(|reason| (row.drive, reason)));
+    }
     let sites = app.store.sites().await?;
     let waiting = if signed.visitor.is_any(&[Role::Supervisor]) { Some(app.store.queue(1).await?.total) } else { None };
     let codes = codes::to_tell(&app.store.codes_made(signed.person.id).await?, app.now());
@@ -23,10 +32,11 @@ pub async fn show(State(app): State<App>, signed: Signed) -> Result<Markup, Page
         h1 { "Start" }
         @for words in &codes { p.notice role="alert" { (words) } }
         (search_box(""))
-        @if app.store.is_read_only() { p.notice role="alert" { "The server's disk refuses to write: nothing can be recorded at present." } }
+        @if app.store.only_read().is_some() { p.notice role="alert" { "This store was opened only to be read: nothing can be written to its folder. Records can be looked at; nothing can be recorded." } }
+        @else if app.store.is_read_only() { p.notice role="alert" { "The server's disk refuses to write: nothing can be recorded at present." } }
         @if low { p.notice role="alert" { "The server's disk is nearly full. Tell whoever keeps it." } }
         @if let Some(waiting) = waiting { (queue(waiting)) }
-        @if !mine.is_empty() { (drives(&mine)) }
+        @if !mine.is_empty() { (drives(&mine, &reasons)) }
         (site_cards(&signed, &sites))
     };
     Ok(Page::new("Start", body).own_heading().render(&signed.visitor))
@@ -42,13 +52,13 @@ fn queue(waiting: u64) -> Markup {
     }
 }
 
-fn drives(mine: &[FoundRow]) -> Markup {
+fn drives(mine: &[FoundRow], reasons: &BTreeMap<DriveId, String>) -> Markup {
     html! {
         section aria-labelledby="mine" {
             h2 #mine { "My drives in work" }
             ul.cards {
                 @for row in mine {
-                    li.card { (small_plate(&row.tag, &links::drive(&row.site_tag, &row.tag))) div { b { (row.name) } br; span.quiet { (row.site_name) " · " (row.status.words()) } } }
+                    li.card { (small_plate(&row.tag, &links::drive(&row.site_tag, &row.tag))) div { b { (row.name) } br; span.quiet { (row.site_name) " · " (row.status.words()) } @if let Some(reason) = reasons.get(&row.drive) { p.returned { b { "Returned: " } (reason) } } } }
                 }
             }
         }

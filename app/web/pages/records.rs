@@ -11,6 +11,7 @@ pub mod report_end;
 pub mod report_settings;
 pub mod report_sheets;
 pub mod report_step;
+pub mod returned;
 pub mod send_back;
 pub mod sign;
 pub mod signature;

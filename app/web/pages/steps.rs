@@ -15,6 +15,7 @@ pub mod resume;
 pub mod sent;
 pub mod sheet;
 pub mod show;
+pub mod stay;
 pub mod tick;
 
 /// Most bytes of a step's form: two pictures and what is typed beside them.

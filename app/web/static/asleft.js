@@ -66,11 +66,38 @@ function menu(fold) {
   });
 }
 
+/** Unfolds whatever a link into the page points at. */
+function reveal() {
+  const target = location.hash.length > 1 ? document.getElementById(decodeURIComponent(location.hash.slice(1))) : null;
+  if (!target) return;
+  const folds = [];
+  for (let at = target; at; at = at.parentElement) if (at.tagName === "DETAILS" && !at.open) folds.push(at);
+  const own = target.querySelector(":scope > details.report-fold, :scope > details.phase");
+  if (own && !own.open) folds.push(own);
+  for (const fold of folds) fold.open = true;
+  if (folds.length) target.scrollIntoView();
+}
+
+/** A sheet that was kept comes back where it stood; the word about it goes once something is typed. */
+function kept(form) {
+  const place = `asleft-place ${location.pathname}`;
+  const told = document.getElementById("saved");
+  form.addEventListener("submit", () => sessionStorage.setItem(place, String(scrollY)));
+  const stood = sessionStorage.getItem(place);
+  sessionStorage.removeItem(place);
+  if (!told) return;
+  if (stood !== null && !location.hash) scrollTo(0, Number(stood));
+  form.addEventListener("input", () => told.remove());
+}
+
 function start() {
   document.querySelectorAll("form[data-judge]").forEach(live);
   document.querySelectorAll("form").forEach(once);
   document.querySelectorAll("details.menu").forEach(menu);
-  document.querySelector(".faults[role=alert]")?.focus();
+  document.querySelectorAll("form[data-keeps]").forEach(kept);
+  reveal();
+  addEventListener("hashchange", reveal);
+  (document.querySelector("main [autofocus]") ?? document.querySelector(".faults[role=alert], .stay[role=alert]"))?.focus();
 }
 
 start();

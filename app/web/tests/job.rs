@@ -159,6 +159,23 @@ pub async fn walk(world: &World, login: &str) -> usize {
     }
 }
 
+/// Walks on until a hold point is ready for its release; gives its address.
+pub async fn to_the_first_release(world: &World) -> String {
+    loop {
+        let now = view(world).await;
+        let next = progress::next(&agenda::of(&now.view()));
+        let address = next.address("larch-ferry", "FN-204");
+        match next {
+            Next::Step { id, .. } => {
+                let answer = fill(world, "ines", &address, &now, &id).await;
+                assert_eq!(answer.status, StatusCode::SEE_OTHER, "{id}: {}", answer.text);
+            }
+            Next::Hold { .. } => return address,
+            Next::Signature => panic!("no hold point on the way"),
+        }
+    }
+}
+
 async fn release(world: &World, login: &str, address: &str, now: &DriveView, phase: &str) -> Answer {
     let declare = now.procedure.phase(phase).and_then(|p| p.hold.as_ref()).expect("a hold point").declare.len();
     let names: Vec<String> = (0..declare).map(|n| format!("declared.{n}")).collect();
@@ -221,7 +238,9 @@ fn setting(now: &DriveView, step: &Step, f: &functions::Function) -> Vec<(String
         (Some("*"), None) | (_, Some(_)) => return Vec::new(),
         _ => match f.kind {
             FieldKind::Quantity { kind, unit, low, high } => {
-                ("intended", number(kind, unit, Some(low), Some(high)), Some(unit.to_owned()))
+                let text =
+                    known_setting(f.key).map_or_else(|| number(kind, unit, Some(low), Some(high)), str::to_owned);
+                ("intended", text, Some(unit.to_owned()))
             }
             FieldKind::Choice(options) => ("intended", options[0].0.to_owned(), None),
             FieldKind::Flag => ("intended", "no".to_owned(), None),
@@ -252,7 +271,9 @@ fn text(item: &Item, row: usize) -> (String, Option<String>) {
 fn known(key: &str) -> Option<&'static str> {
     Some(match key {
         "bus-after-waiting" | "bus-plus-to-earth" | "bus-minus-to-earth" | "input-dead" | "output-dead" => "3",
-        "exchange-bus-after-waiting" | "couple-bus-after-waiting" | "couple-output-dead" => "3",
+        "supply-u1-pe" | "supply-u2-pe" | "supply-u3-pe" => "231",
+        "bus-energised" => "560",
+        "discharge-time" => "6",
         "winding-temperature" => "25",
         "ambient-temperature" => "22",
         "relative-humidity" => "40",
@@ -260,6 +281,22 @@ fn known(key: &str) -> Option<&'static str> {
         "ir-30s" => "900",
         "ir-60s" => "1000",
         "test-voltage" => "500",
+        _ => return None,
+    })
+}
+
+/// Settings that hold points look at, so that they are within: the plate's, and limits that fit it.
+fn known_setting(key: &str) -> Option<&'static str> {
+    Some(match key {
+        "motor-volts" | "base-volts" => "400",
+        "motor-amps" | "overload-current" => "14.7",
+        "motor-hertz" | "base-frequency" | "maximum-frequency" => "50",
+        "motor-rpm" => "1465",
+        "motor-power" => "7.5",
+        "motor-power-factor" => "0.83",
+        "minimum-frequency" => "40",
+        "current-limit" => "15",
+        "switching-frequency" => "4",
         _ => return None,
     })
 }

@@ -70,8 +70,13 @@ async fn a_whole_job_from_the_first_step_to_the_package() {
     assert_eq!(back.status, StatusCode::UNPROCESSABLE_ENTITY);
     let back = world.post("tor", &format!("{DRIVE}/return"), &[("reason", "Name the permit office.")]).await;
     assert_eq!(back.location(), "/queue", "{}", back.text);
-    assert!(world.get("ines", DRIVE).await.text.contains("Name the permit office."));
+    for path in [DRIVE.to_owned(), format!("{DRIVE}/record"), "/".to_owned()] {
+        let page = world.get("ines", &path).await.text;
+        assert!(page.contains("Name the permit office.") && page.contains("Returned"), "{path}");
+    }
     change_the_permit(&world).await;
+    let finding = [("text", "One gland is loose"), ("severity", "before-handover"), ("step", "enclosure")];
+    assert_eq!(world.post("ines", &format!("{DRIVE}/findings"), &finding).await.status, StatusCode::SEE_OTHER);
     let again = sign(&world, "ines", "sign", PASSWORD).await;
     assert_eq!(again.status, StatusCode::SEE_OTHER, "{}", again.text);
     in_again(&mut world, "ines").await;
@@ -136,11 +141,21 @@ async fn accept(world: &mut World) {
     let now = view(world).await;
     let open: Vec<_> =
         now.drive.record.as_ref().expect("begun").findings.values().filter(|f| f.is_open()).map(|f| f.id).collect();
+    assert!(!open.is_empty());
+    let blocked = world.get("tor", &format!("{DRIVE}/accept")).await.text;
+    is_sound("/accept", &blocked);
+    assert!(open.iter().all(|id| blocked.contains(&format!("/findings/{id}"))), "each is linked");
+    assert!(
+        blocked.contains("Accept each by name") && !blocked.contains("type=\"password\""),
+        "nothing to sign: {blocked}"
+    );
     for finding in open {
         let answer =
             world.post("tor", &format!("{DRIVE}/findings/{finding}/accept"), &[("reason", "Seen and agreed.")]).await;
         assert_eq!(answer.status, StatusCode::SEE_OTHER, "{}", answer.text);
     }
+    let page = world.get("max", &format!("{DRIVE}/accept")).await.text;
+    assert!(page.contains("Ask another supervisor") && !page.contains("type=\"password\""), "{page}");
     let own = sign(world, "max", "accept", PASSWORD).await;
     assert_eq!(own.status, StatusCode::FORBIDDEN, "{}", own.text);
     assert!(own.text.contains("Ask another supervisor"));

@@ -23,7 +23,9 @@ const GOOD: [(&str, &str); 8] = [
 async fn a_plate_is_recorded_as_typed() {
     let world = World::new().await;
     let answer = world.post("ines", MOTOR, &GOOD).await;
-    assert_eq!((answer.status, answer.location()), (StatusCode::SEE_OTHER, MOTOR), "{}", answer.text);
+    let told = format!("{MOTOR}?saved=8");
+    assert_eq!((answer.status, answer.location()), (StatusCode::SEE_OTHER, told.as_str()), "{}", answer.text);
+    assert!(world.get("ines", &told).await.text.contains("Saved: Motor nameplate, 8 fields changed."));
     let page = world.get("ines", MOTOR).await.text;
     assert!(page.contains("value=\"27,5\"") && page.contains("Ines Lund"), "as typed, and by whom");
 }
@@ -111,6 +113,7 @@ async fn verdicts_follow_what_is_typed_and_nothing_is_recorded() {
     let wrong = world.post("ines", &live, &wrong).await.text;
     assert_ne!(right.text, wrong);
     assert!(wrong.contains("mark outside") || wrong.contains("mark marginal"), "{wrong}");
+    assert!(wrong.contains("Power read as 20 kW; 20 hp would fit: the unit."), "{wrong}");
     assert!(
         world.post("ines", &live, &[("motor.0.volts", "<b>abc")]).await.status.is_success(),
         "half-typed is no error while typing"
@@ -122,13 +125,13 @@ async fn verdicts_follow_what_is_typed_and_nothing_is_recorded() {
 async fn a_supervisor_fills_in_sheets_until_the_record_is_begun() {
     let world = World::new().await;
     let path = "/sites/larch-ferry/FN-204/motor";
-    let locked = "<fieldset class=\"plain\" disabled>";
+    let inputs = "name=\"motor.0.volts\"";
     let kept = world.post("tor", path, &[("motor.0.volts", "400"), ("motor.0.volts.unit", "V")]).await;
     assert_eq!(kept.status, StatusCode::SEE_OTHER, "{}", kept.text);
-    assert!(!world.get("tor", path).await.text.contains(locked));
+    assert!(world.get("tor", path).await.text.contains(inputs));
     assert!(world.get("tor", "/").await.text.contains("FN-204"), "what is begun by hand stands on the start page");
-    assert!(world.get("rolf", path).await.text.contains(locked));
+    assert!(!world.get("rolf", path).await.text.contains(inputs));
     super::job::begin(&world, "ines").await;
-    assert!(world.get("tor", path).await.text.contains(locked));
-    assert!(!world.get("ines", path).await.text.contains(locked));
+    assert!(!world.get("tor", path).await.text.contains(inputs));
+    assert!(world.get("ines", path).await.text.contains(inputs));
 }

@@ -87,6 +87,34 @@ fn overwriting_a_reading_always_wants_a_reason_and_all_else_after_the_first_sign
     world.record_changes(ERIN, "direction", choice, "seen again").unwrap();
 }
 
+/// The figure stays and only the meter changes: the refusal is at `reason` and names what it is about.
+#[test]
+fn another_instrument_alone_wants_a_reason_too() {
+    let mut world = World::begun();
+    let meter = Instrument {
+        id: InstrumentId(Uuid::from_u128(0x77)),
+        mark: "MM-77".into(),
+        description: "Meter".into(),
+        serial: "1".into(),
+        due: "2027-03-31".into(),
+        accuracy: Vec::new(),
+        active: true,
+    };
+    let id = meter.id;
+    world.does(ADA, Deed::KeepInstrument { instrument: meter, seen: Vec::new() });
+    world.enter(ERIN, "prove-dead", &[(BUS, "3")]);
+    let mut change = world.change(EntryPlace::new(BUS), "3");
+    change.instrument = Some(id);
+    let Err(Refusal::Fields { errors }) = world.record_changes(ERIN, "prove-dead", vec![change.clone()], "") else {
+        panic!("a reason is due")
+    };
+    assert_eq!((errors.len(), errors[0].field.as_str()), (1, "reason"));
+    assert!(errors[0].message.contains("DC bus, its instrument"), "{}", errors[0].message);
+    world.record_changes(ERIN, "prove-dead", vec![change], "read with the other meter").unwrap();
+    let entry = world.record().entry(&EntryPlace::new(BUS)).unwrap();
+    assert_eq!(entry.value.instrument.as_ref().map(|i| i.0.id), Some(id));
+}
+
 /// integrity.md E 5: what is hard to believe needs "accept with reason", which stays with the entry.
 #[test]
 fn what_is_hard_to_believe_wants_a_reason_and_keeps_it() {

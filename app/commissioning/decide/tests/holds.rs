@@ -105,13 +105,87 @@ fn a_check_that_is_not_judged_holds_unless_its_step_was_settled_otherwise() {
     other.phases[2].hold.as_mut().unwrap().conditions = vec![judged];
     world.attempt(None, Deed::LoadProcedure { procedure: Box::new(other) }).unwrap();
     world.does(ERIN, Deed::BeginRecord { drive: DRIVE });
-    assert!(
-        why(world.attempt(Some(ERIN), release("turn"))).contains("The check insulation-resistance at “Insulation”")
-    );
+    let said = why(world.attempt(Some(ERIN), release("turn")));
+    assert!(said.contains("“Insulation resistance” at “Insulation” is not assessed"), "by its title: {said}");
     let how = crate::record::SettledOtherwise::CouldNotBeDone;
     world.does(
         ERIN,
         Deed::SettleStep { drive: DRIVE, step: "insulation".into(), how, reason: "No tester here.".into() },
     );
     world.release("turn");
+}
+
+/// A world whose hold point before turning asks that nothing is outside at “Insulation”: 0.4 MΩ is.
+fn with_wet_winding() -> World {
+    let mut world = World::new();
+    let mut other = procedure();
+    other.version = 2;
+    other.phases[1].steps[1].checks = vec!["insulation-resistance".into()];
+    let none = crate::procedure::Condition::NoneOutside { checks: vec!["insulation-resistance".into()] };
+    other.phases[2].hold.as_mut().unwrap().conditions = vec![none];
+    let ask = |key: &str| crate::procedure::Item {
+        key: key.into(),
+        optional: true,
+        kind: crate::procedure::ItemKind::Reading {
+            quantity: engineering::Kind::Temperature,
+            unit: None,
+            instrument: true,
+            low: Some(-30.0),
+            high: Some(120.0),
+        },
+        ..other.phases[1].steps[1].items[0].clone()
+    };
+    let temperature = ask("winding-temperature");
+    other.phases[1].steps[1].items.push(temperature);
+    world.attempt(None, Deed::LoadProcedure { procedure: Box::new(other) }).unwrap();
+    world.does(ERIN, Deed::BeginRecord { drive: DRIVE });
+    world.set_field(ERIN, crate::plant::Sheet::Motor, "insulation-minimum", "5", "MΩ").unwrap();
+    world
+}
+
+fn hold_open(world: &World) -> bool {
+    let agenda = agenda::of(&world.view());
+    agenda.phases.iter().find(|p| p.id == "turn").and_then(|p| p.hold.as_ref()).is_some_and(|h| h.open)
+}
+
+/// procedure.md: a hold point waits for what is wrong, until it is put right or a finding about it is accepted by name.
+#[test]
+fn an_outside_verdict_holds_until_it_is_put_right_or_accepted_by_name() {
+    let mut world = with_wet_winding();
+    let wet = |world: &mut World, text: &str| {
+        world.enter(ERIN, "insulation", &[("ir-60s", text), ("winding-temperature", "40")])
+    };
+    world.release("turn");
+    assert!(hold_open(&world), "what is not assessed does not hold here");
+    wet(&mut world, "0.4");
+    assert!(!hold_open(&world), "outside after the release, it holds again");
+    let said = why(world.attempt(Some(ERIN), release("turn")));
+    assert!(said.contains("“Insulation resistance” at “Insulation” is outside: At 40 °C: 0.400 MΩ"), "{said}");
+    assert!(said.contains("names “Insulation resistance” and have it accepted by name"), "{said}");
+
+    let raise = |n: u128, text: &str| Deed::RaiseFinding {
+        drive: DRIVE,
+        finding: FindingId(Uuid::from_u128(n)),
+        severity: Severity::BeforeHandover,
+        text: text.into(),
+        step: Some("insulation".into()),
+    };
+    let accept = |n: u128| Deed::AcceptFinding {
+        drive: DRIVE,
+        finding: FindingId(Uuid::from_u128(n)),
+        reason: "Dried in service, agreed with the client.".into(),
+    };
+    world.does(ERIN, raise(0xA, "A lamp is missing."));
+    world.does(SUNE, accept(0xA));
+    assert!(!hold_open(&world), "a finding about something else releases nothing");
+    world.does(ERIN, raise(0xB, "Insulation resistance too low."));
+    assert!(!hold_open(&world), "raised is not accepted");
+    world.does(SUNE, accept(0xB));
+    assert!(hold_open(&world), "accepted by name");
+    let again = vec![world.change(crate::record::EntryPlace::new("ir-60s"), "0.3")];
+    world.record_changes(ERIN, "insulation", again, "measured again").unwrap();
+    assert!(!hold_open(&world), "what was accepted was another reading");
+    let right = vec![world.change(crate::record::EntryPlace::new("ir-60s"), "900")];
+    world.record_changes(ERIN, "insulation", right, "dried").unwrap();
+    assert!(hold_open(&world), "put right");
 }

@@ -176,14 +176,66 @@ fn the_encoder_sign_is_judged_against_a_direction_and_falls_with_it() {
     assert!(world.record().observed(&sign).is_some());
 }
 
+/// What the first proof asks for, each with a reading of a dead circuit; the keys of a later one begin otherwise.
+const POINTS: [&str; 5] = ["bus-after-waiting", "bus-plus-to-earth", "bus-minus-to-earth", "input-dead", "output-dead"];
+
+fn prove(world: &mut World, step: &str, prefix: &str, ticks: &[(&str, &str)], live: Option<&str>) -> Vec<Event> {
+    let keys = POINTS.map(|point| format!("{prefix}{point}"));
+    let volts = POINTS.map(|point| match point {
+        point if Some(point) == live => "231",
+        "bus-minus-to-earth" => "-1.5",
+        _ => "2",
+    });
+    let readings: Vec<(&str, &str)> = keys.iter().map(String::as_str).zip(volts).collect();
+    world.enter(ERIN, step, &[ticks, &readings].concat())
+}
+
+const FIRST: &[(&str, &str)] =
+    &[("tester-proved-before", "yes"), ("tester-proved-after", "yes"), ("isolated-and-proved-dead", "yes")];
+const EXCHANGE: &[(&str, &str)] =
+    &[("exchange-tester-before", "yes"), ("exchange-tester-after", "yes"), ("exchange-isolation", "isolated")];
+const COUPLE: &[(&str, &str)] =
+    &[("couple-tester-before", "yes"), ("couple-tester-after", "yes"), ("couple-isolated", "yes")];
+
+/// The three proofs ask for the same points, and a live one keeps isolation out of force at each of them.
 #[test]
-fn isolation_for_an_exchange_comes_into_force_only_with_its_reading() {
+fn a_live_terminal_or_pole_keeps_isolation_out_of_force_at_every_proof() {
+    for (step, prefix, ticks) in [
+        ("prove-dead", "", FIRST),
+        ("isolate-for-exchange", "exchange-", EXCHANGE),
+        ("isolate-to-couple", "couple-", COUPLE),
+    ] {
+        let mut begun = with_built_in();
+        begun.set_field(ERIN, Sheet::Drive, "first-run-uncoupled", "yes", "").unwrap();
+        for live in POINTS {
+            let mut world = begun.clone();
+            let events = prove(&mut world, step, prefix, ticks, Some(live));
+            assert!(!world.record().isolated(), "{step}: live at {live}");
+            let stops = |f: &Fact| matches!(f, Fact::FindingRaised { severity: Severity::StopsStartUp, text, .. } if text.contains("231 V"));
+            assert_eq!(has(&events, stops), 1, "{step}: {live}");
+        }
+        let mut world = begun.clone();
+        let events = prove(&mut world, step, prefix, ticks, None);
+        assert!(world.record().isolated(), "{step}: dead");
+        assert!(world.record().findings.values().all(|f| f.severity != Severity::StopsStartUp), "{step}");
+        let asked = events
+            .iter()
+            .filter(|e| matches!(&e.fact, Fact::EntryMade { entry, .. } if entry.accepted_because.is_some()));
+        assert_eq!(asked.count(), 0, "a pole below earth wants no reason");
+        let mut world = begun;
+        world.enter(ERIN, step, ticks);
+        let (_, stands) = agenda::of(&world.view()).step(step).map(|(p, s)| (p.id.clone(), s.clone())).unwrap();
+        assert_eq!(stands.missing.len(), POINTS.len(), "{step} asks for every point: {:?}", stands.missing);
+    }
+}
+
+#[test]
+fn isolation_for_an_exchange_comes_into_force_only_with_its_readings() {
     let mut world = with_built_in();
     let step = |world: &World| agenda::of(&world.view()).step("isolate-for-exchange").unwrap().1.clone();
     world.enter(ERIN, "isolate-for-exchange", &[("exchange-isolation", "isolated")]);
-    assert!(!world.record().isolated(), "the bus was not measured");
-    assert_eq!((step(&world).state, step(&world).missing), (StepState::Begun, vec!["DC+ to DC− after waiting".into()]));
-    world.enter(ERIN, "isolate-for-exchange", &[("exchange-bus-after-waiting", "3")]);
+    assert!(!world.record().isolated() && step(&world).state == StepState::Begun, "nothing was measured");
+    prove(&mut world, "isolate-for-exchange", "exchange-", &EXCHANGE[..2], None);
     assert!(world.record().isolated() && step(&world).state == StepState::Settled);
     let mut world = with_built_in();
     world.enter(ERIN, "isolate-for-exchange", &[("exchange-isolation", "not-needed")]);

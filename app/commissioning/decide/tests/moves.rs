@@ -41,6 +41,7 @@ fn name(deed: &Deed) -> &'static str {
         Deed::Sign { meaning: Meaning::Accepted, .. } => "sign-accepted",
         Deed::Return { .. } => "return",
         Deed::Reopen { .. } => "reopen",
+        Deed::RotateKey { .. } => "rotate-key",
     }
 }
 
@@ -115,6 +116,12 @@ pub(super) fn every_deed(world: &World) -> Vec<(&'static str, Deed)> {
         Deed::Sign { drive, meaning: Meaning::Accepted, digest },
         Deed::Return { drive, reason: reason() },
         Deed::Reopen { drive, reason: reason() },
+        Deed::RotateKey {
+            old: "a1".repeat(32),
+            new: "b2".repeat(32),
+            by_old: "c3".repeat(64),
+            by_new: "d4".repeat(64),
+        },
     ]
     .into_iter()
     .map(|deed| (name(&deed), deed))

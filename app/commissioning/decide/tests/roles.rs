@@ -34,6 +34,7 @@ const TABLE: &[(&str, [bool; 4])] = &[
     ("sign-accepted", [false, true, false, false]),
     ("return", [false, true, false, false]),
     ("reopen", [false, true, false, false]),
+    ("rotate-key", [false, false, true, false]),
 ];
 
 #[test]

@@ -104,7 +104,7 @@ impl Case {
     }
 }
 
-fn recorded<T>(value: T) -> Recorded<T> {
+pub(super) fn recorded<T>(value: T) -> Recorded<T> {
     Recorded {
         value,
         event: EventId("1-1".to_owned()),

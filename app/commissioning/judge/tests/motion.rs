@@ -151,6 +151,31 @@ fn every_function_is_in_force_by_itself() {
     assert!(limit(&case).contains("33.0 s"), "the ramp as left is in force: {}", limit(&case));
 }
 
+/// Arithmetic (row RM-14): a share of 50 % makes the steepest part 1/(1 − 0.25) = 1.333 of the mean, so a constant load
+/// needs a third more time within the same limit, and 4/3 of J·ω/t to slow down; each column tells of its own share.
+#[test]
+fn the_s_curve_share_of_the_record_counts_for_every_ramp() {
+    let figure = |outcome: &Outcome, name: &str| -> f64 {
+        outcome.figures.iter().find(|f| f.name == name).unwrap().value.parse().unwrap()
+    };
+    let eased: &[(&str, &str)] = &[("s-curve-share", "50")];
+    for (ramp, check, name) in [
+        (RAMP_UP, "acceleration-time", "shortest even ramp"),
+        (RAMP_DOWN, "deceleration-time", "shortest even ramp within the current limit"),
+    ] {
+        let (straight, round) = (one(&[], ramp, check), one(&[], &[ramp, eased].concat(), check));
+        let ratio = figure(&round, name) / figure(&straight, name);
+        assert!((ratio - 4.0 / 3.0).abs() < 0.01, "{check}: {ratio}");
+        assert_eq!(taken(&straight, "S-curve share of the ramp").as_deref(), Some("none, a straight ramp"));
+        assert_eq!(taken(&round, "S-curve share of the ramp"), None);
+    }
+    let chopper: &[Field] = &[(Drive, "brake-chopper", "yes"), (DrivePlate, "chopper-volts", "780")];
+    let torque = |keyed: &[(&str, &str)]| figure(&one(chopper, keyed, "braking"), "braking torque");
+    let short: &[(&str, &str)] = &[("deceleration-time", "5")];
+    let (straight, round) = (torque(short), torque(&[short, eased].concat()));
+    assert!(((round + 10.0) / (straight + 10.0) - 4.0 / 3.0).abs() < 0.01, "{straight} {round}");
+}
+
 /// Rows UB-06 and UB-07: what is seen counts, with leads and settings as they are.
 #[test]
 fn rotation_by_what_was_seen_and_how_it_came_about() {

@@ -92,6 +92,55 @@ fn the_column_in_use_is_said_where_it_was_assumed() {
     assert!(!assumed(&case));
 }
 
+/// Row MN-06 (common practice): a ratio of √3 between two columns is star and delta; figures of every column are read,
+/// with digits, unit, poles and class as typed.
+#[test]
+fn misreading_reads_every_column_and_names_the_likeliest() {
+    let said = |set: &[Field], second: &[(&str, &str)]| {
+        let mut case =
+            Case::of(&[MOTOR, &[(Motor, "power-factor", "0.83"), (Motor, "efficiency", "90.4")], set].concat(), &[]);
+        for (key, text) in second {
+            case.set(Motor, 1, key, text);
+        }
+        let outcome = case.once("misreading");
+        (outcome.verdict, outcome.notes)
+    };
+    let delta = [("volts", "230"), ("amps", "25.1"), ("hertz", "50"), ("rpm", "1460"), ("power", "7.5")];
+    assert_eq!(said(&[], &delta), (Within, Vec::new()));
+    let (verdict, notes) = said(&[(Motor, "amps", "145")], &[]);
+    assert_eq!(verdict, Outside);
+    assert_eq!(notes[0], "1 · Current read as 145 A; 14.5 A would fit: the decimal point.");
+    let (verdict, notes) = said(&[(Motor, "poles", "6")], &[]);
+    assert_eq!(verdict, Outside);
+    assert!(notes.iter().any(|n| n.contains("Number of poles read as 6; 4 would fit")), "{notes:?}");
+    let mut star = delta;
+    star[1].1 = "14.5";
+    let (verdict, notes) = said(&[], &star);
+    assert_ne!(verdict, Within);
+    assert!(notes.iter().any(|n| n.contains("Rating column 2, current read as 14.5 A; about 25.1 A")), "{notes:?}");
+    assert_eq!(said(&[(Motor, "efficiency", "84"), (Motor, "amps", "15.6")], &[]).0, Within);
+    let (verdict, notes) =
+        said(&[(Motor, "efficiency", "84"), (Motor, "amps", "15.6"), (Motor, "efficiency-class", "ie3")], &[]);
+    assert_eq!(verdict, Marginal, "{notes:?}");
+}
+
+/// A rating by name is exact: 4 kW is not open from 3.5 to 4.5 kW, or horsepower read as kilowatts would fit into it.
+#[test]
+fn power_balance_takes_a_rating_as_exact() {
+    let plate: &[Field] = &[
+        (Motor, "volts", "400"),
+        (Motor, "amps", "8.80"),
+        (Motor, "power", "4"),
+        (Motor, "power-factor", "0.81"),
+        (Motor, "efficiency", "88.6"),
+    ];
+    assert_eq!(Case::of(plate, &[]).once("power-balance").verdict, Outside);
+    let fits = [plate, &[(Motor, "amps", "8.05")]].concat();
+    assert_eq!(Case::of(&fits, &[]).once("power-balance").verdict, Within);
+    let rounded = [plate, &[(Motor, "power", "4.3")]].concat();
+    assert_eq!(Case::of(&rounded, &[]).once("power-balance").verdict, Within);
+}
+
 /// The maker's longest cable goes first; MG 1 part 31 (row CB-07) after it.
 #[test]
 fn reflected_wave_by_the_makers_longest_cable() {

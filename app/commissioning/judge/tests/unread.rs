@@ -28,7 +28,6 @@ const KEPT_FOR_THE_READER: &[(Sheet, &str)] = &[
     (DrivePlate, "chopper-current"),
     (DrivePlate, "resistor-energy"),
     (DrivePlate, "resistor-duty"),
-    (DrivePlate, "terminal-torque"),
     (DrivePlate, "encoder-input-hertz"),
     (DrivePlate, "step-time"),
     (Motor, "service-factor-amps"),

@@ -28,6 +28,7 @@ pub const FIELDS: &[Field] = &[
     quantity(RULES, "voltage-drop-limit", "voltage drop allowed, drive to motor", (Percent, "%"), (0.001, 0.2), "As the design gives it."),
     quantity(RULES, "reference-tolerance", "error allowed in an analogue reference", (Percent, "%"), (0.0001, 0.1), "Part of the span. Until the site chooses, 0.5 % (common practice)."),
     quantity(RULES, "disconnection-time", "longest disconnection time", (Time, "s"), (0.01, 10.0), "For the device at the head of the drive's circuit."),
+    quantity(RULES, "loop-share", "share of U₀/Iₐ allowed for a measured loop", (Percent, "%"), (0.1, 1.0), "Left empty, two thirds: a loop is measured cold. The design's loop is compared with the whole."),
     text(WORK, "permit-office", "permits come from", "Who issues and takes back permits."),
     text(WORK, "protective-equipment", "protective equipment rules", "Where the site's arc-flash and protective-equipment rules are found."),
     text(WORK, "emergency", "in an emergency call", "Number and meeting point."),

@@ -2,7 +2,7 @@
 
 use super::{ApplyError, misfit};
 use crate::journal::{Chain, Event, Fact};
-use crate::people::Installation;
+use crate::people::{Installation, KeyChange};
 use std::sync::Arc;
 
 /// Applies an event of the installation's chain.
@@ -29,7 +29,14 @@ pub fn to_installation(installation: &mut Installation, event: &Event) -> Result
         Fact::SiteListed { site, tag } => {
             installation.sites.insert(tag.clone(), *site);
         }
-        Fact::KeyRotated { .. } => {}
+        Fact::KeyRotated { old, new, by_old, by_new } => installation.key_changes.push(KeyChange {
+            old: old.clone(),
+            new: new.clone(),
+            by_old: by_old.clone(),
+            by_new: by_new.clone(),
+            by_name: event.person_name.clone(),
+            received: event.received,
+        }),
         _ => return Err(misfit(event, "it is not about the installation")),
     }
     installation.last_change = Some(event.received);

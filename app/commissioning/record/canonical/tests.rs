@@ -14,7 +14,7 @@ use serde_json::Value;
 use uuid::Uuid;
 
 /// An accepted record with something of everything in it; made once and copied.
-fn full() -> World {
+pub(super) fn full() -> World {
     static MADE: std::sync::LazyLock<World> = std::sync::LazyLock::new(make_full);
     MADE.clone()
 }

@@ -24,6 +24,7 @@ pub(super) const ROWS: &[Function] = &[
     quantity(RAMPS, "deceleration-time", "deceleration time", SECONDS, (0.0, 36000.0), "For that change of frequency."),
     quantity(RAMPS, "second-acceleration-time", "second acceleration time", SECONDS, (0.0, 36000.0), "Where used."),
     quantity(RAMPS, "second-deceleration-time", "second deceleration time", SECONDS, (0.0, 36000.0), "Where used; often the quick stop."),
+    quantity(RAMPS, "s-curve-share", "S-curve share of the ramp", (Percent, "%"), (0.0, 1.0), "Part of the set time, both ends together, in which the drive eases in and out without taking longer. 0 for a straight ramp."),
     quantity(RAMPS, "rounding", "rounding at the ends", SECONDS, (0.0, 600.0), "Added to the ramp by most drives."),
     choice(RAMPS, "stop-mode", "stop mode", &[("ramp", "ramps down"), ("coast", "coasts"), ("direct-current", "direct current brakes"), ("quick", "quick ramp")], "What a stop command does."),
     choice(RAMPS, "stop-on-fault", "on a trip", &[("coast", "coasts"), ("ramp", "ramps down where it can")], ""),

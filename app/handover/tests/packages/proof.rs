@@ -5,7 +5,7 @@ use super::plant::{Stage, pump};
 use super::tools::{Folder, run, succeed};
 use commissioning::journal::Fact;
 use engineering::Verdict;
-use handover::package::{DRIVE_EVENTS, RECORD, SIGNATURE, SUMS};
+use handover::package::{DOCUMENT, DRIVE_EVENTS, RECORD, SIGNATURE, SUMS};
 use handover::verify::verify_with;
 use handover::{AssembleFault, assemble, verify};
 
@@ -53,6 +53,49 @@ fn one_changed_byte_in_any_file_is_found_and_the_file_named() {
     assert!(verify(folder.path()).faults.iter().any(|f| f.file == "added.txt"));
     std::fs::remove_file(folder.path().join("added.txt")).unwrap();
     assert!(verify(folder.path()).ok, "put back, all is well again");
+}
+
+/// By somebody who has the key: sums and signature fit, and yet the document is another.
+#[test]
+fn a_document_replaced_under_fitting_sums_is_named() {
+    let (material, package) = accepted();
+    let mut earlier = pump(Stage::InProgress);
+    earlier.event(Fact::RemarkMade { step: String::new(), text: "half way".into() }, None);
+    let other = assemble(&earlier.material(), &key()).unwrap();
+    assert_ne!(other.document(), package.document());
+    let cut = package.document()[..package.document().len() / 2].to_vec();
+    let text = b"%PDF-1.7\nnot much\n".to_vec();
+    for (document, what) in [
+        (other.document().to_vec(), "attached to it is not the one beside it"),
+        (cut, ""),
+        (text, "it is no PDF that can be read"),
+        (Vec::new(), "it is no PDF that can be read"),
+    ] {
+        let folder = written();
+        std::fs::write(folder.path().join(DOCUMENT), &document).unwrap();
+        signed_anew(folder.path());
+        let report = verify(folder.path());
+        let named: Vec<_> = report.faults.iter().filter(|f| f.file == DOCUMENT).collect();
+        assert_eq!((named.len(), report.faults.len()), (1, 1), "{:?}", report.faults);
+        assert!(named[0].what.contains(what) && !report.ok, "{:?}", report.faults);
+    }
+    let folder = written();
+    std::fs::remove_file(folder.path().join(DOCUMENT)).unwrap();
+    signed_anew(folder.path());
+    assert!(verify(folder.path()).faults.iter().any(|f| f.file == DOCUMENT && f.what == "it is missing"));
+    // And nothing else was the reason: the sums made anew over the right document are fine.
+    let folder = written();
+    signed_anew(folder.path());
+    assert_eq!(verify(folder.path()).faults, [], "{}", material.record.drive.tag);
+}
+
+/// Sums and signature over the folder as it is now.
+fn signed_anew(folder: &std::path::Path) {
+    let names = succeed("sh", &["-c", "find * -type f ! -name 'SHA256SUMS*' | LC_ALL=C sort"], folder);
+    let names: Vec<&str> = names.lines().collect();
+    let sums = succeed("sha256sum", &names, folder);
+    std::fs::write(folder.join(SUMS), &sums).unwrap();
+    std::fs::write(folder.join(SIGNATURE), handover::key::sign(&key(), sums.as_bytes())).unwrap();
 }
 
 /// With the key itself in hand, a changed record or a thinned chain still does not fit the rest.

@@ -3,8 +3,9 @@
 use super::{aside, phases};
 use crate::components::{Page, form, link_button, main_button, main_link, notice};
 use crate::extract::DriveAt;
+use crate::pages::records::returned;
 use crate::visitor::Signed;
-use crate::{links, progress, verdicts};
+use crate::{links, progress, unanswered, verdicts};
 use commissioning::agenda::{self, Agenda};
 use commissioning::people::Role;
 use commissioning::record::{Record, Status};
@@ -21,7 +22,7 @@ pub async fn show(signed: Signed, at: DriveAt) -> Markup {
                 h1 { (at.drive.name) }
                 @match &at.drive.record {
                     None => { (beginning(&signed, &at)) }
-                    Some(record) => { (standing(record)) (onward(&signed, &at, record, &agenda)) (phases::list(&at, &agenda)) }
+                    Some(record) => { (standing(record)) (onward(&signed, &at, record, &agenda)) @if matches!(record.status, Status::InProgress { .. }) { (unanswered::notice(&at)) } (phases::list(&at, &agenda)) }
                 }
             }
             aside { (aside::all(&signed, &at, &agenda, judged)) }
@@ -52,7 +53,7 @@ fn standing(record: &Record) -> Markup {
         p.quiet { "Revision " (record.revision) " · begun " (record.begun.date()) " by " (record.begun_by) " · procedure version " (record.procedure) }
         @match &record.status {
             Status::InProgress { returned: None } => {}
-            Status::InProgress { returned: Some(reason) } => { (notice(&format!("Returned: {reason}"))) }
+            Status::InProgress { returned: Some(_) } => { (returned::notice(record)) }
             Status::Signed { at } => { (notice(&format!("Signed {} UTC; waits for review. Nothing can be changed until a supervisor accepts or returns it.", at.shown()))) }
             Status::Accepted { at } => { (notice(&format!("Accepted {} UTC. Reopening it needs a reason and begins the next revision.", at.shown()))) }
         }

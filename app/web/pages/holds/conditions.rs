@@ -1,23 +1,26 @@
-//! The conditions of a hold point in words, each with where it stands.
+//! The conditions of a hold point in words, each once, with where it stands and what it still waits for.
 
+use crate::components::check_title;
 use crate::extract::DriveAt;
 use crate::links;
-use commissioning::agenda::{Agenda, HoldAgenda};
+use commissioning::agenda::{self, Agenda};
 use commissioning::procedure::Condition;
+use commissioning::record::{Finding, Severity};
 use maud::{Markup, html};
 
-/// All conditions of a hold point, and below them what it waits for, in sentences.
+/// All conditions of a hold point.
 #[must_use]
-pub fn list(at: &DriveAt, agenda: &Agenda, hold: &HoldAgenda, conditions: &[Condition]) -> Markup {
+pub fn list(at: &DriveAt, agenda: &Agenda, conditions: &[Condition]) -> Markup {
     html! {
         ul.conditions {
             @for condition in conditions {
-                @let met = met(at, agenda, hold, condition);
-                li.met[met] { span.box aria-hidden="true" {} span { (words(at, condition)) } b { @if met { "met" } @else { "not met" } } }
+                @let unmet = agenda::unmet_of(&at.view(), condition, agenda);
+                li.met[unmet.is_empty()] {
+                    span.box aria-hidden="true" {}
+                    span { (words(at, condition)) @if !unmet.is_empty() { (waits_for(at, agenda, condition, &unmet)) } }
+                    b { @if unmet.is_empty() { "met" } @else { "not met" } }
+                }
             }
-        }
-        @if !hold.unmet.is_empty() {
-            div.card { h2 { "It waits for" } ul { @for sentence in &hold.unmet { li { (sentence) } } } }
         }
     }
 }
@@ -38,22 +41,41 @@ fn words(at: &DriveAt, condition: &Condition) -> Markup {
             Condition::IsolationInForce => { "“Isolated and proved dead” is in force" }
             Condition::IsolationLifted => { "Isolation has been lifted" }
             Condition::NoFindingStopsStartUp => { "No open " a href=(links::findings(site, drive)) { "finding" } " stops start-up" }
-            Condition::ChecksJudged { checks } => { "Judged, and none outside: " (checks.iter().map(|c| commissioning::judge::catalogue::title(c)).collect::<Vec<_>>().join(", ")) }
+            Condition::ChecksJudged { checks } => { "Judged, and none outside" (listed(checks)) }
+            Condition::NoneOutside { checks } => { "None outside, or accepted by name" (listed(checks)) }
         }
     }
 }
 
-/// Whether it is met, as the agenda sees it.
-fn met(at: &DriveAt, agenda: &Agenda, hold: &HoldAgenda, condition: &Condition) -> bool {
-    let record = at.drive.record.as_ref();
-    match condition {
-        Condition::PhaseSettled { phase } => agenda.phases.iter().filter(|p| p.id == *phase).all(|p| p.left() == 0),
-        Condition::StepSettled { step } => agenda.step(step).is_none_or(|(_, s)| s.state.is_settled()),
-        Condition::IsolationInForce => record.is_some_and(commissioning::record::Record::isolated),
-        Condition::IsolationLifted => !record.is_some_and(commissioning::record::Record::isolated),
-        Condition::NoFindingStopsStartUp => !hold.unmet.iter().any(|s| s.starts_with("Finding ")),
-        Condition::ChecksJudged { checks } => {
-            !checks.iter().any(|c| hold.unmet.iter().any(|s| s.starts_with(&format!("The check {c} "))))
+/// Few checks by their titles; many folded.
+fn listed(checks: &[String]) -> Markup {
+    let titles = checks.iter().map(|c| check_title(c)).collect::<Vec<_>>().join(", ");
+    html! {
+        @if checks.len() < 5 { ": " (titles) }
+        @else { details.earlier { summary { (checks.len()) " checks" } (titles) } }
+    }
+}
+
+/// What a condition that is not met waits for, where that is more than the condition says already.
+fn waits_for(at: &DriveAt, agenda: &Agenda, condition: &Condition, unmet: &[String]) -> Markup {
+    let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
+    html! {
+        @match condition {
+            Condition::PhaseSettled { phase } => @for p in agenda.phases.iter().filter(|p| p.id == *phase && p.left() > 0) {
+                br; span.quiet { @if p.left() == 1 { "one step is left" } @else { (p.left()) " steps are left" } }
+            },
+            Condition::NoFindingStopsStartUp => @for f in stopping(at) {
+                br; span.quiet { a href=(links::finding(site, drive, f.id)) { "finding " (f.number) } ": " (f.text) }
+            },
+            Condition::ChecksJudged { .. } | Condition::NoneOutside { .. } => @for sentence in unmet { br; span.quiet { (sentence) } },
+            _ => {}
         }
     }
+}
+
+fn stopping(at: &DriveAt) -> Vec<&Finding> {
+    let all = at.drive.record.iter().flat_map(|r| r.findings.values());
+    let mut open: Vec<_> = all.filter(|f| f.is_open() && f.severity == Severity::StopsStartUp).collect();
+    open.sort_by_key(|f| f.number);
+    open
 }

@@ -65,7 +65,7 @@ pub fn page(signed: &Signed, at: &HoldAt, posted: Option<&Posted>, errors: &[Fie
                 p.notice { "Released " (release.received.shown()) " UTC by " b { (release.printed_name) } @if release.printed_name != release.by_name { ", recorded by " (release.by_name) } @if !stands.open { ". Something that must keep holding no longer does, so that it waits again" } "." }
             }
             h2 { "Conditions" }
-            (conditions::list(&at.at, &agenda, stands, &point.conditions))
+            (conditions::list(&at.at, &agenda, &point.conditions))
             (release(signed, at, point, stands, posted, errors))
         }
     };
@@ -90,7 +90,7 @@ fn release(
     let none = Posted::default();
     let sent = posted.unwrap_or(&none);
     let witness = FieldInput::new("printed_name", "Witness’s printed name", InputKind::Line(80))
-        .hint("Only when a witness from the client releases it.")
+        .hint("As the client’s witness signs.")
         .sent_back(sent, errors);
     html! {
         h2 { "Release" }
@@ -103,7 +103,7 @@ fn release(
                     label { input type="radio" name="role" value="witness" checked[sent.text("role") == "witness"]; span { "a witness from the client" } }
                 }
             }
-            (field(&witness))
+            div.of-witness { (field(&witness)) }
             div.row { (main_button("Release the hold point")) }
         }))
     }

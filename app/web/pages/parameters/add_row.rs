@@ -25,7 +25,8 @@ pub async fn keep(State(app): State<App>, signed: Signed, at: DriveAt, posted: P
             Ok(Redirect::to(&links::parameter_group(&at.site.tag, &at.drive.tag, &address_name(FREE))).into_response())
         }
         Err(PageError::Fields { errors }) => {
-            Ok((StatusCode::UNPROCESSABLE_ENTITY, list::page(&signed, &at, Some(&posted), &errors)).into_response())
+            Ok((StatusCode::UNPROCESSABLE_ENTITY, list::page(&signed, &at, None, Some(&posted), &errors))
+                .into_response())
         }
         Err(other) => Err(other),
     }

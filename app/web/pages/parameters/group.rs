@@ -1,7 +1,7 @@
 //! A group of the parameter record to be filled in: shown, recorded, its checks beside it.
 
-use super::rows::{address_name, group_of};
-use super::{changes, inputs};
+use super::rows::{address_name, group_of, title};
+use super::{changes, inputs, list};
 use crate::components::{Page, live_form, main_button, verdict_panels};
 use crate::extract::{DriveAt, segment};
 use crate::pages::steps::at::may_record;
@@ -31,8 +31,8 @@ impl<S: Send + Sync> FromRequestParts<S> for GroupAt {
 }
 
 /// The form.
-pub async fn show(State(app): State<App>, signed: Signed, at: DriveAt, GroupAt(group): GroupAt) -> Markup {
-    page(&app, &signed, &at, group, &Back::default())
+pub async fn show(signed: Signed, at: DriveAt, GroupAt(group): GroupAt) -> Markup {
+    page(&signed, &at, group, &Back::default())
 }
 
 /// Records what was changed.
@@ -47,7 +47,7 @@ pub async fn keep(
     posted: Posted,
 ) -> Result<Response, PageError> {
     let changed = changes::of(&at, group, &posted);
-    let back_to = links::parameters(&at.site.tag, &at.drive.tag);
+    let back_to = links::parameters_saved(&at.site.tag, &at.drive.tag, &address_name(group), changed.len());
     if changed.is_empty() {
         return Ok(Redirect::to(&back_to).into_response());
     }
@@ -57,7 +57,7 @@ pub async fn keep(
         Ok(_) => Ok(Redirect::to(&back_to).into_response()),
         Err(PageError::Fields { errors }) => {
             let back = Back { posted: Some(&posted), errors: &errors };
-            Ok((StatusCode::UNPROCESSABLE_ENTITY, page(&app, &signed, &at, group, &back)).into_response())
+            Ok((StatusCode::UNPROCESSABLE_ENTITY, page(&signed, &at, group, &back)).into_response())
         }
         Err(PageError::Stale { conflicts }) => {
             let action = links::parameter_group(&at.site.tag, &at.drive.tag, &address_name(group));
@@ -67,22 +67,23 @@ pub async fn keep(
     }
 }
 
-fn page(app: &App, signed: &Signed, at: &DriveAt, group: &str, back: &Back<'_>) -> Markup {
+fn page(signed: &Signed, at: &DriveAt, group: &str, back: &Back<'_>) -> Markup {
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
     let may = may_record(signed, at);
     let name = address_name(group);
+    let away = html! { a.b href=(links::parameters(site, drive)) { "Back to the parameter record" } };
     let fields = html! {
-        fieldset.plain disabled[!may] { (inputs::group(at, group, back, app.now())) @if may { (sheet_form::reason(back)) } }
-        div.row.foot { @if may { (main_button("Record")) } a.b href=(links::parameters(site, drive)) { "Back to the parameter record" } }
+        (inputs::group(at, group, back))
+        (sheet_form::reason(back))
+        div.row.foot { (main_button("Record")) (away) }
     };
     let body = html! {
         (sheet_form::summary(back.errors))
-        (live_form(&signed.visitor, &links::parameter_group(site, drive, &name), &links::parameter_group_live(site, drive, &name), fields))
+        @if may { (live_form(&signed.visitor, &links::parameter_group(site, drive, &name), &links::parameter_group_live(site, drive, &name), fields)) }
+        @else { (list::values(at, group)) div.row { (away) } }
         div.verdicts data-live aria-live="polite" { (panels(&judged(&at.view(), group))) }
     };
-    let mut letters = group.chars();
-    let title: String = letters.next().map(|c| c.to_uppercase().chain(letters).collect()).unwrap_or_default();
-    Page::new(title, body).plate(at.plate()).render(&signed.visitor)
+    Page::new(title(group), body).plate(at.plate()).render(&signed.visitor)
 }
 
 /// The checks that the steps of a group show.

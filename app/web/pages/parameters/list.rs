@@ -1,32 +1,51 @@
 //! The whole parameter record as it stands: intended beside as left, differences marked, verdicts beside.
 
 use super::add_row;
-use super::rows::{self, Row, address_name};
-use crate::components::{Page, verdict_panels};
+use super::rows::{self, Row, address_name, title};
+use crate::components::{Page, saved, verdict_panels};
 use crate::extract::DriveAt;
 use crate::pages::steps::at::may_record;
 use crate::pages::steps::sheet::shown;
 use crate::posted::Posted;
 use crate::visitor::Signed;
-use crate::{links, progress, verdicts};
+use crate::{links, progress, sheet_form, verdicts};
+use axum::extract::Query;
 use commissioning::FieldError;
 use commissioning::agenda;
 use commissioning::judge::{self, Judged};
 use commissioning::record::{ParameterColumn, functions};
 use maud::{Markup, html};
+use serde::Deserialize;
+
+/// What was just kept: how many values of which group.
+#[derive(Debug, Default, Deserialize)]
+pub struct Asked {
+    #[serde(default)]
+    saved: String,
+    #[serde(default)]
+    of: String,
+}
 
 /// Shows it.
-pub async fn show(signed: Signed, at: DriveAt) -> Markup {
-    page(&signed, &at, None, &[])
+pub async fn show(signed: Signed, at: DriveAt, Query(asked): Query<Asked>) -> Markup {
+    let told = rows::group_of(&asked.of).and_then(|group| sheet_form::saved_words(group, "value", &asked.saved));
+    page(&signed, &at, told.as_deref(), None, &[])
 }
 
 /// The page, or as it comes back when a free row was refused.
 #[must_use]
-pub fn page(signed: &Signed, at: &DriveAt, posted: Option<&Posted>, errors: &[FieldError]) -> Markup {
+pub fn page(
+    signed: &Signed,
+    at: &DriveAt,
+    told: Option<&str>,
+    posted: Option<&Posted>,
+    errors: &[FieldError],
+) -> Markup {
     let may = may_record(signed, at);
     let judged = judged(at);
     let body = html! {
         h1 { "Parameter record" }
+        @if let Some(told) = told { (saved(told)) }
         p.lead { "What the drive is set to, function by function, whatever its maker calls it. Its own code for each is yours to note." }
         @if at.drive.record.is_none() { p.notice { "The record of this drive has not been begun. " a href=(links::drive(&at.site.tag, &at.drive.tag)) { "Begin it on the drive’s page" } "." } }
         div.split {
@@ -60,17 +79,23 @@ fn judged(at: &DriveAt) -> Vec<Judged> {
 fn section(at: &DriveAt, group: &'static str, may: bool) -> Markup {
     let all = rows::of(at, group);
     let used: Vec<&Row> = all.iter().filter(|r| r.any(at) || group == rows::FREE).collect();
-    let mut letters = group.chars();
-    let title: String = letters.next().map(|c| c.to_uppercase().chain(letters).collect()).unwrap_or_default();
     html! {
-        section.setting-group {
+        section.setting-group id=(format!("group-{}", address_name(group))) {
             div.head {
-                h2 { (title) }
+                h2 { (title(group)) }
                 @if !all.is_empty() { a.b href=(links::parameter_group(&at.site.tag, &at.drive.tag, &address_name(group))) { @if may { "Fill in" } @else { "Details" } } }
             }
             @if used.is_empty() { p.quiet { "Nothing entered yet." } } @else { (table(at, &used)) }
         }
     }
+}
+
+/// The rows of a group that hold a value, as words; `*` for every group.
+#[must_use]
+pub fn values(at: &DriveAt, group: &str) -> Markup {
+    let all = rows::of(at, group);
+    let used: Vec<&Row> = all.iter().filter(|r| r.any(at)).collect();
+    html! { @if used.is_empty() { p.quiet { "No setting has been entered here." } } @else { (table(at, &used)) } }
 }
 
 fn table(at: &DriveAt, used: &[&Row]) -> Markup {

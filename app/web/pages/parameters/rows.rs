@@ -28,6 +28,13 @@ pub fn address_name(group: &str) -> String {
     group.replace(' ', "-")
 }
 
+/// A group as headings name it.
+#[must_use]
+pub fn title(group: &str) -> String {
+    let mut letters = group.chars();
+    letters.next().map(|c| c.to_uppercase().chain(letters).collect()).unwrap_or_default()
+}
+
 /// The group of an address name; `*` and free rows too.
 #[must_use]
 pub fn group_of(name: &str) -> Option<&'static str> {

@@ -22,21 +22,29 @@ pub fn digest(at: &DriveAt) -> String {
     RecordFile::shown(&at.view()).digest()
 }
 
+/// Counts, and what is odd in words.
+#[must_use]
+pub fn verdicts(at: &DriveAt) -> Markup {
+    let judged = verdicts::all(&at.view());
+    html! {
+        h2 { "Verdicts" }
+        p { (counts(&verdicts::numbers(&Counts::of(&judged)))) }
+        (verdicts::odd_in_words(&judged, |j| crate::links::record_at(&at.site.tag, &at.drive.tag, &j.step)))
+    }
+}
+
 /// Counts, what is odd, open findings, digest, and the sentence.
 #[must_use]
 pub fn summary(at: &DriveAt, meaning: Meaning, digest: &str, name: &str) -> Markup {
-    let judged = verdicts::all(&at.view());
     let mut open: Vec<&Finding> =
         at.drive.record.iter().flat_map(|r| r.findings.values()).filter(|f| f.is_open()).collect();
     open.sort_by_key(|f| f.number);
     let revision = at.drive.record.as_ref().map_or(1, |r| r.revision);
     html! {
-        h2 { "Verdicts" }
-        p { (counts(&verdicts::numbers(&Counts::of(&judged)))) }
-        (verdicts::odd_in_words(&judged, |j| crate::links::record_at(&at.site.tag, &at.drive.tag, &j.step)))
+        (verdicts(at))
         h2 { "Open findings" }
         @if open.is_empty() { p.quiet { "None." } }
-        ul { @for f in open { li { b { (f.number) } " " (f.severity.words()) ": " (f.text) } } }
+        ul { @for f in open { li { a href=(crate::links::finding(&at.site.tag, &at.drive.tag, f.id)) { "Finding " (f.number) } ", " (f.severity.words()) ": " (f.text) } } }
         h2 { "What you sign" }
         blockquote.statement {
             p { "“I, " b { (name) } ", sign the record of " b { (at.drive.tag) } ", revision " (revision) ", as " b { (meaning.words()) } ".”" }

@@ -9,7 +9,6 @@ use crate::{App, PageError, links};
 use axum::extract::State;
 use axum::http::StatusCode;
 use axum::response::{IntoResponse, Redirect, Response};
-use commissioning::Timestamp;
 use commissioning::journal::Deed;
 use commissioning::people::Role;
 use commissioning::record::Status;
@@ -44,9 +43,9 @@ pub async fn keep(State(app): State<App>, signed: Signed, at: DriveAt, posted: P
 
 /// The remarks on a step, oldest first.
 #[must_use]
-pub fn list(at: &DriveAt, step: &str, now: Timestamp) -> Markup {
+pub fn list(at: &DriveAt, step: &str) -> Markup {
     let all = at.drive.record.iter().flat_map(|r| &r.remarks).filter(|(s, _)| s == step);
-    html! { @for (_, r) in all { p.remark { b { (r.by_name) } ", " (moment(r.received, now)) ": " (r.value) } } }
+    html! { @for (_, r) in all { p.remark { b { (r.by_name) } ", " (moment(r.received)) ": " (r.value) } } }
 }
 
 /// The form for one, folded, for those who may while the record takes remarks.

@@ -1,11 +1,11 @@
 //! The record read from top to bottom like a report, as a supervisor reviews it and a printer prints it.
 
-use super::{changed, closing, report_end, report_settings, report_sheets, report_step};
+use super::{changed, closing, report_end, report_settings, report_sheets, report_step, returned};
 use crate::components::{Page, counts, link_button, main_link};
 use crate::extract::DriveAt;
 use crate::visitor::Signed;
-use crate::{App, links, verdicts};
-use axum::extract::{Query, State};
+use crate::{links, unanswered, verdicts};
+use axum::extract::Query;
 use commissioning::agenda::{self, Agenda};
 use commissioning::judge::{Counts, Judged};
 use commissioning::people::Role;
@@ -18,22 +18,24 @@ use serde::Deserialize;
 pub struct Asked {
     #[serde(default)]
     working: String,
+    #[serde(default)]
+    whole: String,
 }
 
 /// Shows it.
-pub async fn show(State(app): State<App>, signed: Signed, at: DriveAt, Query(asked): Query<Asked>) -> Markup {
+pub async fn show(signed: Signed, at: DriveAt, Query(asked): Query<Asked>) -> Markup {
     let agenda = agenda::of(&at.view());
     let judged = verdicts::all(&at.view());
     let in_full = asked.working == "all";
-    let shown = report_step::Shown { judged: &judged, in_full, now: app.now() };
+    let shown = report_step::Shown { judged: &judged, in_full, whole: in_full || asked.whole == "yes" };
     let body = html! {
         article.report {
             (opening(&at, &agenda, &judged))
-            (workings(&at, in_full))
+            (ways(&at, shown))
             @if at.drive.record.is_some() { (turns(&at)) }
-            (report_sheets::all(&at, &judged, in_full))
+            (report_sheets::all(&at, shown))
             @for phase in &agenda.phases { (report_step::phase(&signed, &at, phase, shown)) }
-            (report_settings::all(&at))
+            (report_settings::all(&at, shown.whole))
             @if let Some(record) = &at.drive.record { (report_end::all(&signed, &at, record)) }
         }
     };
@@ -51,24 +53,27 @@ fn opening(at: &DriveAt, agenda: &Agenda, judged: &[Judged]) -> Markup {
     html! {
         h1 { "Record of " (at.drive.tag) }
         p.lead { (at.drive.name) ", " (at.site.name) }
+        @if let Some(record) = &at.drive.record { (returned::notice(record)) }
         @match &at.drive.record {
             None => p.notice { "No record has been begun." },
             Some(record) => p { "Revision " (record.revision) ", " b { (record.status.words()) } ", begun " (record.begun.shown()) " UTC by " (record.begun_by) ", procedure version " (record.procedure) "." }
         }
         p { (agenda.phases.iter().map(agenda::PhaseAgenda::settled).sum::<usize>()) " steps settled, " (agenda.left()) " left · " (open) @if open == 1 { " open finding" } @else { " open findings" } }
+        @if at.drive.record.as_ref().is_some_and(|r| !matches!(r.status, Status::Accepted { .. })) { (unanswered::notice(at)) }
         @if at.drive.record.as_ref().is_some_and(|r| r.frozen.is_some()) { p.quiet { "Verdicts as they were frozen at the signature." } }
         p { (counts(&verdicts::numbers(&Counts::of(judged)))) }
         (verdicts::odd_in_words(judged, |j| if j.step.is_empty() { "#plates".to_owned() } else { links::record_at(site, drive, &j.step) }))
     }
 }
 
-/// The one switch for the working of what is within; without it a page of a hundred checks is hard to read.
-fn workings(at: &DriveAt, in_full: bool) -> Markup {
+/// How much of it lies open: folded, whole, or whole with every working. A printer prints what lies open.
+fn ways(at: &DriveAt, shown: report_step::Shown<'_>) -> Markup {
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
     html! {
-        div.row {
-            @if in_full { (link_button(&links::record(site, drive), "Fold the working of what is within")) }
-            @else { (link_button(&links::record_in_full(site, drive), "Show the working of every verdict")) }
+        div.row.fold-ways {
+            @if shown.whole { (link_button(&links::record(site, drive), "Fold the parts")) }
+            @if shown.in_full || !shown.whole { (link_button(&links::record_whole(site, drive), "Whole record")) }
+            @if !shown.in_full { (link_button(&links::record_in_full(site, drive), "Whole record with every working")) }
         }
     }
 }

@@ -5,7 +5,6 @@ use super::signature::shortened;
 use crate::extract::DriveAt;
 use crate::pages::findings::at::state;
 use crate::visitor::Signed;
-use commissioning::Timestamp;
 use commissioning::record::{Finding, Record, Turn};
 use maud::{Markup, html};
 
@@ -23,7 +22,7 @@ pub fn all(signed: &Signed, at: &DriveAt, record: &Record) -> Markup {
             @if findings.is_empty() { p.quiet { "None." } }
             ol.plain-list { @for f in findings { li { b { (f.number) } " · " (f.severity.words()) ": " (f.text) " (" (f.by_name) ", " (f.received.shown()) " UTC). " (state(f)) } } }
             h2 { "Remarks on the whole record" }
-            (remark::list(at, "", Timestamp::EPOCH))
+            (remark::list(at, ""))
             (remark::form(signed, at, ""))
             (signatures(record))
             h2 { "What happened to it" }

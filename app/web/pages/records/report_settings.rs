@@ -9,18 +9,26 @@ use maud::{Markup, html};
 
 /// All rows with a value.
 #[must_use]
-pub fn all(at: &DriveAt) -> Markup {
+pub fn all(at: &DriveAt, whole: bool) -> Markup {
     let used: Vec<Row> = rows::of(at, "*").into_iter().filter(|r| r.any(at)).collect();
     let since = at.drive.record.as_ref().and_then(changed::since);
+    let differing = used.iter().filter(|r| r.differs(at)).count();
+    let touched = used.iter().any(|r| is_changed(at, r, since));
     html! {
         section #settings {
-            h2 { "Parameter record" }
-            @if used.is_empty() { p.quiet { "Nothing entered." } }
-            @else {
-                div.scroll {
-                    table.list.report-table.settings {
-                        thead { tr { th { "function" } @for c in ParameterColumn::ALL { th { (c.words()) } } th { "as left recorded" } } }
-                        tbody { @for row in &used { (one(at, row, since)) } }
+            details.report-fold open[whole || touched] {
+                summary {
+                    h2 { "Parameter record" }
+                    span.quiet { (used.len()) @if used.len() == 1 { " function" } @else { " functions" } }
+                    @if differing > 0 { b { (differing) " left otherwise than intended" } }
+                }
+                @if used.is_empty() { p.quiet { "Nothing entered." } }
+                @else {
+                    div.scroll {
+                        table.list.report-table.settings {
+                            thead { tr { th { "function" } @for c in ParameterColumn::ALL { th { (c.words()) } } th { "as left recorded" } } }
+                            tbody { @for row in &used { (one(at, row, since)) } }
+                        }
                     }
                 }
             }
@@ -28,13 +36,14 @@ pub fn all(at: &DriveAt) -> Markup {
     }
 }
 
+fn is_changed(at: &DriveAt, row: &Row, since: Option<u64>) -> bool {
+    let slots = ParameterColumn::ALL.into_iter().filter_map(|c| row.slot(at, c));
+    slots.flat_map(|s| s.standing()).any(|r| changed::is_after(r, since))
+}
+
 fn one(at: &DriveAt, row: &Row, since: Option<u64>) -> Markup {
     let left = row.slot(at, ParameterColumn::AsLeft).and_then(|s| s.current());
-    let changed = ParameterColumn::ALL
-        .into_iter()
-        .filter_map(|c| row.slot(at, c))
-        .flat_map(|s| s.standing())
-        .any(|r| changed::is_after(r, since));
+    let changed = is_changed(at, row, since);
     html! {
         tr.differs[row.differs(at)].changed[changed] {
             td data-label="function" { b { (row.label) } @if changed { " " span.mark-changed { "changed" } } }

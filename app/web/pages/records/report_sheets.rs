@@ -1,31 +1,46 @@
 //! The sheets in the report: every value with who and when, then the checks of the nameplates.
 
 use super::changed;
-use crate::components::verdict_panels_to_review;
+use super::report_step::Shown;
+use crate::components::{counts, verdict_panels_to_review};
 use crate::extract::DriveAt;
 use crate::pages::steps::sheet::shown;
+use crate::verdicts;
 use commissioning::Typed;
-use commissioning::judge::Judged;
+use commissioning::judge::{Counts, Judged};
 use commissioning::plant::{FieldKind, Place, Sheet, Slot, fields};
+use engineering::Verdict;
 use maud::{Markup, html};
 
 /// Site, supply and every sheet of the drive.
 #[must_use]
-pub fn all(at: &DriveAt, judged: &[Judged], in_full: bool) -> Markup {
-    let own: Vec<Judged> = judged.iter().filter(|j| j.step.is_empty()).cloned().collect();
+pub fn all(at: &DriveAt, parts: Shown<'_>) -> Markup {
+    let own: Vec<Judged> = parts.judged.iter().filter(|j| j.step.is_empty()).cloned().collect();
     let since = at.drive.record.as_ref().and_then(changed::since);
+    let sheets: Vec<(Sheet, Rows<'_>)> = Sheet::ALL.into_iter().map(|s| (s, rows(at, s))).collect();
+    let values: usize = sheets.iter().map(|(_, rows)| rows.len()).sum();
+    let outside = own.iter().any(|j| j.outcome.verdict == Verdict::Outside);
+    let touched = sheets.iter().flat_map(|(_, rows)| rows).any(|(_, s)| is_changed(s, since));
     html! {
         section #plates {
-            h2 { "Sheets" }
-            @for sheet in Sheet::ALL {
-                @let of_site = at.site.fields.iter().filter(|(p, _)| p.sheet == sheet);
-                @let of_drive = at.drive.fields.iter().filter(|(p, _)| p.sheet == sheet);
-                @let rows: Vec<(&Place, &Slot<Option<Typed>>)> = of_site.chain(of_drive).filter(|(_, s)| !s.standing().is_empty()).collect();
-                @if !rows.is_empty() { (sheet_table(sheet, &rows, since)) }
+            details.report-fold open[parts.whole || outside || touched] {
+                summary { h2 { "Sheets" } span.quiet { (values) @if values == 1 { " value" } @else { " values" } } (counts(&verdicts::numbers(&Counts::of(&own)))) }
+                @for (sheet, rows) in &sheets { @if !rows.is_empty() { (sheet_table(*sheet, rows, since)) } }
+                @if !own.is_empty() { h3 { "Nameplates against each other" } (verdict_panels_to_review(&own, parts.in_full)) }
             }
-            @if !own.is_empty() { h3 { "Nameplates against each other" } (verdict_panels_to_review(&own, in_full)) }
         }
     }
+}
+
+type Rows<'a> = Vec<(&'a Place, &'a Slot<Option<Typed>>)>;
+
+fn rows(at: &DriveAt, sheet: Sheet) -> Rows<'_> {
+    let all = at.site.fields.iter().chain(&at.drive.fields);
+    all.filter(|(p, s)| p.sheet == sheet && !s.standing().is_empty()).collect()
+}
+
+fn is_changed(slot: &Slot<Option<Typed>>, since: Option<u64>) -> bool {
+    slot.standing().iter().any(|r| changed::is_after(r, since))
 }
 
 fn sheet_table(sheet: Sheet, rows: &[(&Place, &Slot<Option<Typed>>)], since: Option<u64>) -> Markup {
@@ -45,7 +60,7 @@ fn row(place: &Place, slot: &Slot<Option<Typed>>, since: Option<u64>) -> Markup 
     let label = field.map_or(place.field.as_str(), |f| f.label);
     let kind = field.map_or(FieldKind::Text(0), |f| f.kind);
     let words = |value: &Option<Typed>| value.as_ref().map_or_else(|| "empty".to_owned(), |v| shown(kind, v));
-    let changed = slot.standing().iter().any(|r| changed::is_after(r, since));
+    let changed = is_changed(slot, since);
     html! {
         tr.changed[changed] {
             td data-label="field" { (label) @if fields::in_columns(place.sheet).iter().any(|f| f.key == place.field) { ", column " (place.column + 1) } }

@@ -1,18 +1,21 @@
 //! The phases and steps of the report: values with who, when, instrument; earlier ones struck through; verdicts with their working.
 
 use super::{changed, remark};
-use crate::components::verdict_panels_to_review;
+use crate::clock_words::moment;
+use crate::components::{counts, verdict_panels_to_review};
 use crate::extract::DriveAt;
 use crate::links;
 use crate::pages::steps::at::{items, places};
 use crate::pages::steps::inputs::words;
+use crate::pages::steps::notices::once_in_words;
+use crate::verdicts;
 use crate::visitor::Signed;
-use commissioning::Timestamp;
 use commissioning::agenda::{PhaseAgenda, StepAgenda, StepState};
-use commissioning::judge::Judged;
+use commissioning::judge::{Counts, Judged};
 use commissioning::plant::{Recorded, Slot};
 use commissioning::procedure::{Item, Step};
 use commissioning::record::{Entry, Record};
+use engineering::Verdict;
 use maud::{Markup, html};
 
 /// What the report is made from, and how.
@@ -22,8 +25,8 @@ pub struct Shown<'a> {
     pub judged: &'a [Judged],
     /// Whether the working of all of them lies open.
     pub in_full: bool,
-    /// Now.
-    pub now: Timestamp,
+    /// Whether every part lies open, to be read through or printed.
+    pub whole: bool,
 }
 
 /// A phase with its hold point and steps.
@@ -40,9 +43,42 @@ pub fn phase(signed: &Signed, at: &DriveAt, phase: &PhaseAgenda, shown: Shown<'_
                     }
                 }
             }
-            h2 { (phase.title) }
-            @for step in &phase.steps { @if let Some((_, described)) = at.procedure.step(&step.id) { (one(signed, at, step, described, shown)) } }
+            details.report-fold open[shown.whole || asks_for_eyes(at, phase, shown)] {
+                summary { h2 { (phase.title) } (in_short(at, phase, shown)) }
+                @for step in &phase.steps { @if let Some((_, described)) = at.procedure.step(&step.id) { (one(signed, at, step, described, shown)) } }
+            }
         }
+    }
+}
+
+fn of_phase<'a>(phase: &'a PhaseAgenda, shown: Shown<'a>) -> impl Iterator<Item = &'a Judged> {
+    shown.judged.iter().filter(|j| phase.steps.iter().any(|s| s.id == j.step))
+}
+
+/// Something is outside, begun and not finished, or changed since the record was sent back.
+fn asks_for_eyes(at: &DriveAt, phase: &PhaseAgenda, shown: Shown<'_>) -> bool {
+    let outside = of_phase(phase, shown).any(|j| j.outcome.verdict == Verdict::Outside);
+    let begun = phase.steps.iter().any(|s| s.state != StepState::Open);
+    outside || (begun && phase.left() > 0) || changed_in(at, phase) > 0
+}
+
+fn changed_in(at: &DriveAt, phase: &PhaseAgenda) -> usize {
+    let changes = changed::list(&at.drive, &at.procedure);
+    changes.iter().filter(|(step, _)| phase.steps.iter().any(|s| s.id == *step)).count()
+}
+
+/// A phase on one line: steps, verdicts, open findings, changes.
+fn in_short(at: &DriveAt, phase: &PhaseAgenda, shown: Shown<'_>) -> Markup {
+    let own: Vec<Judged> = of_phase(phase, shown).cloned().collect();
+    let here = |step: Option<&str>| phase.steps.iter().any(|s| Some(s.id.as_str()) == step);
+    let findings = at.drive.record.iter().flat_map(|r| r.findings.values());
+    let open = findings.filter(|f| f.is_open() && here(f.step.as_deref())).count();
+    let changed = changed_in(at, phase);
+    html! {
+        span.quiet { (phase.settled()) " of " (phase.steps.len()) " steps settled" }
+        (counts(&verdicts::numbers(&Counts::of(&own))))
+        @if open > 0 { b { (open) @if open == 1 { " open finding" } @else { " open findings" } } }
+        @if changed > 0 { span.mark-changed { (changed) " changed" } }
     }
 }
 
@@ -56,7 +92,7 @@ fn one(signed: &Signed, at: &DriveAt, step: &StepAgenda, described: &Step, shown
             @if let Some(sheet) = crate::pages::steps::sheet::of(described) { p.quiet { a href="#plates" { (sheet.words()) } ", above" } }
             @if described.parameters.is_some() { p.quiet { a href="#settings" { "Parameter record" } ", below" } }
             (verdict_panels_to_review(&own, shown.in_full))
-            (remark::list(at, &step.id, shown.now))
+            (remark::list(at, &step.id))
             (remark::form(signed, at, &step.id))
         }
     }
@@ -87,7 +123,8 @@ fn values(at: &DriveAt, record: &Record, step: &Step, since: Option<u64>) -> Mar
                 }
             }
         }
-        @if let Some(settled) = record.otherwise.get(&step.id) { p.quiet { "settled so " (settled.received.shown()) " UTC by " (settled.by_name) } }
+        @if let Some(settled) = record.otherwise.get(&step.id) { p.quiet { "settled so " (moment(settled.received)) " by " (settled.by_name) } }
+        @for once in record.once_otherwise.iter().filter(|o| o.step == step.id) { p.quiet.once { (once_in_words(once)) } }
     }
 }
 

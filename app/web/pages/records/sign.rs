@@ -25,7 +25,7 @@ pub async fn show(signed: Signed, at: DriveAt) -> Result<Markup, PageError> {
     }
     let agenda = agenda::of(&at.view());
     if agenda.complete() {
-        return Ok(signature::page(&signed, &at, Meaning::Performed, &html! {}, None, &[]));
+        return Ok(signature::page(&signed, &at, Meaning::Performed, None, &[]));
     }
     Ok(unfinished(&signed, &at, &agenda))
 }

@@ -24,14 +24,7 @@ pub fn shortened(digest: &str) -> String {
 
 /// The form with what is signed.
 #[must_use]
-pub fn page(
-    signed: &Signed,
-    at: &DriveAt,
-    meaning: Meaning,
-    before: &Markup,
-    posted: Option<&Posted>,
-    errors: &[FieldError],
-) -> Markup {
+pub fn page(signed: &Signed, at: &DriveAt, meaning: Meaning, posted: Option<&Posted>, errors: &[FieldError]) -> Markup {
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
     // What was shown is what is signed: a form that came back keeps its digest, and the domain says when it is old.
     let digest =
@@ -47,7 +40,7 @@ pub fn page(
         .hint("Asked at every signature.")
         .sent_back(&none, errors);
     let body = html! {
-        (before)
+        @if meaning == Meaning::Performed { (crate::unanswered::notice(at)) }
         (closing::summary(at, meaning, &digest, &signed.person.name))
         (form(&signed.visitor, &action, html! {
             input type="hidden" name="digest" value=(digest);
@@ -83,7 +76,7 @@ pub async fn put(
             Err(other) => return Err(other),
         },
     };
-    Ok((StatusCode::UNPROCESSABLE_ENTITY, page(signed, at, meaning, &html! {}, Some(posted), &errors)).into_response())
+    Ok((StatusCode::UNPROCESSABLE_ENTITY, page(signed, at, meaning, Some(posted), &errors)).into_response())
 }
 
 async fn wrong(app: &App, signed: &Signed, posted: &Posted) -> Result<Option<FieldError>, PageError> {

@@ -1,10 +1,11 @@
 //! The page around a drive's sheet: tabs, form, verdicts beside it.
 
-use crate::components::{Page, live_form, main_button, verdict_panels};
+use crate::components::{Page, live_form, main_button, saved, verdict_panels};
 use crate::extract::DriveAt;
+use crate::links;
 use crate::sheet_form::{self, Back};
+use crate::sheet_words;
 use crate::visitor::Signed;
-use crate::{App, links};
 use commissioning::judge::{self, Judged, View};
 use commissioning::people::Role;
 use commissioning::plant::Sheet;
@@ -14,29 +15,32 @@ use maud::{Markup, html};
 pub const SHEETS: [Sheet; 7] =
     [Sheet::Drive, Sheet::DrivePlate, Sheet::Motor, Sheet::Cable, Sheet::Load, Sheet::Supply, Sheet::Further];
 
-/// The page of a sheet; `asked` is how many rating columns were asked for.
+/// The page of a sheet; `asked` is how many rating columns were asked for, `told` what was just kept.
 #[must_use]
-pub fn page(app: &App, signed: &Signed, at: &DriveAt, sheet: Sheet, asked: u8, back: &Back<'_>) -> Markup {
+pub fn page(signed: &Signed, at: &DriveAt, sheet: Sheet, asked: u8, back: &Back<'_>, told: Option<&str>) -> Markup {
     let (site, drive) = (at.site.tag.as_str(), at.drive.tag.as_str());
     // Once the record is begun its plates are part of what a supervisor reviews.
     let may = signed.visitor.is_any(&[Role::Engineer])
         || (at.drive.record.is_none() && signed.visitor.is_any(&[Role::Supervisor]));
     let columns = sheet_form::columns(sheet, &at.drive.fields, back.posted, asked);
     let action = links::sheet(site, drive, sheet);
+    let away = html! { a.b href=(links::drive(site, drive)) { "Back to the drive" } };
     let inputs = html! {
-        fieldset.plain disabled[!may] {
-            (sheet_form::inputs(sheet, columns, &at.drive.fields, back, app.now()))
-            @if columns < sheet.columns() && may { p { a.b href=(format!("{action}?columns={}", columns + 1)) { "Show one more rating column" } } }
-            (sheet_form::reason(back))
-        }
-        div.row.foot { @if may { (main_button("Record")) } a.b href=(links::drive(site, drive)) { "Back to the drive" } }
+        (sheet_form::inputs(sheet, columns, &at.drive.fields, back))
+        @if columns < sheet.columns() { p { a.b href=(format!("{action}?columns={}", columns + 1)) { "Show one more rating column" } } }
+        (sheet_form::reason(back))
+        div.row.foot { (main_button("Record")) (away) }
     };
     let body = html! {
         (tabs(at, sheet))
         h1 { (sheet.words()) }
+        @if let Some(told) = told { (saved(told)) }
         (sheet_form::summary(back.errors))
         div.split {
-            section { (live_form(&signed.visitor, &action, &links::sheet_live(site, drive, sheet), inputs)) }
+            section {
+                @if may { (live_form(&signed.visitor, &action, &links::sheet_live(site, drive, sheet), inputs)) }
+                @else { (sheet_words::all(sheet, columns, &at.drive.fields)) div.row { (away) } }
+            }
             aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (verdicts(&at.view())) } }
         }
     };

@@ -11,7 +11,7 @@ use axum::http::StatusCode;
 use axum::response::{IntoResponse, Redirect, Response};
 use commissioning::journal::Deed;
 
-/// Records it and shows the sheet again, with its verdicts.
+/// Records it and shows the sheet again, with what was kept and its verdicts.
 ///
 /// # Errors
 /// When the store refuses otherwise than at a field.
@@ -27,16 +27,17 @@ pub async fn keep(
     }
     let action = links::sheet(&at.site.tag, &at.drive.tag, sheet);
     let changes = sheet_form::changes(sheet, &at.drive.fields, &posted);
+    let told = links::saved(&action, changes.len());
     if changes.is_empty() {
-        return Ok(Redirect::to(&action).into_response());
+        return Ok(Redirect::to(&told).into_response());
     }
     let deed =
         Deed::SetDriveFields { drive: at.drive.id, sheet, changes, reason: posted.text("reason").trim().to_owned() };
     match app.perform(&signed, posted.act()?, deed).await {
-        Ok(_) => Ok(Redirect::to(&action).into_response()),
+        Ok(_) => Ok(Redirect::to(&told).into_response()),
         Err(PageError::Fields { errors }) => {
             let back = Back { posted: Some(&posted), errors: &errors };
-            Ok((StatusCode::UNPROCESSABLE_ENTITY, page(&app, &signed, &at, sheet, 1, &back)).into_response())
+            Ok((StatusCode::UNPROCESSABLE_ENTITY, page(&signed, &at, sheet, 1, &back, None)).into_response())
         }
         Err(PageError::Stale { conflicts }) => {
             Ok(conflict_page::answer(&signed.visitor, &action, Some(at.plate()), &posted, &conflicts))

@@ -4,8 +4,8 @@ use super::frame::{SHEETS, page};
 use crate::extract::{DriveAt, SheetAt};
 use crate::sheet_form::Back;
 use crate::visitor::Signed;
-use crate::{App, PageError};
-use axum::extract::{Query, State};
+use crate::{PageError, sheet_form};
+use axum::extract::Query;
 use maud::Markup;
 use serde::Deserialize;
 
@@ -14,6 +14,9 @@ use serde::Deserialize;
 pub struct Asked {
     #[serde(default)]
     columns: String,
+    /// How many fields were just kept.
+    #[serde(default)]
+    saved: String,
 }
 
 /// Shows it.
@@ -21,7 +24,6 @@ pub struct Asked {
 /// # Errors
 /// When the sheet is not a drive's.
 pub async fn show(
-    State(app): State<App>,
     signed: Signed,
     at: DriveAt,
     SheetAt(sheet): SheetAt,
@@ -30,5 +32,6 @@ pub async fn show(
     if !SHEETS.contains(&sheet) {
         return Err(PageError::not_found("This page"));
     }
-    Ok(page(&app, &signed, &at, sheet, asked.columns.parse().unwrap_or(1), &Back::default()))
+    let told = sheet_form::saved_words(sheet.words(), "field", &asked.saved);
+    Ok(page(&signed, &at, sheet, asked.columns.parse().unwrap_or(1), &Back::default(), told.as_deref()))
 }

@@ -7,6 +7,7 @@ use crate::{App, PageError, links, verdicts};
 use axum::extract::{Query, State};
 use commissioning::people::Role;
 use commissioning::plant::{Sheet, Site};
+use engineering::Verdict;
 use maud::{Markup, html};
 use serde::Deserialize;
 use store::{BoardFilter, BoardRow, PhaseCell, StatusKey};
@@ -47,7 +48,7 @@ pub async fn show(
             (link_button(&links::site_sheet(&site.tag, Sheet::Supply), "Supply"))
         }
         (search(&site, &text, status))
-        @if board.rows.is_empty() && filtered { (empty("No drive fits", "No drive of this site has this in its tag or name and stands there.", html! { a.b href=(links::site(&site.tag)) { "Show all drives" } })) }
+        @if board.rows.is_empty() && filtered { (empty("No drive fits", "No drive of this site has this in its tag or name and that status.", html! { a.b href=(links::site(&site.tag)) { "Show all drives" } })) }
         @if board.rows.is_empty() && !filtered { (empty("No drive yet", "Add the drives of this site; each gets its nameplates, its record and its package.", html! { @if keeper { (main_link(&links::new_drive(&site.tag), "Add a drive")) } })) }
         @if !board.rows.is_empty() { p.quiet { (board.total) @if board.total == 1 { " drive" } @else { " drives" } } (table(&site, &board.rows)) }
         (pager(board.page, board.pages, |n| links::board(&site.tag, &text, key, n)))
@@ -67,9 +68,9 @@ fn search(site: &Site, text: &str, status: Option<StatusKey>) -> Markup {
         form.board-filter role="search" method="get" action=(links::site(&site.tag)) {
             div.field { label for=(input_id("text")) { "Tag or name" } input.input id=(input_id("text")) type="search" name="text" value=(text) maxlength="100" autocomplete="off"; }
             div.field {
-                label for=(input_id("status")) { "Stands" }
+                label for=(input_id("status")) { "Status" }
                 select.input id=(input_id("status")) name="status" {
-                    option value="" { "anywhere" }
+                    option value="" { "any" }
                     @for one in StatusKey::ALL { option value=(one.key()) selected[status == Some(one)] { (one.words()) } }
                 }
             }
@@ -83,7 +84,7 @@ fn table(site: &Site, rows: &[BoardRow]) -> Markup {
     html! {
         div.scroll {
             table.board {
-                thead { tr { th scope="col" { "drive" } th scope="col" { "stands" } @for cell in heads { th.phase scope="col" { span { (cell.short) } } } th scope="col" { "verdicts" } th scope="col" { "findings" } } }
+                thead { tr { th scope="col" { "drive" } th scope="col" { "status" } @for cell in heads { th.phase scope="col" { span { (cell.short) } } } th scope="col" { "verdicts" } th scope="col" { "findings" } } }
                 tbody { @for row in rows { (one(site, row)) } }
             }
         }
@@ -94,12 +95,19 @@ fn one(site: &Site, row: &BoardRow) -> Markup {
     html! {
         tr {
             th scope="row" { (small_plate(&row.tag, &links::drive(&site.tag, &row.tag))) span.name { (row.name) } }
-            td data-label="stands" { (row.status.words()) @if row.revision > 1 { ", revision " (row.revision) } }
+            td data-label="status" { (row.status.words()) @if row.revision > 1 { ", revision " (row.revision) } }
             @for cell in &row.phases { (phase(site, row, cell)) }
-            td data-label="verdicts" { (counts(&verdicts::numbers(&row.counts)[..3])) }
+            td.verdicts-cell data-label="verdicts" { (judged(row)) }
             td data-label="findings" { @if row.open_findings > 0 { b { (row.open_findings) " open" } } @else { span.quiet { "none" } } }
         }
     }
+}
+
+/// Every verdict counted, figures apart: they have none.
+fn judged(row: &BoardRow) -> Markup {
+    let counted = verdicts::numbers(&row.counts);
+    let judged: Vec<_> = counted.into_iter().filter(|(v, n)| *v != Verdict::Figure && *n > 0).collect();
+    html! { @if judged.is_empty() { span.quiet { "none yet" } } @else { (counts(&judged)) } }
 }
 
 /// One cell: full when settled, part-filled while begun, a double edge where its hold point waits.

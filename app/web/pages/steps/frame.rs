@@ -2,12 +2,13 @@
 
 use super::at::{StepAt, items, may_record};
 use super::inputs::{self, Inputs};
-use super::{footer, notices, sheet};
+use super::{footer, notices, sheet, stay};
 use crate::components::{Page, caution, check_title, notice, seal, verdict_panels};
 use crate::pages::parameters::inputs as parameter_inputs;
+use crate::pages::parameters::list;
 use crate::sheet_form::{self, Back};
 use crate::visitor::Signed;
-use crate::{App, PageError, links, progress, verdicts};
+use crate::{PageError, links, progress, verdicts};
 use commissioning::agenda::{self, Agenda};
 use commissioning::judge::Judged;
 use commissioning::procedure::{ItemKind, Phase, Step};
@@ -17,17 +18,24 @@ use maud::{Markup, html};
 ///
 /// # Errors
 /// Never for a step that is there.
-pub fn page(app: &App, signed: &Signed, at: &StepAt, back: &Back<'_>, told: Option<&str>) -> Result<Markup, PageError> {
+pub fn page(
+    signed: &Signed,
+    at: &StepAt,
+    back: &Back<'_>,
+    told: Option<&str>,
+    stays: bool,
+) -> Result<Markup, PageError> {
     let (phase, step) = at.step()?;
     let agenda = agenda::of(&at.at.view());
     let judged = verdicts::at_step(&at.at.view(), step);
     let may = may_record(signed, &at.at) && agenda.step(&at.id).is_some();
-    let inputs = Inputs { signed, at, step, back: *back, now: app.now() };
+    let inputs = Inputs { signed, at, step, back: *back, fixed: !may, said: false };
     let has_form = !items(&at.at, step).is_empty() || step.parameters.is_some();
     let wide = !step.rows.is_empty() || step.parameters.is_some();
     let body = html! {
         @if let Some(told) = told { (notice(told)) (sheet_form::faults(back.errors, "What you typed is still here.")) }
         @else { (sheet_form::summary(back.errors)) }
+        @if stays && may { (stay::outside(at, &agenda, &judged)) }
         div.step.split[!judged.is_empty() && !wide].wide[wide] {
             section {
                 (heading(at, phase, step, &agenda))
@@ -35,7 +43,8 @@ pub fn page(app: &App, signed: &Signed, at: &StepAt, back: &Back<'_>, told: Opti
                 @for words in &step.cautions { (caution(words)) }
                 (limits(&judged))
                 @if let Some(of) = sheet::of(step) { (sheet::summary(at, of, agenda.step(&at.id).map_or(&[][..], |(_, s)| &s.missing))) }
-                @if has_form { (form(&inputs, may)) }
+                @if has_form && may { (form(&inputs)) }
+                @if has_form && !may { (as_words(&inputs)) }
                 @if !step.why.is_empty() { details.why { summary { "Why and how" } p { (step.why) } } }
             }
             @if !judged.is_empty() { aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (panels(&judged)) } } }
@@ -63,7 +72,7 @@ fn heading(at: &StepAt, phase: &Phase, step: &Step, agenda: &Agenda) -> Markup {
 /// What will be asked of the reading, before it is taken.
 fn limits(judged: &[Judged]) -> Markup {
     let known: Vec<&Judged> = judged.iter().filter(|j| !j.outcome.limit.is_empty()).collect();
-    let mut said: Vec<(&str, &str)> = Vec::new();
+    let mut said: Vec<(&str, String)> = Vec::new();
     for j in known {
         if !said.iter().any(|(limit, _)| *limit == j.outcome.limit) {
             said.push((j.outcome.limit.as_str(), check_title(&j.outcome.check)));
@@ -72,17 +81,25 @@ fn limits(judged: &[Judged]) -> Markup {
     html! { @if !said.is_empty() { dl.limits { @for (limit, check) in said { div { dt { (check) } dd { (limit) } } } } } }
 }
 
-fn form(i: &Inputs<'_>, may: bool) -> Markup {
+/// What stands at a step, for somebody who may not record here.
+fn as_words(i: &Inputs<'_>) -> Markup {
+    html! {
+        div.as-words {
+            @if let Some(group) = &i.step.parameters { (list::values(&i.at.at, group)) }
+            (inputs::all(i))
+        }
+    }
+}
+
+fn form(i: &Inputs<'_>) -> Markup {
     let (site, drive) = (i.at.at.site.tag.as_str(), i.at.at.drive.tag.as_str());
     let pictures = i.step.items.iter().any(|item| matches!(item.kind, ItemKind::Photo));
     html! {
         form method="post" action=(links::step(site, drive, &i.at.id)) id="step" enctype=[pictures.then_some("multipart/form-data")] data-judge=(links::step_live(site, drive, &i.at.id)) {
             (seal(&i.signed.visitor))
-            fieldset.plain disabled[!may] {
-                @if let Some(group) = &i.step.parameters { (parameter_inputs::group(&i.at.at, group, &i.back, i.now)) }
-                (inputs::all(i))
-                @if may { (sheet_form::reason(&i.back)) }
-            }
+            @if let Some(group) = &i.step.parameters { (parameter_inputs::group(&i.at.at, group, &i.back)) }
+            (inputs::all(i))
+            (sheet_form::reason(&i.back))
         }
     }
 }

@@ -2,13 +2,15 @@
 
 use super::at::{StepAt, asked_again, items, name, places};
 use super::{instruments, picture, tick};
-use crate::components::{FieldInput, InputKind, field, state_line};
+use crate::clock_words::moment;
+use crate::components::{FieldInput, InputKind, earlier_values, field, state_line};
+use crate::links;
 use crate::sheet_form::Back;
 use crate::visitor::Signed;
-use commissioning::plant::Recorded;
+use commissioning::FieldError;
+use commissioning::plant::{Recorded, Slot};
 use commissioning::procedure::{Item, ItemKind, Step};
 use commissioning::record::{Entry, EntryPlace};
-use commissioning::{FieldError, Timestamp};
 use maud::{Markup, html};
 
 /// What the inputs of a step are made from.
@@ -22,8 +24,10 @@ pub struct Inputs<'a> {
     pub step: &'a Step,
     /// A form that came back.
     pub back: Back<'a>,
-    /// Now.
-    pub now: Timestamp,
+    /// Shown as words to somebody who may not record here.
+    pub fixed: bool,
+    /// Who and when is said once above, for all of them.
+    pub said: bool,
 }
 
 /// All inputs.
@@ -31,8 +35,16 @@ pub struct Inputs<'a> {
 pub fn all(i: &Inputs<'_>) -> Markup {
     let items = items(&i.at.at, i.step);
     let alone = |item: &Item| instruments::kind(item).is_some_and(|k| !instruments::shared(i.at, i.step).contains(&k));
-    let shared = instruments::shared_selects(i.signed, i.at, i.step, i.back.posted);
+    let shared = if i.fixed {
+        html! {}
+    } else {
+        instruments::shared_selects(i.signed, i.at, i.step, i.back.posted)
+    };
+    let everywhere: Vec<EntryPlace> = items.iter().flat_map(|item| places(i.step, item)).collect();
+    let line = same_line(i, &everywhere);
+    let i = &Inputs { said: line.is_some(), ..*i };
     html! {
+        @if let Some(line) = &line { p.state.for-all { (line) } }
         @if i.step.rows.is_empty() {
             div.items {
                 @for side_by_side in groups(&items, &alone) {
@@ -40,9 +52,9 @@ pub fn all(i: &Inputs<'_>) -> Markup {
                         [item] => {
                             @let place = EntryPlace::new(item.key.clone());
                             (one(i, item, &place, is_main(&items, item)))
-                            @if alone(item) { (own_instrument(i, item, &place)) }
+                            @if alone(item) && !i.fixed { (own_instrument(i, item, &place)) }
                         }
-                        several => div.cells { @for item in several { (one(i, item, &EntryPlace::new(item.key.clone()), false)) } }
+                        several => (in_a_row(i, several)),
                     }
                 }
             }
@@ -50,17 +62,42 @@ pub fn all(i: &Inputs<'_>) -> Markup {
         } @else {
             (shared)
             @for (n, row) in i.step.rows.iter().enumerate() {
-                fieldset.table-row {
-                    legend { (row) }
-                    div.cells {
-                        @for item in &items {
-                            @for place in places(i.step, item).filter(|p| usize::from(p.row) == n) { (one(i, item, &place, false)) }
-                        }
-                    }
-                }
+                @let cells: Vec<(&Item, EntryPlace)> = items.iter().flat_map(|item| places(i.step, item).filter(|p| usize::from(p.row) == n).map(|p| (*item, p))).collect();
+                fieldset.table-row { legend { (row) } (cells_of(i, &cells)) }
             }
         }
     }
+}
+
+fn in_a_row(i: &Inputs<'_>, items: &[&Item]) -> Markup {
+    let cells: Vec<(&Item, EntryPlace)> = items.iter().map(|item| (*item, EntryPlace::new(item.key.clone()))).collect();
+    cells_of(i, &cells)
+}
+
+/// Cells beside each other, with who and when once below them where that is the same for all.
+fn cells_of(i: &Inputs<'_>, cells: &[(&Item, EntryPlace)]) -> Markup {
+    let line = if i.said { None } else { same_line(i, &cells.iter().map(|(_, p)| p.clone()).collect::<Vec<_>>()) };
+    let within = Inputs { said: i.said || line.is_some(), ..*i };
+    html! {
+        div.cells { @for (item, place) in cells { (one(&within, item, place, false)) } }
+        @if let Some(line) = line { p.state.for-all { (line) } }
+    }
+}
+
+fn slot<'a>(i: &Inputs<'a>, place: &EntryPlace) -> Option<&'a Slot<Entry>> {
+    i.at.at.drive.record.as_ref().and_then(|r| r.entries.get(place))
+}
+
+/// Who recorded what stands at several places and when, where that is the same for all of them.
+fn same_line(i: &Inputs<'_>, places: &[EntryPlace]) -> Option<String> {
+    let filled: Vec<(&EntryPlace, &Slot<Entry>)> =
+        places.iter().filter_map(|p| Some((p, slot(i, p)?))).filter(|(_, s)| !s.standing().is_empty()).collect();
+    if filled.len() < 2 || filled.iter().any(|(p, s)| s.needs_choice() || asked_again(&i.at.at, i.step, p)) {
+        return None;
+    }
+    let mut lines = filled.iter().filter_map(|(_, s)| s.current()).map(|r| (moment(r.received), r.by_name.as_str()));
+    let first = lines.next()?;
+    lines.all(|line| line == first).then(|| format!("recorded {} · {}", first.0, first.1))
 }
 
 /// Readings that follow each other and need no select of their own stand side by side.
@@ -98,6 +135,9 @@ fn own_instrument(i: &Inputs<'_>, item: &Item, place: &EntryPlace) -> Markup {
 
 /// One item at one place.
 fn one(i: &Inputs<'_>, item: &Item, place: &EntryPlace, big: bool) -> Markup {
+    if i.fixed {
+        return fixed(i, item, place);
+    }
     let kind = match &item.kind {
         ItemKind::Reading { quantity, .. } => InputKind::Quantity(*quantity),
         ItemKind::Choice { options } => {
@@ -112,6 +152,22 @@ fn one(i: &Inputs<'_>, item: &Item, place: &EntryPlace, big: bool) -> Markup {
     field(&input)
 }
 
+/// What stands, in words.
+fn fixed(i: &Inputs<'_>, item: &Item, place: &EntryPlace) -> Markup {
+    let entry = slot(i, place).and_then(|s| s.current()).map(|r| &r.value);
+    let mut input = filled(i, item, place, InputKind::Line(0)).fixed();
+    input.text = entry.map(|e| words(item, e)).unwrap_or_default();
+    html! {
+        (field(&input))
+        @if let Some(photo) = entry.and_then(|e| e.photo.as_ref()) {
+            div.picture { figure {
+                img src=(links::photo(&photo.hash)) alt=(format!("Picture for “{}”", item.label)) loading="lazy";
+                figcaption { a href=(links::photo_original(&photo.hash)) { "original" } }
+            } }
+        }
+    }
+}
+
 /// The field with what stands or what was sent.
 pub(super) fn filled(i: &Inputs<'_>, item: &Item, place: &EntryPlace, kind: InputKind) -> FieldInput {
     let mut input = FieldInput::new(name(place), item.label.clone(), kind).hint(&item.hint);
@@ -119,7 +175,7 @@ pub(super) fn filled(i: &Inputs<'_>, item: &Item, place: &EntryPlace, kind: Inpu
     if let ItemKind::Reading { quantity, unit, .. } = &item.kind {
         input.unit = unit.clone().unwrap_or_else(|| quantity.usual().symbol.to_owned());
     }
-    if let Some(slot) = i.at.at.drive.record.as_ref().and_then(|r| r.entries.get(place)) {
+    if let Some(slot) = slot(i, place) {
         input.seen = slot.seen();
         let again = asked_again(&i.at.at, i.step, place);
         if let (Some(entry), false) = (slot.current(), again) {
@@ -128,16 +184,21 @@ pub(super) fn filled(i: &Inputs<'_>, item: &Item, place: &EntryPlace, kind: Inpu
                 input.unit.clone_from(unit);
             }
         }
-        let line = state_line(slot.standing(), slot.earlier(), i.now, |e| words(item, e));
-        input.state = Some(html! {
-            @if again { strong { "asked again: " } @for r in slot.standing() { (words(item, &r.value)) " " } "· " }
-            (line)
-            @if let Some(entry) = slot.current() { (marks(entry)) }
-        });
+        input.state = Some(state(i, item, slot, again)).filter(|state| !state.0.trim().is_empty());
     }
     match i.back.posted {
         Some(posted) => input.sent_back(posted, i.back.errors),
         None => input,
+    }
+}
+
+/// The state line of a place; who and when is left out where one line says it for all.
+fn state(i: &Inputs<'_>, item: &Item, slot: &Slot<Entry>, again: bool) -> Markup {
+    html! {
+        @if again { strong { "asked again: " } @for r in slot.standing() { (words(item, &r.value)) " " } "· " }
+        @if i.said { (earlier_values(slot.earlier(), |e| words(item, e))) }
+        @else { (state_line(slot.standing(), slot.earlier(), |e| words(item, e))) }
+        @if let Some(entry) = slot.current() { (marks(entry)) }
     }
 }
 

@@ -2,12 +2,12 @@
 
 use super::at::StepAt;
 use super::sent::Sent;
-use super::{changes, frame};
+use super::{changes, frame, stay};
 use crate::pages::parameters;
 use crate::posted::Posted;
 use crate::sheet_form::Back;
 use crate::visitor::Signed;
-use crate::{App, PageError, conflict_page, links, progress};
+use crate::{App, PageError, conflict_page, links, progress, verdicts};
 use axum::extract::State;
 use axum::http::StatusCode;
 use axum::response::{IntoResponse, Redirect, Response};
@@ -31,7 +31,7 @@ pub async fn keep(State(app): State<App>, signed: Signed, at: StepAt, sent: Sent
         Err(PageError::Fields { errors }) => {
             let back = Back { posted: Some(&posted), errors: &errors };
             let told = settings_kept.then_some("The settings were recorded; what is listed below was not.");
-            Ok((StatusCode::UNPROCESSABLE_ENTITY, frame::page(&app, &signed, &at, &back, told)?).into_response())
+            Ok((StatusCode::UNPROCESSABLE_ENTITY, frame::page(&signed, &at, &back, told, false)?).into_response())
         }
         Err(PageError::Stale { conflicts }) => {
             let action = links::step(&at.at.site.tag, &at.at.drive.tag, &at.id);
@@ -102,16 +102,18 @@ fn tried(app: &App, signed: &Signed, at: &StepAt, acts: &[Act]) -> Result<(), Pa
     if wrong.is_empty() { Ok(()) } else { Err(PageError::Fields { errors: wrong }) }
 }
 
-/// Stays while something is missing here, and says what; goes on otherwise.
+/// Stays while something is missing here, or what was just recorded is outside, and says so; goes on otherwise.
 async fn onward(app: &App, at: &StepAt, anything: bool) -> Result<Response, PageError> {
     let fresh = at.again(app).await?;
     let agenda = agenda::of(&fresh.at.view());
     let (site, drive) = (at.at.site.tag.as_str(), at.at.drive.tag.as_str());
     let settled = agenda.step(&at.id).is_none_or(|(_, s)| s.state.is_settled());
-    let to = if settled {
-        progress::after(&agenda, &at.id).address(site, drive)
-    } else {
-        format!("{}?recorded={}", links::step(site, drive, &at.id), if anything { "partly" } else { "nothing" })
+    let (_, step) = fresh.step()?;
+    let outside = anything && stay::any_outside(&verdicts::at_step(&fresh.at.view(), step));
+    let to = match (settled, anything) {
+        (true, _) if !outside => progress::after(&agenda, &at.id).address(site, drive),
+        (_, true) => links::step_recorded(site, drive, &at.id, if settled { "whole" } else { "partly" }),
+        (_, false) => links::step_recorded(site, drive, &at.id, "nothing"),
     };
     Ok(Redirect::to(&to).into_response())
 }

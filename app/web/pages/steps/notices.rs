@@ -1,12 +1,13 @@
 //! What a step says before its fields: order, isolation, how it was settled, where the record stands.
 
 use super::at::StepAt;
-use crate::components::{button, form};
+use crate::clock_words::moment;
+use crate::components::{button, form, who_when};
 use crate::links;
 use crate::visitor::Signed;
 use commissioning::agenda::{Agenda, StepState};
 use commissioning::procedure::{IsolationAct, Step};
-use commissioning::record::Status;
+use commissioning::record::{OnceOtherwise, SettledOtherwise, Status};
 use maud::{Markup, html};
 
 /// All that hold here.
@@ -35,7 +36,35 @@ pub fn all(signed: &Signed, at: &StepAt, step: &Step, agenda: &Agenda, may: bool
                 (otherwise(signed, at, &now.state, may))
             }
         }
+        (once(once_at(at, &step.id)))
     }
+}
+
+/// How a step was settled otherwise before, and no longer is, oldest first.
+fn once_at<'a>(at: &'a StepAt, step: &str) -> Vec<&'a OnceOtherwise> {
+    at.at.drive.record.iter().flat_map(|r| &r.once_otherwise).filter(|o| o.step == step).collect()
+}
+
+fn once(earlier: Vec<&OnceOtherwise>) -> Markup {
+    html! {
+        @if !earlier.is_empty() {
+            details.earlier.once {
+                summary { "settled otherwise before: " (earlier.len()) }
+                ul { @for o in earlier { li { (once_in_words(o)) } } }
+            }
+        }
+    }
+}
+
+/// One of them: struck through, with who settled it so, and who took it back.
+#[must_use]
+pub fn once_in_words(o: &OnceOtherwise) -> Markup {
+    let (how, reason) = &o.settled.value;
+    let how = match how {
+        SettledOtherwise::NotApplicable => "does not apply",
+        SettledOtherwise::CouldNotBeDone => "could not be done",
+    };
+    html! { s { (how) ": " (reason) } " " (who_when(&o.settled)) "; taken back " (moment(o.ended.received)) " · " (o.ended.by_name) }
 }
 
 /// The first step that puts isolation in force.

@@ -2,10 +2,10 @@
 
 use super::at::StepAt;
 use super::frame::page;
+use crate::PageError;
 use crate::sheet_form::Back;
 use crate::visitor::Signed;
-use crate::{App, PageError};
-use axum::extract::{Query, State};
+use axum::extract::Query;
 use commissioning::agenda;
 use maud::Markup;
 use serde::Deserialize;
@@ -17,16 +17,11 @@ pub struct Asked {
     recorded: String,
 }
 
-/// Shows it; after a partial record it says what is still to be entered.
+/// Shows it; after a record that did not lead on it says what is still to be entered, and what is outside.
 ///
 /// # Errors
 /// Never for a step that is there.
-pub async fn show(
-    State(app): State<App>,
-    signed: Signed,
-    at: StepAt,
-    Query(asked): Query<Asked>,
-) -> Result<Markup, PageError> {
+pub async fn show(signed: Signed, at: StepAt, Query(asked): Query<Asked>) -> Result<Markup, PageError> {
     let agenda = agenda::of(&at.at.view());
     let missing = agenda.step(&at.id).map(|(_, s)| s.missing.join(", ")).filter(|m| !m.is_empty());
     let told = match (asked.recorded.as_str(), missing) {
@@ -35,5 +30,6 @@ pub async fn show(
         (_, Some(missing)) => Some(format!("Recorded. Still to be entered here: {missing}.")),
         (_, None) => Some("Recorded.".to_owned()),
     };
-    page(&app, &signed, &at, &Back::default(), told.as_deref())
+    let stays = told.is_some() && asked.recorded != "nothing";
+    page(&signed, &at, &Back::default(), told.as_deref(), stays)
 }
