@@ -61,15 +61,14 @@ impl Field {
                     return Ok(Some(typed));
                 }
                 let picked = kind.unit(typed.unit.as_deref().unwrap_or(usual)).unwrap_or(kind.usual());
-                let show = |n: f64| engineering::rounding::significant(picked.from_coherent(n), 4);
+                let with_unit = |number: &str| format!("{number} {}", picked.symbol).trim_end().to_owned();
+                let end = |n: f64| plain(&engineering::rounding::significant(picked.from_coherent(n), 4));
                 Err(format!(
-                    "{} {} cannot be: {} is between {} and {} {}. Check the figure and its unit.",
-                    crate::typed::shorten(text),
-                    picked.symbol,
+                    "{} cannot be: {} is between {} and {}. Check the figure and its unit.",
+                    with_unit(&crate::typed::shorten(text)),
                     self.label,
-                    show(low),
-                    show(high),
-                    picked.symbol
+                    end(low),
+                    with_unit(&end(high)),
                 ))
             }
             FieldKind::Choice(options) => match options.iter().find(|(key, _)| *key == text) {
@@ -91,6 +90,14 @@ impl Field {
             FieldKind::Table => table(text).map(|_| Some(Typed::words(text))),
         }
     }
+}
+
+/// Without zeros that end a decimal fraction: an end of a range claims no digits.
+fn plain(number: &str) -> String {
+    if !number.contains('.') || number.contains('e') {
+        return number.to_owned();
+    }
+    number.trim_end_matches('0').trim_end_matches('.').to_owned()
 }
 
 /// Accepts words up to a length, without control characters.

@@ -28,7 +28,7 @@ pub(super) fn long() -> bool {
 /// cuts and answers always; of the writes in between one in 24, unless every one is asked for.
 fn telling(calls: &[Call], n: usize) -> bool {
     let plain = |n: usize| matches!(calls.get(n), Some(Call::Written { .. } | Call::Made(_) | Call::Folder(_)));
-    long() || !plain(n) || (n > 0 && !plain(n - 1)) || n % 24 == 0
+    long() || !plain(n) || (n > 0 && !plain(n - 1)) || n.is_multiple_of(24)
 }
 
 /// Looks at what a kill before each telling call leaves. How many points, and those at which something was wrong.
