@@ -52,6 +52,9 @@ pub(crate) fn add_drive(hand: &mut Hand<'_>, case: &Case, who: &str) -> Result<D
     for (key, typed) in &case.sheets {
         let sheet = sheet(&case.tag, key)?;
         let mut changes: Vec<_> = typed.iter().map(|(field, text)| change(sheet, 0, field, text)).collect();
+        if sheet == Sheet::Drive {
+            changes.extend(not_fitted(typed));
+        }
         if sheet == Sheet::Motor {
             for (column, typed) in (0u8..).zip(&case.columns) {
                 changes.extend(typed.iter().map(|(field, text)| change(sheet, column, field, text)));
@@ -61,6 +64,17 @@ pub(crate) fn add_drive(hand: &mut Hand<'_>, case: &Case, who: &str) -> Result<D
         hand.act(who, deed, 350, &format!("{}, {}", case.tag, sheet.words()))?;
     }
     Ok(drive)
+}
+
+/// What the table does not mention is not fitted, and the engineer says so: an option left open keeps its steps waiting.
+fn not_fitted(typed: &Typed) -> impl Iterator<Item = Change<(u8, String)>> {
+    fields::of(Sheet::Drive).iter().filter(|f| !typed.contains_key(f.key)).filter_map(|f| match f.kind {
+        FieldKind::Flag => Some(change(Sheet::Drive, 0, f.key, "no")),
+        FieldKind::Choice(options) if options.iter().any(|(key, _)| *key == "none") => {
+            Some(change(Sheet::Drive, 0, f.key, "none"))
+        }
+        _ => None,
+    })
 }
 
 fn sheet(table: &str, key: &str) -> Result<Sheet, DemoFault> {
