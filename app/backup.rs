@@ -4,6 +4,7 @@ use crate::clock;
 use crate::ending::Ending;
 use clap::Args;
 use std::path::PathBuf;
+use store::{OpenFault, Store};
 
 #[derive(Args)]
 pub struct Arguments {
@@ -16,11 +17,12 @@ pub struct Arguments {
 }
 
 pub fn run(arguments: &Arguments) -> Ending {
-    let store = match store::Store::open(&arguments.data, clock::now()) {
-        Ok(store) => store,
+    let made = match Store::open(&arguments.data, clock::now()) {
+        Ok(store) => store.backup(&arguments.to, clock::now()).wait(),
+        Err(OpenFault::InUse(_)) => store::backup_beside(&arguments.data, &arguments.to, clock::now()),
         Err(fault) => return Ending::could_not(fault),
     };
-    match store.backup(&arguments.to, clock::now()).wait() {
+    match made {
         Ok(receipt) => {
             println!("Backup made in {}.", receipt.folder.display());
             println!("{} bytes, {} pictures.", receipt.bytes, receipt.photos);

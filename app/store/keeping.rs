@@ -10,7 +10,7 @@ mod restore;
 mod signatures;
 mod space;
 
-pub use backup::BackupReceipt;
+pub use backup::{BackupReceipt, backup_beside};
 pub use check::check_store;
 pub(crate) use copy::copy_checked;
 #[cfg(test)]

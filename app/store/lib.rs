@@ -28,7 +28,7 @@ pub use answer::Answer;
 pub use drives::{BoardFilter, BoardRow, FoundRow, Page, PhaseCell, QueueRow, StatusKey};
 pub use fault::ReadFault;
 pub use journal::Witnessed;
-pub use keeping::{BackupFault, BackupReceipt, Report, ReportLine, Space, check_store};
+pub use keeping::{BackupFault, BackupReceipt, Report, ReportLine, Space, backup_beside, check_store};
 pub use opening::OpenFault;
 pub use people::{AccountRow, CodeMade, PasswordAnswer, PasswordFault, Session, SessionKind, SignIn, password_will_do};
 pub use photos::{LARGEST_PHOTO, PhotoFault, media_of as photo_media};

@@ -3,13 +3,14 @@
 use super::copy::{copy_to_part, finish_copy};
 use super::fault::BackupFault;
 use crate::answer::Answer;
+use crate::fault::Fault;
 use crate::journal::{remember_head, stream_head, verify_journal};
-use crate::opening::{Purpose, connect, private_folder, sync_folder, write_down};
+use crate::opening::{MIGRATIONS, Purpose, connect, private_folder, schema_of, schema_version, sync_folder, write_down};
 use crate::photos;
 use crate::store::Store;
 use commissioning::Timestamp;
 use commissioning::journal::Head;
-use rusqlite::Connection;
+use rusqlite::{Connection, Transaction, TransactionBehavior};
 use std::fs::File;
 use std::path::{Path, PathBuf};
 
@@ -42,20 +43,49 @@ impl Store {
     }
 }
 
+/// Makes a checked backup of a store that another process has open, and goes on with. That it was made is noted in the
+/// store as well, in one short transaction of its own.
+///
+/// # Errors
+/// When there is no store of this program's schema, the folder to write to holds something, the copy is unsound, or the
+/// disk fails.
+pub fn backup_beside(folder: &Path, to: &Path, now: Timestamp) -> Result<BackupReceipt, BackupFault> {
+    let database = folder.join("store.sqlite");
+    schema_of(&database, MIGRATIONS.len())?;
+    let connection = connect(&database, Purpose::Write)?;
+    if usize::try_from(schema_version(&connection)?).ok() != Some(MIGRATIONS.len()) {
+        return Err(BackupFault::NoBackup(
+            "The running program is of another version than this one. Make the backup with its own.".to_owned(),
+        ));
+    }
+    let receipt = copied(&database, &folder.join("photos"), to)?;
+    let noting = Transaction::new_unchecked(&connection, TransactionBehavior::Immediate).map_err(Fault::from)?;
+    note(&noting, &receipt, now)?;
+    noting.commit().map_err(Fault::from)?;
+    Ok(receipt)
+}
+
 fn backup(store: &Store, to: &Path, now: Timestamp) -> Result<BackupReceipt, BackupFault> {
+    let receipt = copied(store.database(), &store.folder().join("photos"), to)?;
+    let noted = receipt.clone();
+    store.writing().give(move |desk| Ok(Ok::<_, BackupFault>(note(&desk.connection, &noted, now)?))).wait()?;
+    Ok(receipt)
+}
+
+fn copied(database: &Path, photos_folder: &Path, to: &Path) -> Result<BackupReceipt, BackupFault> {
     private_folder(to)?;
     if std::fs::read_dir(to)?.next().is_some() {
         return Err(BackupFault::NotEmpty(to.display().to_string()));
     }
-    let source = connect(store.database(), Purpose::Read)?;
+    let source = connect(database, Purpose::Read)?;
     // One read transaction: the copy is of one moment, and acts meanwhile do not make it start over.
-    let moment = source.unchecked_transaction().map_err(crate::fault::Fault::from)?;
+    let moment = source.unchecked_transaction().map_err(Fault::from)?;
     stream_head(&moment)?;
-    let database = to.join("store.sqlite");
-    let part = copy_to_part(&moment, &database)?;
+    let copy_here = to.join("store.sqlite");
+    let part = copy_to_part(&moment, &copy_here)?;
     drop(moment);
 
-    let copy = Connection::open(&part).map_err(crate::fault::Fault::from)?;
+    let copy = Connection::open(&part).map_err(Fault::from)?;
     let (faults, _) = verify_journal(&copy)?;
     if let Some(fault) = faults.first() {
         return Err(BackupFault::Unsound(fault.clone()));
@@ -64,13 +94,11 @@ fn backup(store: &Store, to: &Path, now: Timestamp) -> Result<BackupReceipt, Bac
     let kept = photos::kept(&copy)?;
     drop(copy);
 
-    copy_photos(&store.folder().join("photos"), &to.join("photos"), &kept)?;
-    finish_copy(&part, &database)?;
+    copy_photos(photos_folder, &to.join("photos"), &kept)?;
+    finish_copy(&part, &copy_here)?;
     sync_folder(to)?;
-    let bytes = std::fs::metadata(&database)?.len() + kept.iter().map(|(_, size)| size).sum::<u64>();
-    let receipt = BackupReceipt { folder: to.to_owned(), stream, photos: kept.len() as u64, bytes };
-    write_receipt(store, &receipt, now)?;
-    Ok(receipt)
+    let bytes = std::fs::metadata(&copy_here)?.len() + kept.iter().map(|(_, size)| size).sum::<u64>();
+    Ok(BackupReceipt { folder: to.to_owned(), stream, photos: kept.len() as u64, bytes })
 }
 
 /// Copies photos, each checked against its hash and synced.
@@ -89,17 +117,16 @@ pub(crate) fn copy_photos(from: &Path, to: &Path, kept: &[(String, u64)]) -> Res
     Ok(())
 }
 
-fn write_receipt(store: &Store, receipt: &BackupReceipt, now: Timestamp) -> Result<(), BackupFault> {
-    let (place, stream) = (format!("backup {}", receipt.folder.display()), receipt.stream.clone());
-    let words = format!("{place}: {} events, {} photos", stream.sequence, receipt.photos);
-    store
-        .writing()
-        .give(move |desk| {
-            if stream.sequence > 0 {
-                remember_head(&desk.connection, &place, &stream, now)?;
-            }
-            write_down(&desk.connection, now, "backup", &words)?;
-            Ok(Ok::<_, BackupFault>(()))
-        })
-        .wait()
+/// Notes the backup in the store that it is of, with the end of the stream that it holds.
+fn note(connection: &Connection, receipt: &BackupReceipt, now: Timestamp) -> Result<(), Fault> {
+    let place = format!("backup {}", receipt.folder.display());
+    if receipt.stream.sequence > 0 {
+        remember_head(connection, &place, &receipt.stream, now)?;
+    }
+    write_down(
+        connection,
+        now,
+        "backup",
+        &format!("{place}: {} events, {} photos", receipt.stream.sequence, receipt.photos),
+    )
 }

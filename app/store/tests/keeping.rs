@@ -78,6 +78,22 @@ fn nothing_is_written_over_and_no_copied_live_store_is_taken() {
 }
 
 #[test]
+fn a_backup_beside_a_running_store_is_whole_and_noted_there() {
+    let folder = tempfile::tempdir().unwrap();
+    let [live, copy] = ["live", "copy"].map(|n| folder.path().join(n));
+    let store = kept_store(&live);
+    let receipt = crate::backup_beside(&live, &copy, at(30)).unwrap();
+    assert_eq!((receipt.photos, &receipt.stream), (1, &store.stream_head_blocking().unwrap()));
+    assert_eq!(wrong(&check_store(&copy, at(31)).unwrap()), Vec::<String>::new());
+    create(&store, 2, "P-2", "The running store goes on");
+    let report = check_store(&live, at(31)).unwrap();
+    assert_eq!(wrong(&report), Vec::<String>::new());
+    assert!(report.lines.iter().any(|l| l.part == "backup" && l.found.contains("2026")), "{}", report.to_text());
+    assert!(matches!(crate::backup_beside(&live, &copy, at(32)), Err(BackupFault::NotEmpty(_))));
+    assert!(crate::backup_beside(&folder.path().join("nowhere"), &folder.path().join("c"), at(32)).is_err());
+}
+
+#[test]
 fn a_backup_with_a_changed_photo_is_not_restored() {
     let folder = tempfile::tempdir().unwrap();
     let [live, copy, again] = ["live", "copy", "again"].map(|n| folder.path().join(n));
