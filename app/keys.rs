@@ -106,7 +106,7 @@ fn rotate(store: &Store, data: &Path, login: &str) -> Result<Ending, String> {
             return Err(format!("too many wrong passwords: not looked at before {}", until.shown()));
         }
     }
-    let old = key::load_or_create(&data.join(IN_USE)).map_err(|f| f.to_string())?;
+    let old = key::load(&data.join(IN_USE)).map_err(|f| f.to_string())?;
     let new = rotation::next(data).map_err(|f| f.to_string())?;
     let Rotation { old: from, new: to, by_old, by_new } = Rotation::between(&old, &new);
     let deed = Deed::RotateKey { old: from, new: to.clone(), by_old, by_new };

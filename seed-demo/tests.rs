@@ -109,6 +109,10 @@ fn the_wet_motor_the_contradiction_and_the_returned_record_show_what_they_are_fo
     let record = returned.drive.record.as_ref().unwrap();
     assert!(matches!(&record.status, Status::InProgress { returned: Some(reason) } if reason.contains("ramp")));
     assert_eq!(record.remarks.len(), 2);
+    let found: Vec<_> = record.findings.values().collect();
+    assert_eq!(found.len(), 1, "the program raised it, when the stop was recorded");
+    assert!(found[0].is_open() && found[0].severity == Severity::BeforeHandover, "{found:?}");
+    assert_eq!(found[0].step.as_deref(), Some("stop-time-under-load"));
 
     // The old tachometer is out of calibration on purpose, and is used on the hoist only.
     assert_eq!(that_are(&judged("H-410"), Verdict::Outside), BTreeSet::from(["instrument-calibration"]));

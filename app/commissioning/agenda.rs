@@ -5,9 +5,14 @@ mod parameters;
 pub(crate) mod step_parts;
 #[cfg(test)]
 mod tests;
+mod trouble;
+mod unanswered;
 
+pub(crate) use hold::newest;
 pub use hold::unmet_of;
 pub use parameters::{Difference, differs, left_of_group};
+pub use trouble::with_outcomes;
+pub use unanswered::{Unanswered, unanswered};
 
 use crate::judge::View;
 use crate::procedure::applies;
@@ -35,6 +40,10 @@ pub struct PhaseAgenda {
     pub behind: Option<String>,
     /// The steps that apply, in order.
     pub steps: Vec<StepAgenda>,
+    /// A finding that stops start-up is open at one of its steps, or a verdict there is outside: a strip draws such a
+    /// phase differently, settled or not. Outside verdicts count only in an agenda of [`with_outcomes`], since `of`
+    /// judges nothing.
+    pub troubled: bool,
 }
 
 /// A hold point as it stands.
@@ -94,6 +103,7 @@ pub fn of(view: &View<'_>) -> Agenda {
             hold: None,
             behind: None,
             steps: applying.map(|s| step_parts::of(view, s, &flags)).collect(),
+            troubled: trouble::stopped(view, phase),
         });
     }
     // Hold points ask how other phases stand, so that every step comes first.

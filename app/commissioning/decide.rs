@@ -13,6 +13,7 @@ mod instruments;
 mod isolation;
 mod isolation_proof;
 mod keys;
+mod outside;
 pub(crate) mod parameters;
 mod people;
 mod plants;

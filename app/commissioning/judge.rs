@@ -17,6 +17,7 @@ use crate::agenda::{Agenda, StepState};
 use crate::plant::{Sheet, Site, flags_of};
 use crate::procedure::{Procedure, applies};
 use crate::record::{Drive, ParameterColumn};
+pub use cable::harmonic_limits;
 use engineering::{Outcome, Verdict};
 use serde::{Deserialize, Serialize};
 use std::collections::BTreeSet;

@@ -116,6 +116,9 @@ impl World {
 
     fn make_complete() -> Self {
         let mut world = Self::begun();
+        for option in ["brake-chopper", "bypass"] {
+            world.set_field(ERIN, Sheet::Drive, option, "no", "").unwrap();
+        }
         world.enter(ERIN, "prove-dead", &[("tester-proved", "yes"), ("bus-after-waiting", "3")]);
         world.release("inspect");
         world.enter(ERIN, "terminals", &[("terminals-tight", "yes")]);
@@ -292,6 +295,12 @@ impl World {
         self.minute += 1;
         let deed = Deed::RecordEntries { drive: DRIVE, step: step.into(), changes, reason: reason.into() };
         self.attempt(Some(who), deed)
+    }
+
+    /// Erin answers a return by a remark on the whole record.
+    #[track_caller]
+    pub(crate) fn answer(&mut self, text: &str) {
+        self.does(ERIN, Deed::Remark { drive: DRIVE, step: String::new(), text: text.into() });
     }
 
     #[track_caller]

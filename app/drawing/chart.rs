@@ -1,7 +1,8 @@
 //! A chart: curves, points and bars over two axes, with a legend that needs no colour.
 
 use crate::axis::{Axis, around};
-use crate::labels::width;
+use crate::chart_marks::{Frame, quietest, sampled};
+use crate::labels::{cut, width};
 use crate::style::{Ink, Style, Voice};
 use crate::svg::{Anchor, Svg, TEXT};
 use engineering::Scale;
@@ -31,6 +32,8 @@ pub enum Look {
     Measured,
     /// Bars from zero.
     Bars,
+    /// A short level line at each point: the limit of a bar.
+    Limits,
 }
 
 /// A curve or a set of points.
@@ -70,10 +73,11 @@ pub struct Chart {
     pub marks: Vec<Mark>,
 }
 
-const WIDTH: f64 = 400.0;
+/// At 320 pixels its 13-unit text is 11.5 pixels high.
+const WIDTH: f64 = 360.0;
 const LEFT: f64 = 58.0;
-const RIGHT: f64 = 388.0;
-const TOP: f64 = 26.0;
+const RIGHT: f64 = 338.0;
+const TOP: f64 = 30.0;
 const FOOT: f64 = 206.0;
 
 impl Chart {
@@ -133,9 +137,18 @@ impl Chart {
         self
     }
 
+    /// Whether there is nothing to draw.
+    #[must_use]
+    pub const fn is_empty(&self) -> bool {
+        self.series.is_empty()
+    }
+
     /// The chart in words: title, axes, and every series with its ends.
     #[must_use]
     pub fn words(&self) -> String {
+        if self.is_empty() {
+            return format!("{}: nothing to draw yet.", self.title);
+        }
         let mut text = format!("{}. {} against {}.", self.title, named(&self.y), named(&self.x));
         for s in &self.series {
             let (first, last) =
@@ -158,7 +171,7 @@ impl Chart {
         text
     }
 
-    /// Draws the chart: 400 units wide, as high as its legend needs.
+    /// Draws the chart: 360 units wide, as high as its legend needs.
     #[must_use]
     pub fn draw(&self, style: Style) -> String {
         let mut svg = Svg::new(style);
@@ -171,7 +184,7 @@ impl Chart {
             self.draw_series(&mut svg, n, s, &across, &up);
         }
         let height = self.draw_legend(&mut svg);
-        svg.finish(WIDTH, height, "chart", &self.words())
+        svg.finish(WIDTH, height, "chart", &self.title, &self.words())
     }
 
     fn axis(
@@ -202,9 +215,13 @@ impl Chart {
 
     fn draw_axes(&self, svg: &mut Svg, across: &Axis, up: &Axis) {
         let mut taken = f64::NEG_INFINITY;
-        for (v, shown) in across.numbers(5) {
+        let bars = self.bar_places();
+        let numbers = if bars.is_empty() { across.numbers(5) } else { bars.clone() };
+        for (v, shown) in numbers {
             let x = across.at(v);
-            svg.line(x, TOP, x, FOOT, Ink::Grid);
+            if bars.is_empty() {
+                svg.line(x, TOP, x, FOOT, Ink::Grid);
+            }
             let half = width(&shown, false) / 2.0;
             if x - half > taken + 6.0 && x + half < WIDTH {
                 svg.text(x, FOOT + 16.0, &shown, Anchor::Middle, Voice::Quiet);
@@ -221,28 +238,41 @@ impl Chart {
         svg.text(RIGHT, FOOT + 33.0, &named(&self.x), Anchor::End, Voice::Strong);
     }
 
+    /// Where bars stand, each once, with its words.
+    fn bar_places(&self) -> Vec<(f64, String)> {
+        let bars = self.series.iter().filter(|s| s.look == Look::Bars);
+        let mut at: Vec<f64> = bars.flat_map(|s| s.points.iter().map(|p| p.0)).collect();
+        at.sort_by(f64::total_cmp);
+        at.dedup();
+        at.into_iter().map(|v| (v, format!("{v}"))).collect()
+    }
+
     fn draw_marks(&self, svg: &mut Svg, across: &Axis, up: &Axis) {
-        let mut rows: Vec<(f64, f64, f64)> = Vec::new();
-        for mark in &self.marks {
-            let half = width(&mark.label, true) / 2.0;
-            let (mut y, x) = if mark.upright {
-                let x = across.at(mark.at);
-                svg.line(x, TOP, x, FOOT, Ink::Limit);
-                // Beside its line, on the side that has the room.
-                (TOP + 12.0, if x + 2.0 * half + 8.0 < RIGHT { x + half + 5.0 } else { x - half - 5.0 })
+        let frame = Frame { left: LEFT, right: RIGHT, top: TOP, foot: FOOT };
+        let lines: Vec<(bool, f64)> =
+            self.marks.iter().map(|m| (m.upright, if m.upright { across.at(m.at) } else { up.at(m.at) })).collect();
+        let mut drawn: Vec<(f64, f64)> = Vec::new();
+        for s in &self.series {
+            let at: Vec<(f64, f64)> = s.points.iter().map(|(x, y)| (across.at(*x), up.at(*y))).collect();
+            drawn.extend(match s.look {
+                Look::Bars => at.iter().flat_map(|(x, y)| sampled(&[(*x, *y), (*x, FOOT)])).collect(),
+                Look::Points | Look::Limits => at,
+                Look::Line | Look::Dashed | Look::Measured => sampled(&at),
+            });
+        }
+        for (upright, at) in &lines {
+            if *upright {
+                svg.line(*at, TOP, *at, FOOT, Ink::Limit);
             } else {
-                svg.line(LEFT, up.at(mark.at), RIGHT, up.at(mark.at), Ink::Limit);
-                ((up.at(mark.at) - 5.0).max(TOP + 10.0), RIGHT - half - 4.0)
-            };
-            let x = x.clamp(LEFT + half + 4.0, (RIGHT - half - 4.0).max(LEFT + half + 4.0));
-            // Words that would lie on others step down a row at a time.
-            while rows.iter().any(|(l, r, at)| (at - y).abs() < 13.0 && x - half < r + 6.0 && x + half > l - 6.0)
-                && y < FOOT - 20.0
-            {
-                y += 14.0;
+                svg.line(LEFT, *at, RIGHT, *at, Ink::Limit);
             }
-            rows.push((x - half, x + half, y));
-            svg.text(x, y, &mark.label, Anchor::Middle, Voice::Strong);
+        }
+        let mut taken = Vec::new();
+        for (n, mark) in self.marks.iter().enumerate() {
+            let words = cut(&mark.label, RIGHT - LEFT - 12.0);
+            let spot = quietest(&frame, &lines, n, width(&words, true), &drawn, &taken);
+            svg.text(spot.0, spot.1, &words, Anchor::Middle, Voice::Strong);
+            taken.push((spot.0, spot.1, width(&words, true) / 2.0));
         }
     }
 
@@ -253,6 +283,11 @@ impl Chart {
             Look::Dashed => svg.curve(&at, Ink::Curve(n, true)),
             Look::Measured => svg.curve(&at, Ink::Curve(n, false)),
             Look::Points => {}
+            Look::Limits => {
+                for (x, y) in &at {
+                    svg.line(x - 13.0, *y, x + 13.0, *y, Ink::Limit);
+                }
+            }
             Look::Bars => {
                 let groups = self.series.iter().filter(|s| s.look == Look::Bars).count().max(1);
                 let count = f64::from(u16::try_from(series.points.len()).unwrap_or(1).max(1));
@@ -286,6 +321,7 @@ impl Chart {
                 Look::Line | Look::Measured => svg.curve(&sample, Ink::Curve(n, false)),
                 Look::Dashed => svg.curve(&sample, Ink::Curve(n, true)),
                 Look::Bars => svg.rect(x + 6.0, y - 11.0, 14.0, 12.0, Ink::Bar(n)),
+                Look::Limits => svg.line(x, y - 4.5, x + 26.0, y - 4.5, Ink::Limit),
                 Look::Points => {}
             }
             if matches!(s.look, Look::Points | Look::Measured) {

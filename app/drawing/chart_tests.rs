@@ -41,7 +41,7 @@ fn every_chart() -> Vec<Chart> {
             label: "speed".into(),
             unit: "rpm".into(),
             set: vec![(0.0, 0.0), (15.0, 1500.0)],
-            predicted: curve(|s| 1500.0 * s),
+            predicted: curve(|s| 1500.0 * s).into_iter().map(|(x, n)| (x / 100.0, n * n / 1500.0)).collect(),
             measured: vec![(0.0, 0.0), (15.3, 1490.0)],
             level: None,
         }),
@@ -51,7 +51,11 @@ fn every_chart() -> Vec<Chart> {
             &[(50.0, 66.0), (100.0, 124.0)],
             Some(133.0),
         ),
-        harmonics(&[(5.0, 38.0), (7.0, 15.0), (11.0, 7.0)], &[(5.0, 40.0), (7.0, 14.0), (11.0, 7.5)]),
+        harmonics(
+            &[(5.0, 38.0), (7.0, 15.0), (11.0, 7.0)],
+            &[(5.0, 40.0), (7.0, 14.0), (11.0, 7.5)],
+            &[(5.0, 12.0), (7.0, 12.0), (11.0, 5.5)],
+        ),
     ]
 }
 
@@ -95,9 +99,58 @@ fn what_cannot_be_drawn_is_left_out_and_an_empty_chart_still_draws() {
 fn points_fall_where_the_axes_say() {
     let chart = Chart::new("Known", ("x", ""), ("y", "")).with("a", Look::Points, vec![(0.0, 0.0), (10.0, 100.0)]);
     let svg = chart.draw(Style::Screen);
-    // x: 0 to 10 over 58..388; y: 0 to 108 over 206..26.
+    // x: 0 to 10 over 58..338; y: 0 to 108 over 206..30.
     assert!(svg.contains(r#"<circle cx="58" cy="206" r="3.4""#), "{svg}");
-    assert!(svg.contains(r#"<circle cx="388" cy="39.33" r="3.4""#), "{svg}");
+    assert!(svg.contains(r#"<circle cx="338" cy="43.04" r="3.4""#), "{svg}");
+}
+
+/// The table holds what is drawn, thinned for a long curve but with both its ends; the picture says it in `<desc>`.
+#[test]
+fn the_table_of_a_chart_is_its_numbers() {
+    for chart in every_chart() {
+        let (rows, svg) = (chart.table(), chart.draw(Style::Screen));
+        assert!(svg.contains("<desc>") && svg.contains("</desc>"));
+        for s in &chart.series {
+            let own: Vec<_> = rows.iter().filter(|r| r.name == s.name).collect();
+            assert_eq!(own.len(), s.points.len().min(12), "{}", s.name);
+            for (row, point) in [(own.first(), s.points.first()), (own.last(), s.points.last())] {
+                let (row, point) = (row.unwrap(), point.unwrap());
+                assert!((row.across.parse::<f64>().unwrap() - point.0).abs() <= point.0.abs() * 1e-3, "{row:?}");
+                assert!((row.up.parse::<f64>().unwrap() - point.1).abs() <= point.1.abs() * 1e-3, "{row:?}");
+            }
+        }
+        assert!(chart.marks.iter().all(|m| rows.iter().any(|r| r.name == m.label)));
+    }
+}
+
+#[test]
+fn a_chart_without_numbers_is_a_sentence() {
+    let chart = insulation_over_time(&[], None);
+    assert!(chart.is_empty() && chart.table().is_empty());
+    assert_eq!(chart.words(), "Insulation resistance over time: nothing to draw yet.");
+}
+
+/// The words stay inside the picture and, at 320 pixels, at least ten pixels high.
+#[test]
+fn words_stay_inside_and_legible() {
+    for chart in every_chart() {
+        let svg = chart.draw(Style::Screen);
+        let wide: f64 = svg.split("viewBox=\"0 0 ").nth(1).unwrap().split(' ').next().unwrap().parse().unwrap();
+        assert!(crate::svg::TEXT * 320.0 / wide >= 10.0);
+        for text in svg.split("<text ").skip(1) {
+            let x: f64 = text.split("x=\"").nth(1).unwrap().split('"').next().unwrap().parse().unwrap();
+            let words = text.split('>').nth(1).unwrap().split('<').next().unwrap();
+            let long = crate::labels::width(words, text.contains("700"));
+            let left = if text.contains("\"end\"") {
+                x - long
+            } else if text.contains("\"middle\"") {
+                x - long / 2.0
+            } else {
+                x
+            };
+            assert!(left >= -1.0 && left + long <= wide + 1.0, "{}: {words}", chart.title);
+        }
+    }
 }
 
 #[test]

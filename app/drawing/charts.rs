@@ -9,7 +9,7 @@ mod volts_per_hertz;
 
 pub use insulation::insulation_over_time;
 pub use load_run::{harmonics, load_run};
-pub use of_record::{StepChart, of};
+pub use of_record::{StepChart, at, of};
 pub use ramp::{Ramp, ramp};
 pub use torque_speed::{TorqueSpeed, torque_against_speed};
 pub use volts_per_hertz::volts_per_hertz;

@@ -40,7 +40,7 @@ pub(crate) fn width(words: &str, strong: bool) -> f64 {
 }
 
 /// Cuts words to a width, with an ellipsis; the whole stands in the picture's title.
-fn cut(words: &str, room: f64) -> String {
+pub(crate) fn cut(words: &str, room: f64) -> String {
     if width(words, true) <= room {
         return words.to_owned();
     }

@@ -5,6 +5,8 @@
 
 pub mod axis;
 pub mod chart;
+mod chart_marks;
+mod chart_table;
 pub mod charts;
 mod labels;
 mod rule;
@@ -14,6 +16,7 @@ pub mod style;
 mod svg;
 
 pub use chart::{Chart, Look, Mark, Series};
+pub use chart_table::Row;
 pub use rule::limit_rule;
 pub use rule_words::words as limit_rule_words;
 pub use style::Style;

@@ -54,7 +54,7 @@ pub fn limit_rule(rule: &LimitRule, style: Style) -> String {
         svg.text(p.left + p.width / 2.0, top - 7.0 - row(p) * ROW, &p.words, Anchor::Middle, Voice::Strong);
     }
     draw_readings(&mut svg, rule, &axis, middle);
-    svg.finish(WIDTH, height, "limit-rule", &words(rule))
+    svg.finish(WIDTH, height, "limit-rule", &words(rule), "")
 }
 
 fn row(placed: &Placed) -> f64 {

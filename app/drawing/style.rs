@@ -90,7 +90,12 @@ impl Ink {
             ),
             Self::Point(n) => format!(r#" class="dr-point dr-{}" fill="currentColor""#, n % 4),
             Self::Bar(n) => {
-                format!(r#" class="dr-bar dr-{}" fill="currentColor" fill-opacity="{}""#, n % 4, [0.85, 0.35][n % 2])
+                // Pale enough for a limit's line to stand out on it.
+                let fill = [0.4, 0.12][n % 2];
+                format!(
+                    r#" class="dr-bar dr-{}" fill="currentColor" fill-opacity="{fill}" stroke="currentColor""#,
+                    n % 4
+                )
             }
         }
     }
@@ -111,7 +116,7 @@ impl Ink {
             }
             Self::Point(n) => format!(r#" fill="{}""#, INKS[n % 4]),
             Self::Bar(n) => {
-                format!(r##" fill="{}" stroke="#15181c" stroke-width="0.8""##, ["#4a5058", "#d8d8d2"][n % 2])
+                format!(r##" fill="{}" stroke="#15181c" stroke-width="0.8""##, ["#a9aeb4", "#eeeeea"][n % 2])
             }
         }
     }

@@ -87,15 +87,16 @@ impl Svg {
         );
     }
 
-    /// The whole picture; `class` names it for the stylesheet.
-    pub(crate) fn finish(self, width: f64, height: f64, class: &str, title: &str) -> String {
+    /// The whole picture; `class` names it for the stylesheet, `told` says its numbers where the title does not.
+    pub(crate) fn finish(self, width: f64, height: f64, class: &str, title: &str, told: &str) -> String {
         let (w, h) = (number(width), number(height));
         let dress = match self.style {
             Style::Screen => format!(r#" class="{class}""#),
             Style::Print => format!(r#" width="{w}" height="{h}""#),
         };
+        let told = if told.is_empty() { String::new() } else { format!("<desc>{}</desc>", escape(told)) };
         format!(
-            r#"<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 {w} {h}" role="img"{dress}><title>{}</title>{}</svg>"#,
+            r#"<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 {w} {h}" role="img"{dress}><title>{}</title>{told}{}</svg>"#,
             escape(title),
             self.body
         )

@@ -2,6 +2,7 @@
 
 mod button;
 mod caution;
+mod chart;
 mod field;
 mod form;
 mod list;
@@ -14,6 +15,7 @@ mod verdict;
 
 pub use button::{button, button_named, link_button, main_button, main_link};
 pub use caution::{caution, notice, saved};
+pub use chart::charts_at;
 pub use field::{FieldInput, InputKind, date_kind, earlier_values, field, input_id, state_line, who_when};
 pub use form::{form, kept_form, live_form, seal};
 pub use list::{empty, facts, pager, search_box};

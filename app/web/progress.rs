@@ -2,8 +2,11 @@
 
 use crate::components::{StripCell, strip};
 use crate::extract::DriveAt;
-use crate::links;
+use crate::{links, verdicts};
 use commissioning::agenda::{Agenda, PhaseAgenda, StepAgenda};
+use commissioning::judge::Judged;
+use commissioning::record::Severity;
+use engineering::Verdict;
 use maud::{Markup, html};
 
 /// What comes next.
@@ -84,13 +87,23 @@ pub fn next(agenda: &Agenda) -> Next {
     waits.unwrap_or(Next::Signature)
 }
 
-/// What comes after a step: the next unsettled one of its phase, otherwise whatever comes next of all.
+/// What comes after a step: the next unsettled one of its phase, then one before it there, then the next phase that has
+/// any left, through its hold point; whatever comes next of all where nothing is left from here on. That holds out of
+/// order too: who works ahead is not sent back to where the others are.
 #[must_use]
 pub fn after(agenda: &Agenda, id: &str) -> Next {
-    let rest = agenda.step(id).filter(|(phase, _)| phase.open());
-    let later = rest
-        .and_then(|(phase, _)| phase.steps.iter().skip_while(|s| s.id != id).skip(1).find(|s| !s.state.is_settled()));
-    later.map_or_else(|| next(agenda), step)
+    let Some(here) = agenda.phases.iter().position(|p| p.steps.iter().any(|s| s.id == id)) else { return next(agenda) };
+    let mut phases = agenda.phases.iter().skip(here);
+    let own = phases.next().map(|p| p.steps.as_slice()).unwrap_or_default();
+    let (earlier, later) = own.split_at(own.iter().position(|s| s.id == id).unwrap_or_default());
+    let rest = later.iter().skip(1).chain(earlier).find(|s| !s.state.is_settled());
+    rest.map(step).or_else(|| phases.find_map(first_of)).unwrap_or_else(|| next(agenda))
+}
+
+/// Where a phase that has anything left is entered: its hold point while that is closed, else its first unsettled step.
+fn first_of(phase: &PhaseAgenda) -> Option<Next> {
+    let first = phase.steps.iter().find(|s| !s.state.is_settled())?;
+    Some(if phase.hold.as_ref().is_some_and(|h| !h.open) { hold(phase) } else { step(first) })
 }
 
 /// The step before this one in the order of the procedure.
@@ -117,12 +130,27 @@ pub fn entrance(phase: &PhaseAgenda, site: &str, drive: &str) -> String {
     first.map_or_else(|| links::drive(site, drive), |s| links::step(site, drive, &s.id))
 }
 
+/// What keeps a settled phase from being a clean one: something outside at one of its steps, or an open finding there
+/// that stops start-up; a shape and its word.
+#[must_use]
+pub fn trouble(at: &DriveAt, phase: &PhaseAgenda, judged: &[Judged]) -> Option<(&'static str, &'static str)> {
+    let here = |step: &str| phase.steps.iter().any(|s| s.id == step);
+    if judged.iter().any(|j| j.outcome.verdict == Verdict::Outside && here(&j.step)) {
+        return Some((Verdict::Outside.shape(), Verdict::Outside.words()));
+    }
+    let mut findings = at.drive.record.iter().flat_map(|r| r.findings.values());
+    let stops =
+        findings.any(|f| f.is_open() && f.severity == Severity::StopsStartUp && f.step.as_deref().is_some_and(here));
+    stops.then_some(("!", Severity::StopsStartUp.words()))
+}
+
 /// The phase strip; nothing before the record is begun.
 #[must_use]
 pub fn phase_strip(at: &DriveAt, agenda: &Agenda, now: Option<&str>) -> Markup {
     if at.drive.record.is_none() {
         return html! {};
     }
+    let judged = verdicts::all(&at.view());
     let cells: Vec<StripCell> = agenda
         .phases
         .iter()
@@ -132,6 +160,7 @@ pub fn phase_strip(at: &DriveAt, agenda: &Agenda, now: Option<&str>) -> Markup {
             address: entrance(phase, &at.site.tag, &at.drive.tag),
             left: phase.left(),
             waits: waits(phase),
+            trouble: trouble(at, phase, &judged),
             now: now == Some(phase.id.as_str()),
         })
         .collect();

@@ -155,9 +155,16 @@ pub fn saved_words(what: &str, thing: &str, count: &str) -> Option<String> {
     }
 }
 
-/// Why a value is overwritten: asked where a reading is replaced and after a first signature; offered always, folded until asked.
+/// Whether any field of a sheet has a value, so that a form can overwrite one.
 #[must_use]
-pub fn reason(back: &Back<'_>) -> Markup {
+pub fn has_values(sheet: Sheet, values: &Values) -> bool {
+    values.iter().any(|(p, s)| p.sheet == sheet && s.standing().iter().any(|r| r.value.is_some()))
+}
+
+/// Why a value is overwritten: asked where a reading is replaced and after a first signature; offered, folded until asked,
+/// where an `earlier` value stands.
+#[must_use]
+pub fn reason(back: &Back<'_>, earlier: bool) -> Markup {
     let none = Posted::default();
     let mut input = FieldInput::new("reason", "Reason for the change", crate::components::InputKind::Lines(500))
         .hint("Needed where a reading is replaced, and for every change once the record was signed; kept beside the earlier value.")
@@ -165,6 +172,9 @@ pub fn reason(back: &Back<'_>) -> Markup {
     input.focus = input.error.is_some();
     // A value that is hard to believe asks for a reason too, at its own field.
     let asked = input.error.is_some() || back.errors.iter().any(|e| e.message.contains("give a reason"));
+    if !earlier && !asked && input.text.is_empty() {
+        return html! {};
+    }
     html! {
         details.reason open[asked || !input.text.is_empty()] { summary { "Give a reason for the change" } (field(&input)) }
     }
@@ -176,6 +186,21 @@ pub fn summary(errors: &[FieldError]) -> Markup {
     faults(errors, "Nothing was recorded yet; what you typed is still here.")
 }
 
+/// A label with a capital, as the list begins with it.
+fn titled(label: &str) -> String {
+    let mut letters = label.chars();
+    letters.next().map_or_else(String::new, |c| c.to_uppercase().collect::<String>() + letters.as_str())
+}
+
+/// What was wrong as it follows the label: "Reason: say why this is overwritten: ...".
+fn in_list(e: &FieldError) -> String {
+    let mut letters = e.message.chars();
+    match letters.next() {
+        Some(first) if e.field == "reason" => first.to_lowercase().collect::<String>() + letters.as_str(),
+        _ => e.message.clone(),
+    }
+}
+
 /// The same where something else of the form was recorded: `rest` says what became of the form.
 #[must_use]
 pub fn faults(errors: &[FieldError], rest: &str) -> Markup {
@@ -183,7 +208,7 @@ pub fn faults(errors: &[FieldError], rest: &str) -> Markup {
         @if !errors.is_empty() {
             div.faults role="alert" tabindex="-1" {
                 p { b { @if errors.len() == 1 { "One field needs attention." } @else { (errors.len()) " fields need attention." } } " " (rest) }
-                ul { @for e in errors { li { a href=(format!("#{}", input_id(&e.field))) { (e.label) } ": " (e.message) } } }
+                ul { @for e in errors { li { a href=(format!("#{}", input_id(&e.field))) { (titled(&e.label)) } ": " (in_list(e)) } } }
             }
         }
     }

@@ -5,6 +5,7 @@ mod accounts;
 mod conflicts;
 mod doors;
 mod every_page;
+mod going_on;
 mod guidance;
 mod in_words;
 mod job;

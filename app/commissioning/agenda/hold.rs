@@ -3,7 +3,6 @@
 use super::{Agenda, HoldAgenda, StepState};
 use crate::judge::catalogue::title;
 use crate::judge::{self, View};
-use crate::plant::Sheet;
 use crate::procedure::{Condition, Phase, Step};
 use crate::record::{FindingState, Record, Severity, functions};
 use engineering::Verdict;
@@ -17,7 +16,7 @@ pub(super) fn of(view: &View<'_>, phase: &Phase, agenda: &Agenda) -> Option<Hold
     // A phase whose work is done waits for nothing, though isolation has been lifted since.
     if released.is_none() || !settled {
         let asked = hold.conditions.iter().filter(|c| released.is_none() || must_keep(c));
-        asked.for_each(|c| unmet.extend(unmet_of(view, c, agenda)));
+        asked.for_each(|c| unmet.extend(unmet_of(view, c, agenda, &phase.id)));
     }
     let open = released.is_some() && unmet.is_empty();
     Some(HoldAgenda { title: hold.title.clone(), unmet, released, open })
@@ -28,9 +27,10 @@ const fn must_keep(condition: &Condition) -> bool {
     matches!(condition, Condition::IsolationInForce | Condition::NoFindingStopsStartUp | Condition::NoneOutside { .. })
 }
 
-/// What keeps a condition from being met, a sentence each; empty where it is met. `agenda` is that of the same view.
+/// What keeps a condition of the hold point before a phase from being met, a sentence each; empty where it is met.
+/// `agenda` is that of the same view.
 #[must_use]
-pub fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda) -> Vec<String> {
+pub fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda, before: &str) -> Vec<String> {
     let record = view.drive.record.as_ref();
     match condition {
         Condition::PhaseSettled { phase } => agenda
@@ -54,8 +54,12 @@ pub fn unmet_of(view: &View<'_>, condition: &Condition, agenda: &Agenda) -> Vec<
         }
         Condition::IsolationInForce | Condition::IsolationLifted => Vec::new(),
         Condition::NoFindingStopsStartUp => record.map_or_else(Vec::new, stopping),
-        Condition::ChecksJudged { checks } => checks.iter().filter_map(|check| unjudged(view, check, agenda)).collect(),
-        Condition::NoneOutside { checks } => checks.iter().flat_map(|check| outside(view, check, agenda)).collect(),
+        Condition::ChecksJudged { checks } => {
+            checks.iter().filter_map(|check| unjudged(view, check, agenda, before)).collect()
+        }
+        Condition::NoneOutside { checks } => {
+            checks.iter().flat_map(|check| outside(view, check, agenda, before)).collect()
+        }
     }
 }
 
@@ -66,19 +70,28 @@ fn stopping(record: &Record) -> Vec<String> {
     numbers.iter().map(|n| format!("Finding {n} stops start-up and is open.")).collect()
 }
 
-/// The steps that show a check, leaving out those that do not apply and those that were settled otherwise.
-fn showing<'a>(view: &View<'a>, check: &str, agenda: &Agenda) -> Vec<&'a Step> {
-    let counts = |id: &str| {
-        let state = agenda.step(id).map(|(_, s)| &s.state);
-        state.is_some_and(|s| !matches!(s, StepState::NotApplicable(_) | StepState::CouldNotBeDone(_)))
+/// The steps ahead of a phase that show a check. What does not apply is left out; so is a step that was settled
+/// otherwise, unless something was measured at it: a reading is not unmade by calling its step not applicable.
+fn showing<'a>(view: &View<'a>, check: &str, agenda: &Agenda, before: &str) -> Vec<&'a Step> {
+    let counts = |step: &Step| match agenda.step(&step.id).map(|(_, s)| &s.state) {
+        None => false,
+        Some(StepState::NotApplicable(_) | StepState::CouldNotBeDone(_)) => measured(view, step),
+        Some(_) => true,
     };
-    let steps = view.procedure.steps().map(|(_, s)| s);
-    steps.filter(|s| s.checks.iter().any(|c| c == check) && counts(&s.id)).collect()
+    let ahead = view.procedure.phases.iter().take_while(|p| p.id != before);
+    ahead.flat_map(|p| &p.steps).filter(|s| s.checks.iter().any(|c| c == check) && counts(s)).collect()
+}
+
+/// Whether any entry stands at a step.
+fn measured(view: &View<'_>, step: &Step) -> bool {
+    let Some(record) = view.drive.record.as_ref() else { return false };
+    let own = record.entries.iter().filter(|(place, _)| step.items.iter().any(|i| i.key == place.item));
+    own.into_iter().any(|(_, slot)| !slot.standing().is_empty())
 }
 
 /// What is wrong with a check at the steps that show it.
-fn unjudged(view: &View<'_>, check: &str, agenda: &Agenda) -> Option<String> {
-    showing(view, check, agenda).into_iter().find_map(|step| {
+fn unjudged(view: &View<'_>, check: &str, agenda: &Agenda, before: &str) -> Option<String> {
+    showing(view, check, agenda, before).into_iter().find_map(|step| {
         let outcomes = judge::run(view, check, &step.id);
         let named = format!("“{}” at “{}”", title(check), step.title);
         if outcomes.is_empty() {
@@ -91,8 +104,8 @@ fn unjudged(view: &View<'_>, check: &str, agenda: &Agenda) -> Option<String> {
 }
 
 /// Every outside verdict of a check, each said once, unless it was accepted by name.
-fn outside(view: &View<'_>, check: &str, agenda: &Agenda) -> Vec<String> {
-    let steps = showing(view, check, agenda);
+fn outside(view: &View<'_>, check: &str, agenda: &Agenda, before: &str) -> Vec<String> {
+    let steps = showing(view, check, agenda, before);
     let mut sentences: Vec<String> = Vec::new();
     let mut said: Vec<String> = Vec::new();
     for step in &steps {
@@ -125,13 +138,12 @@ fn accepted(view: &View<'_>, check: &str, steps: &[&Step]) -> bool {
     })
 }
 
-/// The place in the drive's chain of the last thing entered at a step: readings, its sheet, its settings.
-fn newest(view: &View<'_>, record: &Record, step: &Step) -> Option<u64> {
+/// The place in the drive's chain of the last thing that a verdict at a step can rest on: the step's readings and
+/// settings, and every sheet, since a check at one sheet takes figures from the others.
+pub(crate) fn newest(view: &View<'_>, record: &Record, step: &Step) -> Option<u64> {
     let entries = record.entries.iter().filter(|(place, _)| step.items.iter().any(|i| i.key == place.item));
     let entries = entries.flat_map(|(_, slot)| slot.standing().iter().map(|r| r.sequence));
-    let sheet = step.sheet.as_deref().and_then(Sheet::from_key);
-    let fields = view.drive.fields.iter().filter(|(place, _)| Some(place.sheet) == sheet);
-    let fields = fields.flat_map(|(_, slot)| slot.standing().iter().map(|r| r.sequence));
+    let fields = view.drive.fields.values().flat_map(|slot| slot.standing().iter().map(|r| r.sequence));
     let group = step.parameters.as_deref();
     // The last look at all settings (`*`) is no new setting.
     let ours = |function: &str| functions::find(function).is_some_and(|f| Some(f.group) == group);

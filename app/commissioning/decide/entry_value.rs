@@ -40,6 +40,9 @@ pub(crate) fn understand(
             let unit =
                 if change.unit.is_empty() { unit.as_deref().unwrap_or(quantity.usual().symbol) } else { &change.unit };
             let value = Typed::quantity(&text, unit, *quantity).map_err(value_error)?;
+            if let Some(sentence) = impossible(&value, *quantity, *low, &item.label) {
+                return Err(value_error(sentence));
+            }
             unbelievable = outside(&value, *quantity, *low, *high);
             value
         }
@@ -77,6 +80,17 @@ fn instrument(
         Some(known) => Err((".instrument", format!("{} was put away. Pick an instrument in use.", known.mark))),
         None => Err((".instrument", "This instrument does not exist. Pick one from the list.".to_owned())),
     }
+}
+
+/// A time that passed is never negative, and none where the least believable one is above nothing: no reason helps.
+fn impossible(value: &Typed, kind: Kind, low: Option<f64>, label: &str) -> Option<String> {
+    let number = value.number()?;
+    let never_none = low.is_some_and(|low| low > 0.0);
+    if kind != Kind::Time || number > 0.0 || (number == 0.0 && !never_none) {
+        return None;
+    }
+    let end = if never_none { "more than 0" } else { "not negative" };
+    Some(format!("{} cannot be: “{label}” is {end}. Check the figure and its unit.", value.shown()))
 }
 
 fn outside(value: &Typed, kind: Kind, low: Option<f64>, high: Option<f64>) -> Option<String> {
@@ -122,4 +136,30 @@ fn photo(change: &Change<EntryPlace>, caption: &str, standing: Option<&Entry>) -
     let value = Typed::words(picture.caption.clone());
     let entry = Entry { value, instrument: None, photo: Some(picture), out_of_order: false, accepted_because: None };
     Ok(Understood { entry: Some(entry), unbelievable: None })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    fn said(item: &str, text: &str) -> Result<Understood, (&'static str, String)> {
+        let procedure = crate::procedure::built_in::built_in().unwrap();
+        let (_, item) = procedure.item(item).unwrap();
+        let place = EntryPlace::new(item.key.as_str());
+        let change =
+            Change { place, text: text.into(), unit: String::new(), instrument: None, photo: None, seen: Vec::new() };
+        understand(item, &change, None, &Installation::default())
+    }
+
+    #[test]
+    fn a_time_waited_is_more_than_nothing_whatever_the_reason() {
+        for text in ["0", "-5", "0.0"] {
+            let (_, message) = said("waited", text).unwrap_err();
+            assert!(message.contains("cannot be: “Time waited since switching off” is more than 0"), "{message}");
+        }
+        assert!(said("waited", "0.1").unwrap().unbelievable.is_some(), "hard to believe, and nothing more");
+        assert!(said("waited", "5").unwrap().unbelievable.is_none());
+        assert!(said("stop-seconds", "-1").unwrap_err().1.contains("is not negative"));
+        assert!(said("stop-seconds", "0").is_ok());
+    }
 }

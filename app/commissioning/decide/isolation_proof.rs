@@ -3,21 +3,15 @@
 
 use super::Surroundings;
 use crate::Refusal;
-use crate::journal::{Event, Head};
+use crate::journal::Event;
 use crate::judge;
 use crate::procedure::Step;
-use crate::record::apply;
 use engineering::Verdict;
 
 /// What speaks against isolation once these events have happened: every verdict at the step that is outside or not
 /// assessed, in its own words; `None` when nothing does.
 pub(super) fn against(around: &Surroundings<'_>, step: &Step, events: &[Event]) -> Result<Option<String>, Refusal> {
-    let mut drive = around.drive.cloned();
-    let mut head = drive.as_ref().map_or_else(Head::empty, |d| d.head.clone());
-    for event in events {
-        head.sequence += 1;
-        apply::to_drive(&mut drive, event, &head).map_err(|fault| Refusal::not_now(fault.to_string()))?;
-    }
+    let drive = super::outside::after(around, events)?;
     let Some(drive) = drive else { return Ok(None) };
     let Some(record) = drive.record.as_ref() else { return Ok(None) };
     let view = around.view(&drive, record)?;

@@ -85,6 +85,7 @@ pub(super) fn record(
     if any_new {
         raise_for_order(&mut writer, &view, record, step, early, alone);
     }
+    super::outside::raise_stops(&mut writer, around, record, step)?;
     Ok(writer.done())
 }
 

@@ -6,8 +6,9 @@ use super::writer::Writer;
 use crate::agenda;
 use crate::journal::{Act, Chain, Event, Fact};
 use crate::judge::View;
+use crate::plant::{Recorded, Slot};
 use crate::record::canonical::RecordFile;
-use crate::record::{Meaning, Record, Severity, Status};
+use crate::record::{Meaning, Record, Severity, Status, Turn};
 use crate::{PersonId, Refusal};
 
 /// Signs as performed and recorded, or as reviewed and accepted; `digest` is what the signer was shown.
@@ -23,6 +24,9 @@ pub(super) fn sign(
         Meaning::Performed => {
             super::in_progress(record)?;
             complete(&view)?;
+            answered(&view)?;
+            super::outside::all_in_findings(&view, record)?;
+            answers_the_return(&view, record)?;
         }
         Meaning::Accepted => {
             to_be_accepted(record)?;
@@ -95,6 +99,27 @@ fn complete(view: &View<'_>) -> Result<(), Refusal> {
     let left: Vec<String> =
         (agenda.phases.iter().filter(|p| p.left() > 0)).map(|p| format!("{} in “{}”", p.left(), p.title)).collect();
     Err(Refusal::not_now(format!("Steps are still to be settled: {}.", left.join(", "))))
+}
+
+/// No step waits for an option that nobody has stated.
+fn answered(view: &View<'_>) -> Result<(), Refusal> {
+    agenda::unanswered(view).words().map_or(Ok(()), |open| Err(Refusal::not_now(open)))
+}
+
+/// What was returned comes back changed, or with a remark. Turns are part of what is signed, so that the digest always
+/// differs after a return: that nothing happened since, at the drive or on the sheets of its site, is told by the chain.
+fn answers_the_return(view: &View<'_>, record: &Record) -> Result<(), Refusal> {
+    let Some(Recorded { value: Turn::Returned(why), sequence, received, .. }) = record.history.last() else {
+        return Ok(());
+    };
+    let site = view.site.fields.values().flat_map(Slot::standing).any(|r| r.received > *received);
+    if view.drive.head.sequence > *sequence || site {
+        return Ok(());
+    }
+    let stop = if why.trim_end().ends_with(['.', '?']) { "" } else { "." };
+    Err(Refusal::not_now(format!(
+        "Nothing was changed since this record was returned for: {why}{stop} Put it right, or answer with a remark, then sign."
+    )))
 }
 
 fn to_be_accepted(record: &Record) -> Result<(), Refusal> {

@@ -7,6 +7,7 @@ mod holds;
 mod isolation;
 mod keys;
 mod moves;
+mod outside;
 mod parameters;
 mod people;
 mod roles;

@@ -4,8 +4,8 @@ use super::{Runs, View, once};
 use crate::plant::Sheet::{Cable, Drive, DrivePlate, Further, Motor, Site, Supply};
 use engineering::checks::{harmonic_distortion, pe_continuity, precharge, reflected_wave, voltage_drop};
 use engineering::formulas::conductor::Build;
-use engineering::formulas::distortion_limit::Edition;
-use engineering::{Length, Resistance};
+use engineering::formulas::distortion_limit::{Edition, of_order, short_circuit_ratio};
+use engineering::{Current, Length, Ratio, Resistance};
 
 pub(super) fn pe_continuity(view: &View<'_>) -> Runs {
     let times = f64::from(view.count(Cable, "pe-parallel").unwrap_or(1).max(1));
@@ -109,6 +109,26 @@ pub(super) fn precharge(view: &View<'_>) -> Runs {
         resistance: view.plate(DrivePlate, "precharge-resistor"),
         bus_voltage: super::motion::bus_volts(view),
     }))
+}
+
+/// Limit of each single order, turned from the demand current to the fundamental that was read; none where none holds.
+#[must_use]
+pub fn harmonic_limits(view: &View<'_>) -> Vec<(u32, Ratio)> {
+    let judged = view.choice(Site, "harmonic-rule") != Some("none");
+    let there = view.chosen("distortion-place") == Some("common-coupling");
+    let demand: Option<Current> = view.plate(Supply, "demand-current").filter(|i: &Current| i.amperes() > 0.0);
+    let fault: Option<Current> = view.plate(Supply, "coupling-fault-current");
+    let read: Option<Current> = view.entered("input-fundamental", 0).filter(|i: &Current| i.amperes() > 0.0);
+    let (true, true, Some(demand), Some(fault), Some(read)) = (judged, there, demand, fault, read) else {
+        return Vec::new();
+    };
+    let ratio = short_circuit_ratio(fault, demand);
+    // All of these are odd, on which the editions agree.
+    [5, 7, 11, 13]
+        .into_iter()
+        .filter_map(|order| Some((order, of_order(ratio, order, Edition::Of2014)?)))
+        .map(|(order, limit)| (order, Ratio::from_fraction(limit.fraction() * demand.amperes() / read.amperes())))
+        .collect()
 }
 
 pub(super) fn harmonic_distortion(view: &View<'_>) -> Runs {

@@ -9,7 +9,9 @@ use engineering::checks::{
     acceleration_time, braking, bus_peak, deceleration_time, measured_acceleration, measured_deceleration, rotation,
     stop_time,
 };
-use engineering::{Current, Duration, Frequency, Speed, Torque, Voltage};
+use engineering::motion::set_ramp::STRAIGHT;
+use engineering::motion::{SetRamp, Trace};
+use engineering::{Current, Duration, Frequency, Ratio, Speed, Torque, Voltage};
 
 /// The speed a ramp ends at (the set maximum, or the plate's), and the time for that change out of the set one.
 fn ramp(view: &View<'_>, function: &str, set: Settings) -> (Option<Speed>, Option<Duration>) {
@@ -154,6 +156,43 @@ fn stop_as_run(view: &View<'_>) -> deceleration_time::Inputs {
     inputs
 }
 
+/// A ramp as it was run, for charts; over the whole speed while the frequency it was run to is not entered.
+#[derive(Clone, Debug, PartialEq)]
+pub struct AsRun {
+    /// What was set for it.
+    pub set: Option<SetRamp>,
+    /// The motor speed at its upper end.
+    pub speed: Option<Speed>,
+    /// How it should go.
+    pub predicted: Option<Trace>,
+}
+
+fn set_ramp(time: Option<Duration>, s_curve: Option<Ratio>) -> Option<SetRamp> {
+    Some(SetRamp { time: time?, s_curve: s_curve.unwrap_or(STRAIGHT) })
+}
+
+/// The start as it was run.
+#[must_use]
+pub fn start(view: &View<'_>) -> AsRun {
+    let inputs = start_as_run(view);
+    AsRun {
+        set: set_ramp(inputs.set_time, inputs.s_curve),
+        speed: inputs.to_speed,
+        predicted: acceleration_time::trace(&inputs),
+    }
+}
+
+/// The ramp down as it was run.
+#[must_use]
+pub fn ramp_down(view: &View<'_>) -> AsRun {
+    let inputs = stop_as_run(view);
+    AsRun {
+        set: set_ramp(inputs.set_time, inputs.s_curve),
+        speed: inputs.from_speed,
+        predicted: deceleration_time::trace(&inputs),
+    }
+}
+
 pub(super) fn measured_acceleration(view: &View<'_>) -> Runs {
     let inputs = start_as_run(view);
     once(measured_acceleration::check(&measured_acceleration::Inputs {
@@ -183,7 +222,14 @@ pub(super) fn stop_time(view: &View<'_>, step: &str) -> Runs {
     let item = if step == "stop-time-under-load" { "stop-seconds-load" } else { "stop-seconds" };
     let specified: Option<Duration> =
         view.plate(Further, "emergency-stop-time").or_else(|| view.plate(Load, "stop-time"));
-    once(stop_time::check(&stop_time::Inputs { measured: view.reading(item), specified }))
+    let began = if step == "stop-time-under-load" {
+        stop_time::Began::TopSpeed
+    } else {
+        let set = Settings::InForce;
+        let top = set.quantity(view, "maximum-frequency").or_else(|| base_frequency(view, set));
+        stop_time::Began::At { from: view.entered("stop-from-hertz", 0), top }
+    };
+    once(stop_time::check(&stop_time::Inputs { measured: view.reading(item), specified, began }))
 }
 
 pub(super) fn rotation(view: &View<'_>) -> Runs {

@@ -156,8 +156,11 @@ pub(super) fn skip_bands(view: &View<'_>) -> Runs {
     let points: Vec<Frequency> =
         ["fixed-speed-1", "fixed-speed-2"].into_iter().filter_map(|f| view.in_force(f)).collect();
     both_columns(view, &["skip-1-low", "skip-2-low", "skip-3-low"], |c| {
+        // An empty list says that nothing is skipped, once it is known over which speeds the load works.
+        let speeds = ["minimum-frequency", "maximum-frequency"].into_iter().any(|f| view.parameter(f, c).is_some());
+        let bands = bands(view, c);
         skip_bands::check(&skip_bands::Inputs {
-            bands: Some(bands(view, c)),
+            bands: (speeds || !points.is_empty() || !bands.is_empty()).then_some(bands),
             working_points: points.clone(),
             minimum_frequency: view.setting("minimum-frequency", c),
             maximum_frequency: view.setting("maximum-frequency", c),

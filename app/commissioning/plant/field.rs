@@ -57,6 +57,12 @@ impl Field {
             FieldKind::Quantity { kind, low, high, unit: usual } => {
                 let typed = Typed::quantity(text, if unit.is_empty() { usual } else { unit }, kind)?;
                 let number = typed.number().unwrap_or(f64::NAN);
+                if self.key == "poles" && (low..=high).contains(&number) && number % 2.0 != 0.0 {
+                    return Err(format!(
+                        "{} cannot be: poles come in pairs, so that their number is even. Read the plate again.",
+                        crate::typed::shorten(text)
+                    ));
+                }
                 if (low..=high).contains(&number) {
                     return Ok(Some(typed));
                 }

@@ -110,6 +110,11 @@ mod tests {
         assert!(motor("volts", "6600", "V").is_ok(), "above 1000 V the scope sentence answers, not the field");
         assert!(motor("power", "-3", "kW").is_err());
         assert!(motor("inertia", "0", "kg·m²").is_err());
+        for odd in ["3", "5", "4.5"] {
+            assert!(motor("poles", odd, "").is_err(), "{odd}");
+        }
+        assert!(motor("poles", "3", "").unwrap_err().contains("poles come in pairs"));
+        assert!(motor("poles", "4", "").is_ok() && motor("poles", "2", "").is_ok());
         assert!(motor("machine", "permanent-magnet", "").is_ok());
         assert_eq!(
             motor("power", "25", "hp").expect("a power").expect("typed").number().map(|w| w.round()),

@@ -15,10 +15,11 @@ pub fn load_run(measured: &[(f64, f64)], low: &[(f64, f64)], high: &[(f64, f64)]
     }
 }
 
-/// From (order, percent of the fundamental) as measured and as expected.
+/// From (order, percent of the fundamental): as measured, as expected, and the limit of each by IEEE 519.
 #[must_use]
-pub fn harmonics(measured: &[(f64, f64)], expected: &[(f64, f64)]) -> Chart {
+pub fn harmonics(measured: &[(f64, f64)], expected: &[(f64, f64)], limits: &[(f64, f64)]) -> Chart {
     Chart::new("Line current harmonics", ("order", ""), ("of the fundamental", "%"))
         .with("measured", Look::Bars, measured.to_vec())
         .with("expected", Look::Bars, expected.to_vec())
+        .with("limit, IEEE 519", Look::Limits, limits.to_vec())
 }

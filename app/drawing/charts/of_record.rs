@@ -4,8 +4,9 @@ use super::{
     Ramp, TorqueSpeed, harmonics, insulation_over_time, load_run, ramp, torque_against_speed, volts_per_hertz,
 };
 use crate::chart::Chart;
-use commissioning::judge::{View, motion};
+use commissioning::judge::{self, Judged, View, motion};
 use commissioning::plant::{Place, Sheet};
+use commissioning::procedure::Step;
 use commissioning::record::{EntryPlace, ParameterColumn, ParameterPlace};
 
 /// A chart and its step.
@@ -38,13 +39,29 @@ const ORDERS: [(&str, f64); 4] = [("input-h5", 5.0), ("input-h7", 7.0), ("input-
 /// Every chart for which the record has the numbers, in the order of the work.
 #[must_use]
 pub fn of(view: &View<'_>) -> Vec<StepChart> {
-    let at = |step: &str, chart: Chart| StepChart { step: step.to_owned(), chart };
-    let mut charts: Vec<StepChart> = Vec::new();
-    charts.extend(insulation(view));
-    charts.extend(voltage(view).map(|c| at("uncoupled-run", c)));
-    charts.extend(start(view).into_iter().map(|c| at("start-under-load", c)));
-    charts.extend(currents(view).map(|c| at("load-run", c)));
-    charts.extend(distortion(view).map(|c| at("input-side", c)));
+    view.procedure.steps().flat_map(|(_, step)| at(view, step)).collect()
+}
+
+/// The charts of one step; the others are not worked out.
+#[must_use]
+pub fn at(view: &View<'_>, step: &Step) -> Vec<StepChart> {
+    let has = |wanted: &dyn Fn(&str) -> bool| step.items.iter().any(|i| wanted(&i.key));
+    let charts: Vec<Chart> = match step.id.as_str() {
+        "uncoupled-run" => voltage(view).into_iter().collect(),
+        "start-under-load" => start(view),
+        "load-run" => currents(view).into_iter().collect(),
+        "input-side" => distortion(view).into_iter().collect(),
+        _ => Vec::new(),
+    };
+    let mut charts: Vec<StepChart> =
+        charts.into_iter().map(|chart| StepChart { step: step.id.clone(), chart }).collect();
+    if has(&|key| TIMED.iter().any(|(timed, _)| *timed == key)) {
+        charts.extend(insulation(view));
+    }
+    if has(&|key| key == "ramp-down-time") {
+        charts.extend(ramp_down(view));
+    }
+    charts.retain(|c| c.step == step.id);
     charts
 }
 
@@ -75,7 +92,9 @@ fn insulation(view: &View<'_>) -> Option<StepChart> {
     let (last, ..) = read.last()?;
     let step = view.procedure.item(last)?.0.id.clone();
     let points: Vec<(f64, f64)> = read.iter().map(|(_, seconds, megohms)| (*seconds, *megohms)).collect();
-    (points.len() > 1).then(|| StepChart { step, chart: insulation_over_time(&points, None) })
+    let limit = least_insulation(view);
+    let limit = limit.as_ref().map(|(at, label)| (*at, label.as_str()));
+    (points.len() > 1).then(|| StepChart { step, chart: insulation_over_time(&points, limit) })
 }
 
 fn voltage(view: &View<'_>) -> Option<Chart> {
@@ -99,23 +118,53 @@ fn voltage(view: &View<'_>) -> Option<Chart> {
     (!measured.is_empty()).then(|| volts_per_hertz(&line(hertz, volts), &set, &measured, &marks))
 }
 
-/// The start as predicted, with what was set and measured laid over it; and its torque and current over speed.
+/// A ramp of the record: where it is drawn from, and what was read of it.
+struct Read {
+    title: &'static str,
+    up: bool,
+    time: Option<f64>,
+}
+
+/// The ramp as set, S-curve and all, as predicted and as measured; none while there is nothing but the setting.
+fn ramp_of(run: &motion::AsRun, read: &Read) -> Option<Chart> {
+    let top = run.speed.map(engineering::Speed::rpm);
+    // The part of the speed that there is after a part of the time.
+    let height = |done: f64| if read.up { done } else { 1.0 - done };
+    let set = run.set.zip(top).map_or_else(Vec::new, |(set, top)| {
+        let steps = if set.s_curve.fraction() > 0.0 { 40 } else { 1 };
+        (0..=steps)
+            .map(|n| f64::from(n) / f64::from(steps))
+            .map(|part| (part * set.time.seconds(), height(set.part_done(part)) * top))
+            .collect()
+    });
+    let predicted: Vec<(f64, f64)> = run
+        .predicted
+        .iter()
+        .flat_map(|trace| trace.samples.iter().map(|s| (s.time.seconds(), s.speed.rpm())))
+        .collect();
+    let measured = read
+        .time
+        .zip(top)
+        .map_or_else(Vec::new, |(time, top)| vec![(0.0, height(0.0) * top), (time, height(1.0) * top)]);
+    if predicted.is_empty() && measured.is_empty() {
+        return None;
+    }
+    let (label, unit, title) = ("speed".to_owned(), "rpm".to_owned(), read.title.to_owned());
+    Some(ramp(&Ramp { title, label, unit, set, predicted, measured, level: None }))
+}
+
+fn ramp_down(view: &View<'_>) -> Option<StepChart> {
+    let step = view.procedure.item("ramp-down-time")?.0.id.clone();
+    let time = entry(view, "ramp-down-time", 0);
+    let read = Read { title: "Ramp down: speed over time", up: false, time };
+    Some(StepChart { step, chart: ramp_of(&motion::ramp_down(view), &read)? })
+}
+
+/// The start, and its torque and current over speed.
 fn start(view: &View<'_>) -> Vec<Chart> {
-    let Some(trace) = motion::predicted_start(view) else { return Vec::new() };
-    let predicted: Vec<(f64, f64)> = trace.samples.iter().map(|s| (s.time.seconds(), s.speed.rpm())).collect();
-    let top = predicted.iter().map(|p| p.1).fold(0.0, f64::max);
-    let set = setting(view, "acceleration-time").map_or_else(Vec::new, |t| vec![(0.0, 0.0), (t, top)]);
-    let measured = match (
-        entry(view, "start-time", 0),
-        entry(view, "start-to-hertz", 0),
-        motor(view, "hertz"),
-        motor(view, "rpm"),
-    ) {
-        (Some(time), Some(to), Some(hertz), Some(rpm)) if hertz > 0.0 => vec![(0.0, 0.0), (time, rpm * to / hertz)],
-        _ => Vec::new(),
-    };
-    let (label, unit, title) = ("speed".to_owned(), "rpm".to_owned(), "Start: speed over time".to_owned());
-    let mut charts = vec![ramp(&Ramp { title, label, unit, set, predicted, measured, level: None })];
+    let read = Read { title: "Start: speed over time", up: true, time: entry(view, "start-time", 0) };
+    let mut charts: Vec<Chart> = ramp_of(&motion::start(view), &read).into_iter().collect();
+    let Some(trace) = motion::predicted_start(view) else { return charts };
     if let (Some(power), Some(rpm), Some(amps)) = (motor(view, "power"), motor(view, "rpm"), motor(view, "amps")) {
         // T = P / ω; percent of it.
         let rated = power / (rpm * std::f64::consts::PI / 30.0) / 100.0;
@@ -132,13 +181,82 @@ fn start(view: &View<'_>) -> Vec<Chart> {
     charts
 }
 
+/// A figure of a check by its name.
+fn figure(judged: &Judged, name: &str) -> Option<f64> {
+    judged.outcome.figures.iter().find(|f| f.name == name)?.value.parse().ok()
+}
+
 fn currents(view: &View<'_>) -> Option<Chart> {
     let measured = rows(view, "load-hz", "load-i-u");
-    (measured.len() > 1).then(|| load_run(&measured, &[], &[], motor(view, "amps")))
+    // The check runs for every row with a current, in the order of the rows.
+    let hertz = (0..20).filter(|row| entry(view, "load-i-u", *row).is_some()).map(|row| entry(view, "load-hz", row));
+    let judged: Vec<(Option<f64>, Judged)> = hertz.zip(judge::one(view, "load-current")).collect();
+    let predicted = |name: &str| -> Vec<(f64, f64)> {
+        judged.iter().filter_map(|(hertz, judged)| Some(((*hertz)?, figure(judged, name)?))).collect()
+    };
+    (measured.len() > 1).then(|| {
+        let (low, high) = (predicted("predicted current, least"), predicted("predicted current, most"));
+        load_run(&measured, &low, &high, motor(view, "amps"))
+    })
 }
 
 fn distortion(view: &View<'_>) -> Option<Chart> {
     let bars: Vec<(f64, f64)> =
         ORDERS.iter().filter_map(|(item, n)| Some((*n, entry(view, item, 0)? * 100.0))).collect();
-    (!bars.is_empty()).then(|| harmonics(&bars, &[]))
+    let limits: Vec<(f64, f64)> = judge::harmonic_limits(view)
+        .into_iter()
+        .map(|(order, limit)| (f64::from(order), limit.fraction() * 100.0))
+        .filter(|(order, _)| bars.iter().any(|(n, _)| n == order))
+        .collect();
+    (!bars.is_empty()).then(|| harmonics(&bars, &[], &limits))
+}
+
+/// The least insulation resistance, turned from 40 °C, where it is judged, to the winding's temperature, where it is read.
+fn least_insulation(view: &View<'_>) -> Option<(f64, String)> {
+    let judged = judge::one(view, "insulation-resistance");
+    let judged = judged.first()?;
+    let limit = judged.outcome.rule.as_ref()?.ticks.first()?;
+    let factor = figure(judged, "correction factor").filter(|k| *k > 0.0)?;
+    Some((limit.at / factor, format!("{} at 40 °C", limit.label)))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use engineering::motion::SetRamp;
+    use engineering::{Duration, Ratio, Speed};
+
+    fn of_ten_seconds(s_curve: f64) -> motion::AsRun {
+        let set = SetRamp { time: Duration::from_seconds(10.0), s_curve: Ratio::from_fraction(s_curve) };
+        motion::AsRun { set: Some(set), speed: Some(Speed::from_rpm(1600.0)), predicted: None }
+    }
+
+    fn series(chart: &Chart, name: &str) -> Vec<(f64, f64)> {
+        chart.series.iter().find(|s| s.name == name).unwrap().points.clone()
+    }
+
+    /// By hand, s = 0.4: after 0.1 of the time 1/32 of the speed, after 0.2 an eighth, at half time half.
+    #[test]
+    fn the_set_line_follows_the_s_curve_both_ways() {
+        for up in [true, false] {
+            let read = Read { title: "Ramp", up, time: Some(11.0) };
+            let chart = ramp_of(&of_ten_seconds(0.4), &read).unwrap();
+            let set = series(&chart, "as set");
+            for (time, part) in [(0.0, 0.0), (1.0, 1.0 / 32.0), (2.0, 0.125), (5.0, 0.5), (8.0, 0.875), (10.0, 1.0)] {
+                let rpm = 1600.0 * if up { part } else { 1.0 - part };
+                assert!(set.iter().any(|(t, n)| (t - time).abs() < 1e-9 && (n - rpm).abs() < 1e-6), "{time}: {set:?}");
+            }
+            assert!(set.windows(2).all(|p| p[0].0 < p[1].0 && (p[0].1 < p[1].1) == up), "even in time and speed");
+            let ends = if up { [(0.0, 0.0), (11.0, 1600.0)] } else { [(0.0, 1600.0), (11.0, 0.0)] };
+            assert_eq!(series(&chart, "measured"), ends);
+        }
+    }
+
+    #[test]
+    fn a_straight_ramp_is_two_points_and_a_setting_alone_is_no_chart() {
+        let read = |time| Read { title: "Ramp", up: true, time };
+        let chart = ramp_of(&of_ten_seconds(0.0), &read(Some(11.0))).unwrap();
+        assert_eq!(series(&chart, "as set"), [(0.0, 0.0), (10.0, 1600.0)]);
+        assert_eq!(ramp_of(&of_ten_seconds(0.4), &read(None)), None);
+    }
 }

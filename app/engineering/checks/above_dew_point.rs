@@ -93,7 +93,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("The winding is {shown} K above the dew point of {at} °C, less than 3 K: it may be wet. Warm it and repeat the insulation test."),
-            Verdict::Marginal => format!("The winding is {shown} K above the dew point of {at} °C: closer to 3 K than the instruments can tell, or their word does not count."),
+            Verdict::Marginal => format!("The winding is {shown} K above the dew point of {at} °C: closer to 3 K than the instruments can tell, or their accuracy is in doubt."),
             _ => format!("The winding is {shown} K above the dew point of {at} °C."),
         },
     )

@@ -101,7 +101,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         match verdict {
             Verdict::Outside if against_drive == Some(Verdict::Outside) => format!("{shown} Ω is below the drive's minimum: the chopper would fail. Do not connect it."),
             Verdict::Outside => format!("{shown} Ω does not fit the plate. Look for a broken or shorted element or a wrong connection of several."),
-            Verdict::Marginal => format!("{shown} Ω: the meter cannot tell it from a limit, or its word does not count."),
+            Verdict::Marginal => format!("{shown} Ω: the meter cannot tell it from a limit, or its accuracy is in doubt."),
             _ => format!("{shown} Ω fits the plate and the drive."),
         },
     )

@@ -98,6 +98,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         }
     }
     let mut above = Vec::new();
+    let mut too_near = false;
     let mut highest = 0.0_f64;
     for (name, reading) in &taken {
         // The sign says which lead was where; only the size matters.
@@ -106,6 +107,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         let shown = significant(volts, 3);
         highest = highest.max(volts);
         let outside = volts + measured.expanded > limit;
+        too_near |= outside && volts - measured.expanded <= limit;
         if outside {
             above.push(format!("{shown} V {name}"));
         }
@@ -130,9 +132,10 @@ pub fn check(inputs: &Inputs) -> Outcome {
             significant(highest, 3)
         ));
     }
+    let doubtful = if too_near { ", or too near to tell" } else { "" };
     b.judged(
         Verdict::Outside,
-        format!("{}: above {limit_shown} V, or too near to tell. The DC bus is live. Keep out, wait on, measure again; if it stays, a discharge path may be open: follow the drive's manual.", above.join(", ")),
+        format!("{}: above {} V{doubtful}. The DC bus is live. Keep out, wait on, measure again; if it stays, a discharge path may be open: follow the drive's manual.", above.join(", "), limit_shown.trim_end_matches(".0")),
     )
 }
 
@@ -168,6 +171,13 @@ mod tests {
         let bare = Inputs { between_poles: Some(Reading::bare(Voltage::from_volts(3.0))), ..Inputs::default() };
         assert_eq!(check(&bare).verdict, Verdict::Figure);
         assert!(check(&bare).rule.expect("ruler").bands.is_empty());
+    }
+
+    #[test]
+    fn a_reading_clearly_above_is_called_so_and_a_near_one_is_not() {
+        let said = |volts| check(&left(volts)).summary;
+        assert!(said(560.0).starts_with("560 V between the poles: above 50 V. The DC bus is live."), "{}", said(560.0));
+        assert!(said(49.8).contains("above 50 V, or too near to tell."), "{}", said(49.8));
     }
 
     /// IEC 60204-1:2016 clause 6.2.4 (row DC-07): 60 V; NFPA 70 460.6 (row DC-11): 50 V.

@@ -89,7 +89,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         match verdict {
             Verdict::Outside if bus.number() < low => format!("DC bus {shown} V, below {low_shown} V. Isolate; look for a lost or loaded phase, a blown fuse, or a pre-charge that has not closed."),
             Verdict::Outside => format!("DC bus {shown} V, above {high_shown} V. Compare line volts and display with a second instrument; regeneration or a swell raises the bus."),
-            Verdict::Marginal => format!("DC bus {shown} V: the instruments cannot tell it from {low_shown} to {high_shown} V, or their word does not count."),
+            Verdict::Marginal => format!("DC bus {shown} V: the instruments cannot tell it from {low_shown} to {high_shown} V, or their accuracy is in doubt."),
             _ => format!("DC bus {shown} V lies between {low_shown} and {high_shown} V."),
         },
     )

@@ -117,7 +117,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("{which} is {deviation} % off the mean. Stop; look for a loose joint, a damaged winding or an output fault: exchange two motor leads and see whether the odd phase moves with the motor."),
-            Verdict::Marginal => format!("{which} is {deviation} % off the mean: more than usual, closer than the meter can tell, or its word does not count. Repeat near rated current."),
+            Verdict::Marginal => format!("{which} is {deviation} % off the mean: more than usual, closer than the meter can tell, or its accuracy is in doubt. Repeat near rated current."),
             _ => format!("The three currents are within {deviation} % of their mean."),
         },
     )

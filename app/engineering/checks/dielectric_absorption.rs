@@ -89,7 +89,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Dielectric absorption ratio {shown}: the resistance falls while the voltage stands. Look for moisture or dirt before energising."),
-            Verdict::Marginal => format!("Dielectric absorption ratio {shown}: doubtful, or the tester's word does not count. Judge it together with the insulation resistance; a small random-wound motor may come near 1."),
+            Verdict::Marginal => format!("Dielectric absorption ratio {shown}: doubtful, or the tester's accuracy is in doubt. Judge it together with the insulation resistance; a small random-wound motor may come near 1."),
             _ => format!("Dielectric absorption ratio {shown}, at least 1.4."),
         },
     )

@@ -128,7 +128,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Loop impedance {shown} Ω, above {limit_shown} Ω: the device need not trip in time. Do not energise; check the protective conductor's joints, the section and the device."),
-            Verdict::Marginal => format!("Loop impedance {shown} Ω: the instrument cannot tell it from the {limit_shown} Ω limit, or its word does not count."),
+            Verdict::Marginal => format!("Loop impedance {shown} Ω: the instrument cannot tell it from the {limit_shown} Ω limit, or its accuracy is in doubt."),
             _ => format!("Loop impedance {shown} Ω, at most {limit_shown} Ω."),
         },
     )

@@ -106,7 +106,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("The encoder's speed is {off} % off: {cause}. Correct it before closing the speed loop."),
-            Verdict::Marginal => format!("The encoder's speed is {off} % off: the tachometer cannot tell it from {allowed_shown} %, or its word does not count."),
+            Verdict::Marginal => format!("The encoder's speed is {off} % off: the tachometer cannot tell it from {allowed_shown} %, or its accuracy is in doubt."),
             _ => format!("The encoder's speed is {off} % off the measured one."),
         },
     )

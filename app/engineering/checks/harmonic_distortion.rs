@@ -158,7 +158,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Beyond or too near the limits: {}. Consider a line reactor, a filter, or another supply arrangement with whoever runs the network.", beyond.join("; ")),
-            Verdict::Marginal => format!("The instrument cannot settle it, or its word does not count: {}.", beyond.join("; ")),
+            Verdict::Marginal => format!("The instrument cannot settle it, or its accuracy is in doubt: {}.", beyond.join("; ")),
             _ => format!("Total demand distortion {shown} %, at most {} %.", significant(limit, 3)),
         },
     )
@@ -212,7 +212,7 @@ fn at_the_drive(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Input current distortion {shown} %, above the {limit} % of the specification. Consider a line reactor or a filter, and measure at full load."),
-            Verdict::Marginal => format!("Input current distortion {shown} %: the instrument cannot tell it from {limit} %, or its word does not count."),
+            Verdict::Marginal => format!("Input current distortion {shown} %: the instrument cannot tell it from {limit} %, or its accuracy is in doubt."),
             _ => format!("Input current distortion {shown} %, at most the {limit} % of the specification."),
         },
     )

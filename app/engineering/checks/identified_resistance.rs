@@ -143,7 +143,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         match verdict {
             Verdict::Within => format!("Identified and measured resistance are {off} % apart."),
             _ if apart.abs() > APART.value => format!("Identified and measured resistance are {off} % apart. Check connection, cable length, the ohms shown as phase or line, and identify again on a cold motor."),
-            _ => format!("Identified and measured resistance are {off} % apart; the instrument cannot tell it from 20 %, or its word does not count."),
+            _ => format!("Identified and measured resistance are {off} % apart; the instrument cannot tell it from 20 %, or its accuracy is in doubt."),
         },
     )
 }

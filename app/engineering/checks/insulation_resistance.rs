@@ -176,7 +176,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         match verdict {
             Verdict::Outside => format!("At 40 °C: {shown} MΩ, below {limit} MΩ. Look for moisture, dirt or a damaged cable; test the cable alone; do not energise until the cause is known."),
             Verdict::Marginal if !circumstances.is_empty() => format!("At 40 °C: {shown} MΩ against {limit} MΩ, but marginal at best: {}. Put that right and repeat the test.", circumstances.join("; ")),
-            Verdict::Marginal => format!("At 40 °C: {shown} MΩ. The instrument cannot tell it from the {limit} MΩ limit, or its word does not count."),
+            Verdict::Marginal => format!("At 40 °C: {shown} MΩ. The instrument cannot tell it from the {limit} MΩ limit, or its accuracy is in doubt."),
             _ => format!("At 40 °C: {shown} MΩ, at least {limit} MΩ."),
         },
     )

@@ -115,7 +115,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Joint {label}: {shown} {unit}. Isolate, open, clean and remake it to the maker's torque, then measure again."),
-            Verdict::Marginal => format!("Joint {label}: {shown} {unit}; the instrument cannot tell it from the limit, or its word does not count."),
+            Verdict::Marginal => format!("Joint {label}: {shown} {unit}; the instrument cannot tell it from the limit, or its accuracy is in doubt."),
             _ => format!("Highest joint {label}: {shown} {unit}."),
         },
     )

@@ -93,7 +93,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             Verdict::Within => format!("No-load current {shown} A, inside {span}."),
             _ if measured.value > high => format!("No-load current {shown} A, above {span}. Check base voltage and frequency, connection and boost; a rubbing rotor also shows like this."),
             _ if measured.value < low => format!("No-load current {shown} A, below {span}. Check base voltage and frequency, connection and the meter; on a flux-saving function the flux is lowered on purpose."),
-            _ => format!("No-load current {shown} A: the meter cannot tell it from an end of {span}, or its word does not count."),
+            _ => format!("No-load current {shown} A: the meter cannot tell it from an end of {span}, or its accuracy is in doubt."),
         },
     )
 }

@@ -165,7 +165,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Polarization index {shown}, below {limit}: moisture or dirt. Dry and clean the winding and repeat; do not energise until the cause is known."),
-            Verdict::Marginal => format!("Polarization index {shown}: the tester cannot tell it from the {limit} limit, or its word does not count."),
+            Verdict::Marginal => format!("Polarization index {shown}: the tester cannot tell it from the {limit} limit, or its accuracy is in doubt."),
             _ => format!("Polarization index {shown}, at least {limit}."),
         },
     )

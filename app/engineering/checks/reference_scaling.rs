@@ -129,7 +129,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Largest error {error} % of span at {at} mA, beyond {words} %. Correct zero and span of the reference input and repeat."),
-            Verdict::Marginal => format!("Largest error {error} % of span at {at} mA: the loop source cannot tell it from {words} %, or its word does not count."),
+            Verdict::Marginal => format!("Largest error {error} % of span at {at} mA: the loop source cannot tell it from {words} %, or its accuracy is in doubt."),
             _ => format!("Largest error {error} % of span at {at} mA, at most {words} %."),
         },
     )

@@ -158,7 +158,7 @@ fn thermistor(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
             format!("{shown} Ω: a short circuit. The winding is not protected; find it before starting.")
         }
         Verdict::Marginal => format!(
-            "{shown} Ω: close to an end of {l} to {h} Ω, below it, or the meter's word does not count. Check the count of sensors and the leads."
+            "{shown} Ω: close to an end of {l} to {h} Ω, below it, or the meter's accuracy is in doubt. Check the count of sensors and the leads."
         ),
         _ => format!("{shown} Ω cold, between {l} and {h} Ω."),
     };
@@ -222,7 +222,7 @@ fn platinum_sensor(mut b: OutcomeBuilder, inputs: &Inputs, ohms_at_zero: f64) ->
     let summary = match verdict {
         Verdict::Within => format!("The sensor says {} °C, {off} K off the thermometer.", decimals(found, 1)),
         _ => format!(
-            "The sensor says {} °C, {off} K off the thermometer: more than 5 K, close to it or to the maker's ends, or an instrument's word does not count. Check leads and wiring, and let the motor rest.",
+            "The sensor says {} °C, {off} K off the thermometer: more than 5 K, close to it or to the maker's ends, or an instrument's accuracy is in doubt. Check leads and wiring, and let the motor rest.",
             decimals(found, 1)
         ),
     };
@@ -274,7 +274,7 @@ fn switch(mut b: OutcomeBuilder, inputs: &Inputs) -> Outcome {
                 "{shown} Ω cold: the switch is open. The motor is hot, a lead is off, or it is another kind of sensor."
             ),
             Verdict::Marginal => {
-                format!("{shown} Ω cold: a poor contact, long leads, or the meter's word does not count.")
+                format!("{shown} Ω cold: a poor contact, long leads, or the meter's accuracy is in doubt.")
             }
             _ => format!("{shown} Ω cold: the switch is closed."),
         },

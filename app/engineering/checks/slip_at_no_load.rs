@@ -108,7 +108,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             Verdict::Within => format!("Without load the motor is {dn} rpm behind synchronous speed, {shown} % of its rated slip."),
             _ if slip < 0.0 => format!("The motor turns {} rpm faster than synchronous: slip compensation, a wrong rated speed, or something drives it.", decimals(-slip, 1)),
             _ if share > SHARE.value => format!("Without load the motor is {dn} rpm behind, {shown} % of its rated slip: friction, too few volts per hertz, or a rated speed keyed wrong."),
-            _ => format!("Without load the motor is {dn} rpm behind, {shown} % of its rated slip: the instruments cannot tell it from 30 %, or their word does not count."),
+            _ => format!("Without load the motor is {dn} rpm behind, {shown} % of its rated slip: the instruments cannot tell it from 30 %, or their accuracy is in doubt."),
         },
     )
 }

@@ -135,7 +135,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             "{words} {shown} %, above {allowed_shown} %. Look for single-phase load or a bad joint ahead of the drive; the drive's input currents will be far more unequal."
         ),
         Verdict::Marginal => format!(
-            "{words} {shown} %: the instrument cannot tell it from the {allowed_shown} % limit, or its word does not count."
+            "{words} {shown} %: the instrument cannot tell it from the {allowed_shown} % limit, or its accuracy is in doubt."
         ),
         _ => format!("{words} {shown} %, at most {allowed_shown} %."),
     };

@@ -109,7 +109,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("{worst}, outside {low_shown} to {high_shown} V. Ask the supply's operator or change the transformer tap before energising the drive."),
-            Verdict::Marginal => format!("{worst}: the instrument cannot tell it from the limit, or its word does not count ({low_shown} to {high_shown} V)."),
+            Verdict::Marginal => format!("{worst}: the instrument cannot tell it from the limit, or its accuracy is in doubt ({low_shown} to {high_shown} V)."),
             _ => format!("All three lines lie between {low_shown} and {high_shown} V."),
         },
     )

@@ -133,7 +133,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("The winding rose by {shown} K, more than {limit} K. Reduce the load or the time, look at cooling and low speed, before running on."),
-            Verdict::Marginal => format!("The winding rose by {shown} K: the instruments cannot tell it from {limit} K, or their word does not count."),
+            Verdict::Marginal => format!("The winding rose by {shown} K: the instruments cannot tell it from {limit} K, or their accuracy is in doubt."),
             _ => format!("The winding rose by {shown} K, at most {limit} K."),
         },
     )

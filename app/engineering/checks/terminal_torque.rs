@@ -62,7 +62,11 @@ pub fn check(inputs: &Inputs) -> Outcome {
         });
     };
     let Some(stated) = plausible::positive(&mut b, Some(stated), "the maker's torque") else { return b.not_assessed() };
-    let (low, high, words) = match inputs.stated_highest.filter(|h| h.newton_metres() > stated.newton_metres()) {
+    if inputs.stated_highest.is_some_and(|h| h.newton_metres() <= stated.newton_metres()) {
+        b.need(None::<f64>, "the maker's highest torque, above the lowest");
+        return b.not_assessed();
+    }
+    let (low, high, words) = match inputs.stated_highest {
         Some(highest) => (stated.newton_metres(), highest.newton_metres(), "the maker's range"),
         None => {
             let figure = stated.newton_metres();
@@ -100,7 +104,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("{said}: outside {low_shown} to {high_shown} N·m. Isolate and tighten to the maker's torque; a terminal tightened too far may have to be renewed."),
-            Verdict::Marginal => format!("{said}: closer to the ends of {low_shown} to {high_shown} N·m than the wrench can tell, or its word does not count."),
+            Verdict::Marginal => format!("{said}: closer to the ends of {low_shown} to {high_shown} N·m than the wrench can tell, or its accuracy is in doubt."),
             _ => format!("{said}; {low_shown} to {high_shown} N·m is asked for."),
         },
     )

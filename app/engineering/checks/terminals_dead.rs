@@ -59,6 +59,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let supply = finite_reading(&mut b, inputs.supply.as_ref(), "volts at the supply terminals");
     let output = finite_reading(&mut b, inputs.output.as_ref(), "volts at the output terminals");
     let mut live = Vec::new();
+    let mut too_near = false;
     let mut highest = 0.0_f64;
     for (name, reading) in [("supply terminals", &supply), ("output terminals", &output)] {
         let Some(reading) = reading else { continue };
@@ -67,6 +68,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         let shown = significant(volts, 3);
         highest = highest.max(volts);
         let outside = volts + measured.expanded > limit;
+        too_near |= outside && volts - measured.expanded <= limit;
         if outside {
             live.push(format!("{shown} V at the {name}"));
         }
@@ -86,9 +88,10 @@ pub fn check(inputs: &Inputs) -> Outcome {
         }
     }
     if !live.is_empty() {
+        let doubtful = if too_near { ", or too near to tell" } else { "" };
         return b.judged(
             Verdict::Outside,
-            format!("{}: above {limit_shown} V, or too near to tell. These terminals are live. Keep out and find where the voltage comes from: another feed, a bypass, a turning motor, a point that was not opened.", live.join(", ")),
+            format!("{}: above {} V{doubtful}. These terminals are live. Keep out and find where the voltage comes from: another feed, a bypass, a turning motor, a point that was not opened.", live.join(", "), limit_shown.trim_end_matches(".0")),
         );
     }
     if supply.is_none() || output.is_none() {
@@ -133,7 +136,7 @@ mod tests {
             assert_eq!(check(&of(supply, output)).verdict, verdict, "{supply} {output}");
         }
         let said = check(&of(231.0, 0.3)).summary;
-        assert!(said.starts_with("231 V at the supply terminals: above 50.0 V"), "{said}");
+        assert!(said.starts_with("231 V at the supply terminals: above 50 V. These"), "{said}");
         assert!(check(&of(0.0, 0.0)).rule.expect("ruler").bands.is_empty());
     }
 

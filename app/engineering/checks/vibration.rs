@@ -180,7 +180,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("Vibration {shown} mm/s, beyond {} mm/s: stop. Check coupling, alignment, balance, foundation and whether the speed meets a resonance.", significant(bad, 2)),
-            Verdict::Marginal => format!("Vibration {shown} mm/s: above {} mm/s, closer to a boundary than the meter can tell, or its word does not count. Look for the cause before continuous running.", significant(good, 2)),
+            Verdict::Marginal => format!("Vibration {shown} mm/s: above {} mm/s, closer to a boundary than the meter can tell, or its accuracy is in doubt. Look for the cause before continuous running.", significant(good, 2)),
             _ => format!("Vibration {shown} mm/s, at most {} mm/s.", significant(good, 2)),
         },
     )

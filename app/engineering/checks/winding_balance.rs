@@ -95,7 +95,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("{which} is {deviation} % off the mean. Look for a loose or corroded joint, a wrong connection or shorted turns before running."),
-            Verdict::Marginal => format!("{which} is {deviation} % off the mean: more than usual, closer than the instrument can tell, or its word does not count. Clean the contacts and repeat with four leads."),
+            Verdict::Marginal => format!("{which} is {deviation} % off the mean: more than usual, closer than the instrument can tell, or its accuracy is in doubt. Clean the contacts and repeat with four leads."),
             _ => format!("The three winding resistances are within {deviation} % of their mean."),
         },
     )

@@ -129,7 +129,7 @@ proptest! {
     fn readings_stay_sound(time in any::<Duration>(0.1, 100.0), set in any::<Duration>(0.1, 100.0), volts in any::<Voltage>(300.0, 900.0), trip in any::<Voltage>(600.0, 900.0)) {
         let measured = measured_acceleration::Inputs { measured: time.map(Reading::bare), set_time: set, predicted_time: set };
         prop_assert!(sound(&measured_acceleration::check(&measured)));
-        let stop = stop_time::Inputs { measured: time.map(Reading::bare), specified: set };
+        let stop = stop_time::Inputs { measured: time.map(Reading::bare), specified: set, began: stop_time::Began::TopSpeed };
         prop_assert!(sound(&stop_time::check(&stop)));
         let peak = bus_peak::Inputs { peak: volts.map(Reading::bare), trip };
         prop_assert!(sound(&bus_peak::check(&peak)));

@@ -34,6 +34,12 @@ impl SetRamp {
     pub fn steepest(&self) -> Ratio {
         Ratio::from_fraction(1.0 / (1.0 - share(self.s_curve) / 2.0))
     }
+
+    /// Part of the change of speed that is done after a part of the time, both from 0 to 1.
+    #[must_use]
+    pub fn part_done(&self, part_of_time: f64) -> f64 {
+        done(self.s_curve, part_of_time.clamp(0.0, 1.0))
+    }
 }
 
 fn share(s_curve: Ratio) -> f64 {

@@ -72,18 +72,23 @@ pub fn next(folder: &Path) -> Result<SigningKey, KeyFault> {
     load_or_create(&folder.join(NEXT))
 }
 
-/// Puts the key that the journal names last in place, when the change was recorded and then cut short. Says whether
-/// there was something to put in place.
+/// Puts the key that the journal names last in place, when the change was recorded and then cut short, and removes one
+/// that the journal does not name. Says whether there was something to put in place.
 ///
 /// # Errors
 /// When the files cannot be read or renamed.
 pub fn settle(folder: &Path, newest: Option<&str>) -> Result<bool, KeyFault> {
     let next = folder.join(NEXT);
-    if !next.exists() || newest != Some(public(&load(&next)?).as_str()) {
+    let file = |e| KeyFault::File(next.display().to_string(), e);
+    if !next.exists() {
+        return Ok(false);
+    }
+    if newest != Some(public(&load(&next)?).as_str()) {
+        // Made for a change that was never recorded. It may have been copied with the folder meanwhile: it is used no more.
+        std::fs::remove_file(&next).map_err(file)?;
         return Ok(false);
     }
     // The former private key is gone with this: nothing can be signed with it any more.
-    let file = |e| KeyFault::File(next.display().to_string(), e);
     std::fs::rename(&next, folder.join(IN_USE)).map_err(file)?;
     File::open(folder).and_then(|f| f.sync_all()).map_err(file)?;
     Ok(true)
@@ -139,6 +144,8 @@ mod tests {
         let new = next(&folder).unwrap();
         assert_eq!(public(&next(&folder).unwrap()), public(&new), "made once");
         assert!(!settle(&folder, Some(&public(&old))).unwrap(), "the change is not in the journal");
+        assert!(!folder.join(NEXT).exists(), "a key made for nothing is used no more");
+        let new = next(&folder).unwrap();
         assert_eq!(public(&load(&folder.join(IN_USE)).unwrap()), public(&old));
         assert!(settle(&folder, Some(&public(&new))).unwrap());
         assert_eq!(public(&load(&folder.join(IN_USE)).unwrap()), public(&new));

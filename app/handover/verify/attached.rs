@@ -11,6 +11,8 @@ use std::panic::catch_unwind;
 
 /// How deep a tree of names may go; the typesetter writes one level.
 const DEEPEST: usize = 8;
+/// Branches of that tree looked at in all.
+const MOST_BRANCHES: usize = 1000;
 
 /// The document is there, and what a reader of it finds attached is this record.
 pub(super) fn check(files: &BTreeMap<String, Vec<u8>>, report: &mut Report) {
@@ -34,7 +36,7 @@ fn compare(document: Vec<u8>, record: &[u8]) -> Result<(), String> {
     let mut named = Vec::new();
     let names = catalogue.get::<Dict<'_>>("Names").and_then(|names| names.get::<Dict<'_>>("EmbeddedFiles"));
     if let Some(tree) = names {
-        in_tree(&tree, DEEPEST, &mut named)?;
+        in_tree(&tree, DEEPEST, &mut { MOST_BRANCHES }, &mut named)?;
     }
     let associated: Vec<Dict<'_>> =
         catalogue.get::<Array<'_>>("AF").map(|list| list.iter().collect()).unwrap_or_default();
@@ -58,8 +60,10 @@ fn compare(document: Vec<u8>, record: &[u8]) -> Result<(), String> {
     Ok(())
 }
 
-/// The leaves of a tree of names: name and file by turns.
-fn in_tree<'a>(tree: &Dict<'a>, deeper: usize, found: &mut Vec<Dict<'a>>) -> Result<(), String> {
+/// The leaves of a tree of names: name and file by turns. `left` bounds how many branches are looked at in all, since a
+/// branch may name itself many times over.
+fn in_tree<'a>(tree: &Dict<'a>, deeper: usize, left: &mut usize, found: &mut Vec<Dict<'a>>) -> Result<(), String> {
+    *left = left.checked_sub(1).ok_or("its list of attached files has too many branches")?;
     if let Some(leaves) = tree.get::<Array<'a>>("Names") {
         found.extend(
             leaves.iter::<hayro_syntax::object::Object<'a>>().filter_map(hayro_syntax::object::Object::into_dict),
@@ -67,7 +71,7 @@ fn in_tree<'a>(tree: &Dict<'a>, deeper: usize, found: &mut Vec<Dict<'a>>) -> Res
     }
     let Some(branches) = tree.get::<Array<'a>>("Kids") else { return Ok(()) };
     let further = deeper.checked_sub(1).ok_or("its list of attached files goes too deep")?;
-    branches.iter::<Dict<'a>>().try_for_each(|branch| in_tree(&branch, further, found))
+    branches.iter::<Dict<'a>>().try_for_each(|branch| in_tree(&branch, further, left, found))
 }
 
 /// The name, in letters or in UTF-16 as PDF writes it.

@@ -5,7 +5,9 @@ use super::fault::BackupFault;
 use crate::answer::Answer;
 use crate::fault::Fault;
 use crate::journal::{remember_head, stream_head, verify_journal};
-use crate::opening::{MIGRATIONS, Purpose, connect, private_folder, schema_of, schema_version, sync_folder, write_down};
+use crate::opening::{
+    MIGRATIONS, Purpose, connect, private_folder, schema_of, schema_version, sync_folder, write_down,
+};
 use crate::photos;
 use crate::store::Store;
 use commissioning::Timestamp;
@@ -59,10 +61,15 @@ pub fn backup_beside(folder: &Path, to: &Path, now: Timestamp) -> Result<BackupR
         ));
     }
     let receipt = copied(&database, &folder.join("photos"), to)?;
-    let noting = Transaction::new_unchecked(&connection, TransactionBehavior::Immediate).map_err(Fault::from)?;
-    note(&noting, &receipt, now)?;
-    noting.commit().map_err(Fault::from)?;
-    Ok(receipt)
+    let noted = || {
+        let noting = Transaction::new_unchecked(&connection, TransactionBehavior::Immediate)?;
+        note(&noting, &receipt, now)?;
+        Ok::<(), Fault>(noting.commit()?)
+    };
+    match noted() {
+        Ok(()) => Ok(receipt),
+        Err(fault) => Err(BackupFault::NotNoted(to.display().to_string(), fault.to_string())),
+    }
 }
 
 fn backup(store: &Store, to: &Path, now: Timestamp) -> Result<BackupReceipt, BackupFault> {

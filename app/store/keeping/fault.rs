@@ -15,6 +15,9 @@ pub enum BackupFault {
     /// What was copied does not hold together.
     #[error("The copy does not hold together and was not used: {0}")]
     Unsound(String),
+    /// The copy is whole, but the store it is of could not be told.
+    #[error("The backup in {0} is whole, but could not be noted in the store: {1}. Note its date and head yourself.")]
+    NotNoted(String, String),
     /// The disk or the file.
     #[error("The files could not be written or read: {0}")]
     Broken(String),

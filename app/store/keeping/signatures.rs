@@ -24,28 +24,47 @@ pub(crate) fn check_signatures(connection: &Connection) -> Result<(Vec<String>, 
         if !matches!(chain, Chain::Drive(_)) {
             continue;
         }
-        let mut drive: Option<Drive> = None;
-        for sealed in sealed_of(connection, chain)? {
-            let event = sealed.event()?;
-            let before = drive.clone().filter(|_| matches!(event.fact, Fact::Signed { .. }));
-            apply::to_drive(&mut drive, &event, &sealed.head()).map_err(|e| Fault::Broken(e.to_string()))?;
-            let (Some(before), Some(after)) = (before, &drive) else { continue };
-            count += 1;
-            if let Some(fault) = binds_another(&before, after, &event, &installation) {
-                faults.push(format!("{} {fault}", of_whom(after, &event)));
+        let signed = signatures_of(connection, chain, &installation, &mut faults);
+        // One broken chain must not hide what is wrong with the others.
+        match signed {
+            Ok(signed) => {
+                count += signed.len();
+                for (site, one) in signed {
+                    sites.entry(site).or_default().push(one);
+                }
             }
-            if let Fact::Signed { site, .. } = &event.fact {
-                let place = place_in_stream(connection, chain, sealed.sequence)?;
-                let first = before.record.as_ref().is_none_or(|r| r.frozen_site.is_none());
-                let whose = of_whom(after, &event);
-                sites.entry(after.site).or_default().push(SignedSite { place, first, site: (**site).clone(), whose });
-            }
+            Err(fault) => faults.push(format!("{chain}: its signatures cannot be recomputed: {fault}")),
         }
     }
     for (id, signed) in sites {
         faults.extend(other_sites(connection, id, signed)?);
     }
     Ok((faults, count))
+}
+
+/// Looks at every signature of a drive's chain; gives the site that each one froze.
+fn signatures_of(
+    connection: &Connection,
+    chain: Chain,
+    installation: &Installation,
+    faults: &mut Vec<String>,
+) -> Result<Vec<(SiteId, SignedSite)>, Fault> {
+    let mut signed = Vec::new();
+    let mut drive: Option<Drive> = None;
+    for sealed in sealed_of(connection, chain)? {
+        let event = sealed.event()?;
+        let before = if matches!(event.fact, Fact::Signed { .. }) { drive.clone() } else { None };
+        apply::to_drive(&mut drive, &event, &sealed.head()).map_err(|e| Fault::Broken(e.to_string()))?;
+        let (Some(before), Some(after), Fact::Signed { site, .. }) = (before, &drive, &event.fact) else { continue };
+        let whose = of_whom(after, &event);
+        if let Some(fault) = binds_another(&before, after, &event, installation) {
+            faults.push(format!("{whose} {fault}"));
+        }
+        let place = place_in_stream(connection, chain, sealed.sequence)?;
+        let first = before.record.as_ref().is_none_or(|r| r.frozen_site.is_none());
+        signed.push((after.site, SignedSite { place, first, site: (**site).clone(), whose }));
+    }
+    Ok(signed)
 }
 
 /// The site as a signature froze it.

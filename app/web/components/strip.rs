@@ -15,6 +15,8 @@ pub struct StripCell {
     pub left: usize,
     /// Its hold point is closed.
     pub waits: bool,
+    /// What stays in it although it is settled: a shape and its word.
+    pub trouble: Option<(&'static str, &'static str)>,
     /// The page on screen belongs to it.
     pub now: bool,
 }
@@ -26,16 +28,23 @@ pub fn strip(cells: &[StripCell]) -> Markup {
         nav aria-label="Phases" {
             ol.phases {
                 @for cell in cells {
-                    li.now[cell.now].done[cell.left == 0 && !cell.waits].waits[cell.waits] {
+                    li.now[cell.now].done[settled(cell) && cell.trouble.is_none()].troubled[settled(cell) && cell.trouble.is_some()].waits[cell.waits] {
                         a href=(cell.address) aria-current=[cell.now.then_some("step")] title=(cell.title) {
                             b { (cell.short) }
-                            span { (words(cell)) @if !cell.waits && cell.left > 0 { span.word { " left" } } }
+                            @if let Some((shape, word)) = cell.trouble.filter(|_| settled(cell)) {
+                                span.unseen { "settled, " (word) }
+                                span aria-hidden="true" { span.word { "settled " } i { (shape) } span.word { " " (word) } }
+                            } @else { span { (words(cell)) @if !cell.waits && cell.left > 0 { span.word { " left" } } } }
                         }
                     }
                 }
             }
         }
     }
+}
+
+fn settled(cell: &StripCell) -> bool {
+    cell.left == 0 && !cell.waits
 }
 
 fn words(cell: &StripCell) -> String {

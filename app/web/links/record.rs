@@ -15,10 +15,12 @@ pub fn step(site: &str, drive: &str, step: &str) -> String {
     format!("{}/steps/{}", of_drive(site, drive), encode(step))
 }
 
-/// A step after something was recorded at it that does not lead on: `partly`, `whole`, or `nothing`.
+/// A step after something was recorded at it that does not lead on: `partly`, `whole`, or `nothing`; and the verdicts
+/// elsewhere that this brought about.
 #[must_use]
-pub fn step_recorded(site: &str, drive: &str, step: &str, how: &str) -> String {
-    format!("{}?recorded={how}", self::step(site, drive, step))
+pub fn step_recorded(site: &str, drive: &str, step: &str, how: &str, brought: &str) -> String {
+    let also = if brought.is_empty() { String::new() } else { format!("&brought={}", encode(brought)) };
+    format!("{}?recorded={how}{also}", self::step(site, drive, step))
 }
 
 /// The live verdicts of a step.
@@ -110,6 +112,12 @@ pub fn settle_finding(site: &str, drive: &str, finding: FindingId) -> String {
 #[must_use]
 pub fn accept_finding(site: &str, drive: &str, finding: FindingId) -> String {
     format!("{}/accept", self::finding(site, drive, finding))
+}
+
+/// The form that accepts a finding, on that finding's page.
+#[must_use]
+pub fn accept_form(site: &str, drive: &str, finding: FindingId) -> String {
+    format!("{}#accept", self::finding(site, drive, finding))
 }
 
 /// The record, read from top to bottom.

@@ -22,7 +22,7 @@ pub fn role_boxes(held: &[&str], posted: &Posted, errors: &[FieldError]) -> Mark
     let error = errors.iter().find(|e| e.field == "roles" || e.field == "role");
     html! {
         fieldset.field.bad[error.is_some()] {
-            legend { "May be" span.needed { " needed" } }
+            legend { "Roles" span.needed { " needed" } }
             div.ticks {
                 @for role in Role::ALL {
                     label.tick { input type="checkbox" name="role" value=(role.key()) checked[if came_back { sent.contains(role.key()) } else { held.contains(&role.key()) }]; span { b { (role.words()) } " " span.quiet { (what(role)) } } }

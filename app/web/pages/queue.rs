@@ -54,7 +54,7 @@ fn card(queued: &QueueRow, view: &DriveView) -> Markup {
             }
             p { (counts(&verdicts::numbers(&queued.row.counts))) }
             (verdicts::odd_in_words(&judged, |j| links::record_at(site, drive, &j.step)))
-            @if !open.is_empty() { p { b { "Open findings" } } ul { @for f in open { li { b { (f.number) } " " (f.severity.words()) ": " (f.text) } } } }
+            @if !open.is_empty() { p { b { "Open findings" } } ul { @for f in open { li { b { "Finding " (f.number) } " · " (f.severity.words()) ": " (f.text) } } } }
             @if !changes.is_empty() { details.reason { summary { "Changed since it was sent back: " (changes.len()) } ul { @for (_, words) in &changes { li { (words) } } } } }
         }
     }

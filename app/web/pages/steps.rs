@@ -1,6 +1,7 @@
 //! One step a screen: what to do, its cautions, the limit, the reading, and what the checks make of it.
 
 pub mod at;
+pub mod brought;
 pub mod changes;
 pub mod footer;
 pub mod frame;

@@ -68,7 +68,8 @@ function menu(fold) {
 
 /** Unfolds whatever a link into the page points at. */
 function reveal() {
-  const target = location.hash.length > 1 ? document.getElementById(decodeURIComponent(location.hash.slice(1))) : null;
+  // Our own places need no escapes, and a stranger's may not be decodable.
+  const target = location.hash.length > 1 ? document.getElementById(location.hash.slice(1)) : null;
   if (!target) return;
   const folds = [];
   for (let at = target; at; at = at.parentElement) if (at.tagName === "DETAILS" && !at.open) folds.push(at);

@@ -7,7 +7,7 @@ use super::world::{Answer, World};
 use axum::http::StatusCode;
 
 /// Fills the supply step in with these volts everywhere.
-async fn supply(world: &World, volts: &str) -> Answer {
+pub async fn supply(world: &World, volts: &str) -> Answer {
     let now = view(world).await;
     let (_, step) = now.procedure.step("supply-volts").expect("listed");
     let mut pairs = pairs_of(&now, step);

@@ -45,6 +45,7 @@ const SHEETS: [(Sheet, &[(&str, &str)]); 6] = [
             ("power-factor", "0.83"),
             ("efficiency", "88.7"),
             ("connection", "delta"),
+            ("cooling", "separate"),
         ],
     ),
     (
@@ -272,6 +273,7 @@ fn known(key: &str) -> Option<&'static str> {
     Some(match key {
         "bus-after-waiting" | "bus-plus-to-earth" | "bus-minus-to-earth" | "input-dead" | "output-dead" => "3",
         "supply-u1-pe" | "supply-u2-pe" | "supply-u3-pe" => "231",
+        "waited" => "6",
         "bus-energised" => "560",
         "discharge-time" => "6",
         "winding-temperature" => "25",
@@ -281,6 +283,7 @@ fn known(key: &str) -> Option<&'static str> {
         "ir-30s" => "900",
         "ir-60s" => "1000",
         "test-voltage" => "500",
+        "overload-restored" => "14.7",
         _ => return None,
     })
 }
@@ -289,13 +292,15 @@ fn known(key: &str) -> Option<&'static str> {
 fn known_setting(key: &str) -> Option<&'static str> {
     Some(match key {
         "motor-volts" | "base-volts" => "400",
-        "motor-amps" | "overload-current" => "14.7",
-        "motor-hertz" | "base-frequency" | "maximum-frequency" => "50",
+        "motor-amps" | "overload-current" | "test-overload-current" => "14.7",
+        "motor-hertz" | "base-frequency" | "maximum-frequency" | "test-maximum-frequency" => "50",
         "motor-rpm" => "1465",
         "motor-power" => "7.5",
         "motor-power-factor" => "0.83",
         "minimum-frequency" => "40",
-        "current-limit" => "15",
+        "current-limit" | "test-current-limit" => "15",
+        "skip-1-low" | "skip-2-low" | "skip-3-low" => "30",
+        "skip-1-high" | "skip-2-high" | "skip-3-high" => "32",
         "switching-frequency" => "4",
         _ => return None,
     })

@@ -5,6 +5,7 @@ use super::job::{DRIVE, PASSWORD, begin, fill_sheets, hidden, prepare, view, wal
 use super::world::World;
 use axum::http::StatusCode;
 use commissioning::agenda;
+use commissioning::plant::{Field, FieldKind, Place, Sheet, fields};
 use commissioning::record::Status;
 
 async fn sign(world: &World, login: &str, which: &str, password: &str) -> super::world::Answer {
@@ -13,6 +14,26 @@ async fn sign(world: &World, login: &str, which: &str, password: &str) -> super:
     assert_eq!(page.status, StatusCode::OK, "{}", page.text);
     is_sound(&path, &page.text);
     world.post(login, &path, &[("digest", &hidden(&page.text, "digest")), ("password", password)]).await
+}
+
+/// Nothing is signed while it is open which options are fitted: all that the sheets left open is answered with no.
+async fn say_no_to_every_open_option(world: &World) {
+    let now = view(world).await;
+    let none =
+        |f: &Field| matches!(f.kind, FieldKind::Choice(options) if options.iter().any(|(key, _)| *key == "none"));
+    let open = |f: &&Field| {
+        let slot = now.drive.fields.get(&Place::new(Sheet::Drive, f.key));
+        (matches!(f.kind, FieldKind::Flag) || none(f))
+            && slot.and_then(|s| s.current()).is_none_or(|r| r.value.is_none())
+    };
+    let answers: Vec<(String, &str)> = fields::of(Sheet::Drive)
+        .iter()
+        .filter(open)
+        .map(|f| (format!("drive.0.{}", f.key), if none(f) { "none" } else { "no" }))
+        .collect();
+    let pairs: Vec<(&str, &str)> = answers.iter().map(|(n, v)| (n.as_str(), *v)).collect();
+    let answer = world.post("ines", &format!("{DRIVE}/drive"), &pairs).await;
+    assert_eq!(answer.status, StatusCode::SEE_OTHER, "{}", answer.text);
 }
 
 /// A session goes on under the token that signing gave it; the test's own is opened anew.
@@ -36,6 +57,7 @@ async fn a_whole_job_from_the_first_step_to_the_package() {
     let walked = walk(&world, "ines").await;
     assert!(walked > 60, "{walked} steps");
 
+    say_no_to_every_open_option(&world).await;
     // Signed by the engineer: a wrong password changes nothing and keeps the page.
     let wrong = sign(&world, "ines", "sign", "not the password").await;
     assert_eq!(wrong.status, StatusCode::UNPROCESSABLE_ENTITY);
@@ -144,7 +166,7 @@ async fn accept(world: &mut World) {
     assert!(!open.is_empty());
     let blocked = world.get("tor", &format!("{DRIVE}/accept")).await.text;
     is_sound("/accept", &blocked);
-    assert!(open.iter().all(|id| blocked.contains(&format!("/findings/{id}"))), "each is linked");
+    assert!(open.iter().all(|id| blocked.contains(&format!("/findings/{id}#accept"))), "each is linked to its form");
     assert!(
         blocked.contains("Accept each by name") && !blocked.contains("type=\"password\""),
         "nothing to sign: {blocked}"
@@ -152,7 +174,7 @@ async fn accept(world: &mut World) {
     for finding in open {
         let answer =
             world.post("tor", &format!("{DRIVE}/findings/{finding}/accept"), &[("reason", "Seen and agreed.")]).await;
-        assert_eq!(answer.status, StatusCode::SEE_OTHER, "{}", answer.text);
+        assert_eq!((answer.status, answer.location()), (StatusCode::SEE_OTHER, format!("{DRIVE}/accept").as_str()));
     }
     let page = world.get("max", &format!("{DRIVE}/accept")).await.text;
     assert!(page.contains("Ask another supervisor") && !page.contains("type=\"password\""), "{page}");

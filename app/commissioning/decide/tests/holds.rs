@@ -182,9 +182,16 @@ fn an_outside_verdict_holds_until_it_is_put_right_or_accepted_by_name() {
     assert!(!hold_open(&world), "raised is not accepted");
     world.does(SUNE, accept(0xB));
     assert!(hold_open(&world), "accepted by name");
+    world.set_field(ERIN, crate::plant::Sheet::Motor, "insulation-minimum", "6", "MΩ").unwrap();
+    assert!(!hold_open(&world), "what was accepted was held against another limit");
     let again = vec![world.change(crate::record::EntryPlace::new("ir-60s"), "0.3")];
     world.record_changes(ERIN, "insulation", again, "measured again").unwrap();
     assert!(!hold_open(&world), "what was accepted was another reading");
+    let how = crate::record::SettledOtherwise::NotApplicable;
+    let reason = "A small motor, it will dry.".to_owned();
+    world.does(ERIN, Deed::SettleStep { drive: DRIVE, step: "insulation".into(), how, reason });
+    assert!(!hold_open(&world), "a reading is not unmade by calling its step not applicable");
+    world.does(ERIN, Deed::ResumeStep { drive: DRIVE, step: "insulation".into() });
     let right = vec![world.change(crate::record::EntryPlace::new("ir-60s"), "900")];
     world.record_changes(ERIN, "insulation", right, "dried").unwrap();
     assert!(hold_open(&world), "put right");

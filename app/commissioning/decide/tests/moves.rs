@@ -173,6 +173,7 @@ fn every_deed_in_every_state_is_allowed_or_refused_as_the_model_says() {
         world.sign(ERIN, Meaning::Performed).unwrap();
     }
     worlds[3].does(SUNE, Deed::Return { drive: DRIVE, reason: "Photo missing.".into() });
+    worlds[3].answer("None could be taken there.");
     for world in &mut worlds[4..] {
         world.sign(SUNE, Meaning::Accepted).unwrap();
     }

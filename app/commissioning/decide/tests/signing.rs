@@ -45,6 +45,7 @@ fn nobody_accepts_what_they_entered_or_signed() {
     let mut world = World::signed();
     world.does(EBBE, Deed::Remark { drive: DRIVE, step: String::new(), text: "Neat work.".into() });
     world.does(EBBE, Deed::Return { drive: DRIVE, reason: "Photo?".into() });
+    world.answer("None could be taken there.");
     world.sign(ERIN, Meaning::Performed).unwrap();
     world.sign(EBBE, Meaning::Accepted).unwrap();
     assert!(!world.record().contributors.contains(&EBBE), "remarks and returns do not count");
@@ -80,6 +81,9 @@ fn a_return_and_a_reopening_keep_earlier_signatures_as_superseded() {
     world.does(SUNE, Deed::Return { drive: DRIVE, reason: "Photo?".into() });
     assert_eq!((world.record().revision, world.record().signatures.len()), (2, 3));
     assert_eq!(world.record().history.len(), 5);
+    let said = why(world.sign(ERIN, Meaning::Performed));
+    assert!(said.starts_with("Nothing was changed since this record was returned for: Photo? Put"), "{said}");
+    world.answer("None could be taken there.");
     world.sign(ERIN, Meaning::Performed).unwrap();
     world.sign(SUNE, Meaning::Accepted).unwrap();
     assert_eq!(world.record().signatures.iter().filter(|s| !s.superseded).count(), 2);
@@ -105,6 +109,50 @@ fn a_site_that_changes_after_the_signing_changes_no_signed_record() {
     world.sign(SUNE, Meaning::Accepted).unwrap();
     world.does(SUNE, Deed::Reopen { drive: DRIVE, reason: "Supply changed.".into() });
     assert_eq!(world.file().site.fields.len(), 1, "in progress, the site of today counts");
+}
+
+#[test]
+fn a_return_is_answered_by_a_change_of_the_drive_or_of_its_site() {
+    let returned = || {
+        let mut world = World::signed();
+        world.does(SUNE, Deed::Return { drive: DRIVE, reason: "Supply volts are wrong.".into() });
+        assert!(why(world.sign(ERIN, Meaning::Performed)).contains("Nothing was changed"));
+        world
+    };
+    let mut world = returned();
+    let entry = world.change(EntryPlace::new("isolation-note"), "lamp");
+    world.record_changes(ERIN, "prove-dead", vec![entry], "").unwrap();
+    world.sign(ERIN, Meaning::Performed).unwrap();
+    let mut world = returned();
+    let place = (0, "volts".into());
+    let volts = Change { place, text: "690".into(), unit: "V".into(), instrument: None, photo: None, seen: vec![] };
+    let changes = vec![volts];
+    world.does(SUNE, Deed::SetSiteFields { site: SITE, sheet: Sheet::Supply, changes, reason: String::new() });
+    world.sign(ERIN, Meaning::Performed).unwrap();
+}
+
+#[test]
+fn a_record_is_not_signed_while_it_is_open_which_options_are_fitted() {
+    let mut world = World::complete();
+    let mut no = |option: &str, text: &str| {
+        let place = crate::plant::Place::new(Sheet::Drive, option);
+        let seen = world.drive().fields[&place].seen();
+        let place = (0, option.to_owned());
+        let change = Change { place, text: text.into(), unit: String::new(), instrument: None, photo: None, seen };
+        let (sheet, reason) = (Sheet::Drive, "Not looked at.".to_owned());
+        world.does(ERIN, Deed::SetDriveFields { drive: DRIVE, sheet, changes: vec![change], reason });
+        world.sign(ERIN, Meaning::Performed)
+    };
+    let said = why(no("bypass", ""));
+    assert!(
+        said.starts_with("1 step waits for an answer: which options are fitted? Say yes or no on: sheet “"),
+        "{said}"
+    );
+    assert!(said.contains("bypass"), "{said}");
+    let said = why(no("brake-chopper", ""));
+    assert!(said.starts_with("2 steps wait") && said.contains("chopper"), "{said}");
+    assert!(why(no("bypass", "no")).starts_with("1 step waits"));
+    no("brake-chopper", "no").unwrap();
 }
 
 /// Two installations changed the same field; both stand until someone chooses.

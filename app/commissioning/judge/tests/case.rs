@@ -90,9 +90,13 @@ impl Case {
         self.drive.record.as_mut().unwrap().otherwise.insert(step.to_owned(), recorded(value));
     }
 
+    pub(super) fn view(&self) -> View<'_> {
+        View { drive: &self.drive, site: &self.site, procedure: &self.procedure }
+    }
+
     /// What a check says, for each thing it was run for.
     pub(super) fn runs(&self, check: &str) -> Vec<(String, Outcome)> {
-        let view = View { drive: &self.drive, site: &self.site, procedure: &self.procedure };
+        let view = self.view();
         run(&view, check, "").into_iter().map(|j| (j.of, j.outcome)).collect()
     }
 

@@ -4,7 +4,7 @@ use super::case::{Case, Field, hold};
 use crate::plant::Sheet::{Drive, DrivePlate, Load, Motor, Supply};
 use crate::record::ParameterColumn::{AsLeft, Intended};
 use engineering::Outcome;
-use engineering::Verdict::{Marginal, NotAssessed, Outside, Within};
+use engineering::Verdict::{Figure, Marginal, NotAssessed, Outside, Within};
 
 /// The 15 kW motor of C-MN-010 (97.44 N·m) with the braking example C-RM-008: 1.5 kg·m², 10 N·m.
 const MACHINE: &[Field] = &[
@@ -212,12 +212,14 @@ fn rotation_by_what_was_seen_and_how_it_came_about() {
 #[test]
 fn stop_time_and_bus_peak() {
     use crate::plant::Sheet::Further;
-    let seen: &[(&str, &str)] = &[("stop-seconds", "5")];
+    let seen: &[(&str, &str)] = &[("stop-seconds", "5"), ("stop-from-hertz", "50")];
+    let low: &[(&str, &str)] = &[("stop-seconds", "5"), ("stop-from-hertz", "12.5")];
     hold(
         "stop-time",
-        &[],
+        &[(Motor, "hertz", "50")],
         &[
             (&[(Load, "stop-time", "6")], seen, Within, "at most 6.00 s, as specified"),
+            (&[(Load, "stop-time", "6")], low, Figure, "at most 6.00 s, as specified"),
             (
                 &[(Load, "stop-time", "6"), (Further, "emergency-stop-time", "4")],
                 seen,

@@ -214,3 +214,20 @@ fn harmonic_distortion_by_specification_and_site() {
         ],
     );
 }
+
+/// IEEE 519 table 2, Isc/I_L = 25: 7 % of the demand current for orders below 11, 3.5 % from 11. The chart shows parts of
+/// the fundamental, here half the demand current: twice as much.
+#[test]
+fn limits_of_single_harmonics_hold_at_the_common_coupling_only() {
+    let plates = [(Supply, "demand-current", "800"), (Supply, "coupling-fault-current", "20")];
+    let limits = |set: &[Field], place| {
+        let case = Case::of(&[&plates, set].concat(), &[("input-fundamental", "400"), ("distortion-place", place)]);
+        crate::judge::harmonic_limits(&case.view())
+            .into_iter()
+            .map(|(order, limit)| (order, (limit.fraction() * 1e5).round() / 1e3))
+            .collect::<Vec<_>>()
+    };
+    assert_eq!(limits(&[], "common-coupling"), [(5, 14.0), (7, 14.0), (11, 7.0), (13, 7.0)]);
+    assert!(limits(&[], "drive").is_empty());
+    assert!(limits(&[(Site, "harmonic-rule", "none")], "common-coupling").is_empty());
+}

@@ -328,3 +328,27 @@ fn what_is_optional_only_when_left_alone_stands_at_a_step_that_can_be() {
     }
     assert!(found > 0, "the isolation for an exchange asks for its reading");
 }
+
+/// What is charged by a test is discharged before anyone moves leads: the ohmmeter comes first, the discharge last.
+#[test]
+fn the_winding_is_discharged_after_the_last_test_voltage_and_no_leads_are_moved_between() {
+    let procedure = procedure();
+    let phase = procedure.phase("insulation").expect("there");
+    let at = |id: &str| phase.steps.iter().position(|s| s.id == id).unwrap_or_else(|| panic!("{id}"));
+    let charging = ["insulation-to-earth", "ten-minute-run", "cable-alone", "phases-alone"];
+    assert!(charging.iter().all(|id| at("winding-resistance") < at(id)));
+    assert_eq!(at("discharge"), charging.iter().map(|id| at(id)).max().expect("four") + 1);
+    for step in charging.iter().map(|id| &phase.steps[at(id)]) {
+        let told = |c: &String| c.contains("discharge") && c.contains("earth") && c.contains("leads are moved");
+        assert!(step.cautions.iter().any(told), "{}: {:?}", step.id, step.cautions);
+    }
+}
+
+#[test]
+fn nothing_is_opened_while_the_waiting_time_is_outside() {
+    let procedure = procedure();
+    let hold = procedure.phase("inspect").and_then(|p| p.hold.as_ref()).expect("there");
+    let asked =
+        |c: &Condition| matches!(c, Condition::NoneOutside { checks } if checks.contains(&"waiting-time".to_owned()));
+    assert!(hold.conditions.iter().any(asked));
+}

@@ -23,6 +23,9 @@ fn make_full() -> World {
     let mut world = World::begun();
     world.set_field(ERIN, Sheet::Motor, "volts", "400", "V").unwrap();
     world.set_field(ERIN, Sheet::Motor, "volts", "690", "V").unwrap();
+    for option in ["brake-chopper", "bypass"] {
+        world.set_field(ERIN, Sheet::Drive, option, "no", "").unwrap();
+    }
     let volts = Change {
         place: (0, "volts".into()),
         text: "690".into(),
@@ -235,9 +238,9 @@ fn what_this_version_does_not_know_is_refused_with_its_path() {
 #[test]
 fn a_place_stands_once() {
     let mut file = full().file();
-    let twin = file.drive.fields[0].clone();
+    let twin = file.drive.fields[2].clone();
     file.drive.fields.push(twin);
-    assert!(file.rebuild().unwrap_err().contains("drive.fields[1] stands a second time"));
+    assert!(file.rebuild().unwrap_err().contains("drive.fields[3] stands a second time"));
 }
 
 #[test]
@@ -293,7 +296,7 @@ fn a_number_follows_from_its_text_and_unit() {
         (format!("/record/entries/{reading}/slot/standing/0/value/value"), "ir-60s.0"),
         (format!("/record/entries/{reading}/slot/earlier/0/value/value"), "ir-60s.0"),
         ("/record/parameters/0/slot/standing/0/value".to_owned(), "acceleration-time.intended"),
-        ("/drive/fields/0/slot/standing/0/value".to_owned(), "motor.0.volts"),
+        ("/drive/fields/2/slot/standing/0/value".to_owned(), "motor.0.volts"),
         ("/site/fields/0/slot/standing/0/value".to_owned(), "supply.0.volts"),
     ] {
         for (part, forged) in [("si", "5000000"), ("text", "77"), ("si", "many")] {

@@ -54,9 +54,9 @@ fn findings(at: &DriveAt) -> Markup {
     html! {
         h2 { "Open findings" }
         @if open.is_empty() { p.quiet { "None." } }
-        ul.odd {
+        ul.open-findings {
             @for finding in &open {
-                li { b { (finding.number) } div { a href=(links::finding(&at.site.tag, &at.drive.tag, finding.id)) { (finding.severity.words()) } p { (finding.text) } } }
+                li { a href=(links::finding(&at.site.tag, &at.drive.tag, finding.id)) { "Finding " (finding.number) " · " (finding.severity.words()) } ": " (finding.text) }
             }
         }
         p { a href=(address) { "All findings, and raise one" } }

@@ -4,18 +4,19 @@ use crate::extract::DriveAt;
 use crate::links;
 use crate::progress;
 use commissioning::agenda::{Agenda, HoldAgenda, PhaseAgenda, StepAgenda, StepState};
+use commissioning::judge::Judged;
 use maud::{Markup, html};
 
 /// All phases; those that are settled are folded.
 #[must_use]
-pub fn list(at: &DriveAt, agenda: &Agenda) -> Markup {
+pub fn list(at: &DriveAt, agenda: &Agenda, judged: &[Judged]) -> Markup {
     let here = agenda.phases.iter().position(|p| p.open() && p.left() > 0);
     html! {
         div.phase-list {
             @for (n, phase) in agenda.phases.iter().enumerate() {
                 @if let Some(hold) = &phase.hold { (hold_line(at, phase, hold)) }
                 details.phase id=(format!("phase-{}", phase.id)) open[here == Some(n)] {
-                    summary { b { (n + 1) " · " (phase.title) } span.quiet { (left(phase)) } }
+                    summary { b { (n + 1) " · " (phase.title) } span.quiet { (left(phase)) @if let Some((shape, word)) = progress::trouble(at, phase, judged) { " · " span.trouble { span aria-hidden="true" { (shape) } " " (word) } } } }
                     ol { @for step in &phase.steps { (row(at, step)) } }
                 }
             }

@@ -22,7 +22,7 @@ pub async fn show(signed: Signed, at: DriveAt) -> Markup {
                 h1 { (at.drive.name) }
                 @match &at.drive.record {
                     None => { (beginning(&signed, &at)) }
-                    Some(record) => { (standing(record)) (onward(&signed, &at, record, &agenda)) @if matches!(record.status, Status::InProgress { .. }) { (unanswered::notice(&at)) } (phases::list(&at, &agenda)) }
+                    Some(record) => { (standing(record)) (onward(&signed, &at, record, &agenda)) @if matches!(record.status, Status::InProgress { .. }) { (unanswered::notice(&at)) } (phases::list(&at, &agenda, &judged)) }
                 }
             }
             aside { (aside::all(&signed, &at, &agenda, judged)) }

@@ -49,7 +49,7 @@ fn row(at: &DriveAt, finding: &Finding) -> Markup {
     let step = finding.step.as_deref().and_then(|id| at.procedure.step(id));
     html! {
         li.card.finding.open[finding.is_open()] {
-            p.number { b { (finding.number) } " · " (finding.severity.words()) }
+            p.number { b { "Finding " (finding.number) } " · " (finding.severity.words()) }
             p { (finding.text) }
             p.quiet { "raised " (finding.received.shown()) " UTC by " (finding.by_name) @if let Some((_, step)) = step { " at " a href=(links::step(site, drive, &step.id)) { (step.title) } } }
             p { (state(finding)) }

@@ -23,13 +23,14 @@ pub fn page(signed: &Signed, at: &FindingAt, posted: Option<&Posted>, errors: &[
     let none = Posted::default();
     let sent = posted.unwrap_or(&none);
     let accepted = at.at.drive.record.as_ref().is_none_or(|r| matches!(r.status, Status::Accepted { .. }));
+    let waits = at.at.drive.record.as_ref().is_some_and(|r| matches!(r.status, Status::Signed { .. }));
     let supervisor = signed.visitor.is_any(&[Role::Supervisor]) && !accepted;
     let body = html! {
         p.lead { (finding.text) }
         p.quiet { (finding.severity.words()) " · raised " (finding.received.shown()) " UTC by " (finding.by_name) }
         p { (state(finding)) }
         @if finding.is_open() && may_record(signed, &at.at) {
-            section.card {
+            section.card #settle {
                 h2 { "Put right" }
                 (form(&signed.visitor, &links::settle_finding(site, drive, finding.id), html! {
                     (field(&FieldInput::new("how", "What was done", InputKind::Lines(2000)).needed().sent_back(sent, errors)))
@@ -38,7 +39,7 @@ pub fn page(signed: &Signed, at: &FindingAt, posted: Option<&Posted>, errors: &[
             }
         }
         @if finding.is_open() && supervisor {
-            section.card {
+            section.card #accept {
                 h2 { "Accept as it is" }
                 (form(&signed.visitor, &links::accept_finding(site, drive, finding.id), html! {
                     (field(&FieldInput::new("reason", "Why it may stay", InputKind::Lines(1000)).needed().sent_back(sent, errors)))
@@ -46,7 +47,7 @@ pub fn page(signed: &Signed, at: &FindingAt, posted: Option<&Posted>, errors: &[
                 }))
             }
         }
-        div.row { (link_button(&links::findings(site, drive), "All findings")) (link_button(&links::drive(site, drive), "Back to the drive")) }
+        div.row { @if waits && supervisor { (link_button(&links::accept(site, drive), "Back to accepting the record")) } (link_button(&links::findings(site, drive), "All findings")) (link_button(&links::drive(site, drive), "Back to the drive")) }
     };
     Page::new(format!("Finding {}", finding.number), body).narrow().plate(at.at.plate()).render(&signed.visitor)
 }

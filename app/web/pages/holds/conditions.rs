@@ -10,11 +10,11 @@ use maud::{Markup, html};
 
 /// All conditions of a hold point.
 #[must_use]
-pub fn list(at: &DriveAt, agenda: &Agenda, conditions: &[Condition]) -> Markup {
+pub fn list(at: &DriveAt, agenda: &Agenda, phase: &str, conditions: &[Condition]) -> Markup {
     html! {
         ul.conditions {
             @for condition in conditions {
-                @let unmet = agenda::unmet_of(&at.view(), condition, agenda);
+                @let unmet = agenda::unmet_of(&at.view(), condition, agenda, phase);
                 li.met[unmet.is_empty()] {
                     span.box aria-hidden="true" {}
                     span { (words(at, condition)) @if !unmet.is_empty() { (waits_for(at, agenda, condition, &unmet)) } }

@@ -65,7 +65,7 @@ pub fn page(signed: &Signed, at: &HoldAt, posted: Option<&Posted>, errors: &[Fie
                 p.notice { "Released " (release.received.shown()) " UTC by " b { (release.printed_name) } @if release.printed_name != release.by_name { ", recorded by " (release.by_name) } @if !stands.open { ". Something that must keep holding no longer does, so that it waits again" } "." }
             }
             h2 { "Conditions" }
-            (conditions::list(&at.at, &agenda, &point.conditions))
+            (conditions::list(&at.at, &agenda, &at.phase, &point.conditions))
             (release(signed, at, point, stands, posted, errors))
         }
     };

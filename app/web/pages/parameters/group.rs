@@ -74,7 +74,7 @@ fn page(signed: &Signed, at: &DriveAt, group: &str, back: &Back<'_>) -> Markup {
     let away = html! { a.b href=(links::parameters(site, drive)) { "Back to the parameter record" } };
     let fields = html! {
         (inputs::group(at, group, back))
-        (sheet_form::reason(back))
+        (sheet_form::reason(back, inputs::has_values(at, group)))
         div.row.foot { (main_button("Record")) (away) }
     };
     let body = html! {

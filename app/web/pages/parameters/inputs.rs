@@ -30,6 +30,17 @@ pub fn group(at: &DriveAt, group: &str, back: &Back<'_>) -> Markup {
     }
 }
 
+/// Whether anything stands in a group, or (`*`) in any, so that a form can overwrite it.
+#[must_use]
+pub fn has_values(at: &DriveAt, group: &str) -> bool {
+    let stands =
+        |row: &Row| needs_choice(at, row) || ParameterColumn::ALL.iter().any(|column| row.value(at, *column).is_some());
+    match group {
+        "*" => at.drive.record.iter().flat_map(|r| r.parameters.values()).any(|slot| !slot.standing().is_empty()),
+        _ => rows::of(at, group).iter().any(stands),
+    }
+}
+
 /// A function while it is being set: a line once it has its intended value, open before.
 fn setting(at: &DriveAt, row: &Row, back: &Back<'_>) -> Markup {
     let filled = |columns: &[ParameterColumn]| columns.iter().filter(|c| row.value(at, **c).is_some()).count();

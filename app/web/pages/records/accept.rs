@@ -44,8 +44,8 @@ fn blocked(signed: &Signed, at: &DriveAt, own: bool, holding: &[&Finding]) -> Ma
         @if own { (notice("You entered something in this record or signed it, so that you cannot accept it. Ask another supervisor.")) }
         @if !holding.is_empty() {
             div.notice {
-                p { b { @if holding.len() == 1 { "One finding is" } @else { (holding.len()) " findings are" } " open and must be closed before handover." } " Accept each by name with a reason, or return the record." }
-                ul { @for f in holding { li { a href=(links::finding(site, drive, f.id)) { "Finding " (f.number) } ", " (f.severity.words()) ": " (f.text) } } }
+                p { b { @if holding.len() == 1 { "One finding is" } @else { (holding.len()) " findings are" } " open and must be closed before handover." } " Accept each by name with a reason; to have one settled, return the record." }
+                ul { @for f in holding { li { a href=(links::finding(site, drive, f.id)) { "Finding " (f.number) } ", " (f.severity.words()) ": " (f.text) br; a href=(links::accept_form(site, drive, f.id)) { "Accept finding " (f.number) " …" } " · " a href=(links::send_back(site, drive)) { "Return the record to have it settled …" } } } }
             }
         }
         (closing::verdicts(at))

@@ -27,7 +27,9 @@ pub async fn show(signed: Signed, at: DriveAt, Query(asked): Query<Asked>) -> Ma
     let agenda = agenda::of(&at.view());
     let judged = verdicts::all(&at.view());
     let in_full = asked.working == "all";
-    let shown = report_step::Shown { judged: &judged, in_full, whole: in_full || asked.whole == "yes" };
+    let charts = drawing::charts::of(&at.view());
+    let shown =
+        report_step::Shown { judged: &judged, charts: &charts, in_full, whole: in_full || asked.whole == "yes" };
     let body = html! {
         article.report {
             (opening(&at, &agenda, &judged))

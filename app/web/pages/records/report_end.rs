@@ -20,7 +20,7 @@ pub fn all(signed: &Signed, at: &DriveAt, record: &Record) -> Markup {
             ul { @for i in &record.isolations { li { "in force from " (i.from.shown()) " UTC, " (i.by_name) @match &i.lifted { Some((when, by)) => { "; lifted " (when.shown()) " UTC, " (by) }, None => { "; still in force" } } } } }
             h2 { "Findings" }
             @if findings.is_empty() { p.quiet { "None." } }
-            ol.plain-list { @for f in findings { li { b { (f.number) } " · " (f.severity.words()) ": " (f.text) " (" (f.by_name) ", " (f.received.shown()) " UTC). " (state(f)) } } }
+            ol.plain-list { @for f in findings { li { b { "Finding " (f.number) } " · " (f.severity.words()) ": " (f.text) " (" (f.by_name) ", " (f.received.shown()) " UTC). " (state(f)) } } }
             h2 { "Remarks on the whole record" }
             (remark::list(at, ""))
             (remark::form(signed, at, ""))

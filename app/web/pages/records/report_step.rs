@@ -2,7 +2,7 @@
 
 use super::{changed, remark};
 use crate::clock_words::moment;
-use crate::components::{counts, verdict_panels_to_review};
+use crate::components::{charts_at, counts, verdict_panels_to_review};
 use crate::extract::DriveAt;
 use crate::links;
 use crate::pages::steps::at::{items, places};
@@ -23,6 +23,8 @@ use maud::{Markup, html};
 pub struct Shown<'a> {
     /// Every verdict.
     pub judged: &'a [Judged],
+    /// Every chart.
+    pub charts: &'a [drawing::charts::StepChart],
     /// Whether the working of all of them lies open.
     pub in_full: bool,
     /// Whether every part lies open, to be read through or printed.
@@ -92,6 +94,7 @@ fn one(signed: &Signed, at: &DriveAt, step: &StepAgenda, described: &Step, shown
             @if let Some(sheet) = crate::pages::steps::sheet::of(described) { p.quiet { a href="#plates" { (sheet.words()) } ", above" } }
             @if described.parameters.is_some() { p.quiet { a href="#settings" { "Parameter record" } ", below" } }
             (verdict_panels_to_review(&own, shown.in_full))
+            (charts_at(shown.charts, &step.id))
             (remark::list(at, &step.id))
             (remark::form(signed, at, &step.id))
         }

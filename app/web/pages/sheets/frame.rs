@@ -5,6 +5,7 @@ use crate::extract::DriveAt;
 use crate::links;
 use crate::sheet_form::{self, Back};
 use crate::sheet_words;
+use crate::verdicts::{odd, odd_in_words};
 use crate::visitor::Signed;
 use commissioning::judge::{self, Judged, View};
 use commissioning::people::Role;
@@ -28,23 +29,37 @@ pub fn page(signed: &Signed, at: &DriveAt, sheet: Sheet, asked: u8, back: &Back<
     let inputs = html! {
         (sheet_form::inputs(sheet, columns, &at.drive.fields, back))
         @if columns < sheet.columns() { p { a.b href=(format!("{action}?columns={}", columns + 1)) { "Show one more rating column" } } }
-        (sheet_form::reason(back))
+        (sheet_form::reason(back, sheet_form::has_values(sheet, &at.drive.fields)))
         div.row.foot { (main_button("Record")) (away) }
     };
     let body = html! {
         (tabs(at, sheet))
         h1 { (sheet.words()) }
-        @if let Some(told) = told { (saved(told)) }
+        @if let Some(told) = told { (saved(told)) (disagreeing(&at.view())) }
         (sheet_form::summary(back.errors))
         div.split {
             section {
                 @if may { (live_form(&signed.visitor, &action, &links::sheet_live(site, drive, sheet), inputs)) }
                 @else { (sheet_words::all(sheet, columns, &at.drive.fields)) div.row { (away) } }
             }
-            aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (verdicts(&at.view())) } }
+            aside.verdicts #plates aria-label="Verdicts" { div data-live aria-live="polite" { (verdicts(&at.view())) } }
         }
     };
     Page::new(sheet.words(), body).own_heading().plate(at.plate()).render(&signed.visitor)
+}
+
+/// What of the plates is outside or marginal, said where a sheet was just kept.
+fn disagreeing(view: &View<'_>) -> Markup {
+    let judged = judge::plates(view);
+    html! {
+        @if !odd(&judged).is_empty() {
+            div.stay {
+                p { b { "With this the plates do not all agree:" } }
+                (odd_in_words(&judged, |_| "#plates".to_owned()))
+                p { "If a figure was misread, correct it below. If the plate says so, ask the maker or raise a finding." }
+            }
+        }
+    }
 }
 
 /// What the nameplate checks say about a view.

@@ -99,7 +99,7 @@ fn page(signed: &Signed, site: &Site, sheet: Sheet, back: &Back<'_>, told: Optio
         @if may {
             (kept_form(&signed.visitor, &action, html! {
                 (sheet_form::inputs(sheet, 1, &site.fields, back))
-                (sheet_form::reason(back))
+                (sheet_form::reason(back, sheet_form::has_values(sheet, &site.fields)))
                 div.row { (main_button("Record")) (away) }
             }))
         } @else { (sheet_words::all(sheet, 1, &site.fields)) div.row { (away) } }

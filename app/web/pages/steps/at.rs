@@ -18,6 +18,8 @@ pub struct StepAt {
     pub at: DriveAt,
     /// Its id; it is there.
     pub id: String,
+    /// The day on which it is looked at, `2026-11-17`: an instrument's calibration may have run out by then.
+    pub today: String,
 }
 
 impl StepAt {
@@ -45,7 +47,7 @@ impl StepAt {
             procedure: found.procedure,
             installation: found.installation,
         };
-        Ok(Self { at, id: self.id.clone() })
+        Ok(Self { at, id: self.id.clone(), today: self.today.clone() })
     }
 }
 
@@ -58,7 +60,7 @@ impl FromRequestParts<App> for StepAt {
         if at.procedure.step(&id).is_none() {
             return Err(PageError::not_found(format!("A step “{}”", commissioning::typed::shorten(&id))));
         }
-        Ok(Self { at, id })
+        Ok(Self { at, id, today: app.now().date().to_string() })
     }
 }
 

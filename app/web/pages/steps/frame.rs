@@ -1,9 +1,9 @@
 //! The page of a step, whole or as it comes back with what was wrong.
 
-use super::at::{StepAt, items, may_record};
+use super::at::{StepAt, items, may_record, places};
 use super::inputs::{self, Inputs};
 use super::{footer, notices, sheet, stay};
-use crate::components::{Page, caution, check_title, notice, seal, verdict_panels};
+use crate::components::{Page, caution, charts_at, check_title, notice, seal, verdict_panels};
 use crate::pages::parameters::inputs as parameter_inputs;
 use crate::pages::parameters::list;
 use crate::sheet_form::{self, Back};
@@ -12,9 +12,11 @@ use crate::{PageError, links, progress, verdicts};
 use commissioning::agenda::{self, Agenda};
 use commissioning::judge::Judged;
 use commissioning::procedure::{ItemKind, Phase, Step};
+use commissioning::record::EntryPlace;
 use maud::{Markup, html};
 
-/// The page; `told` is a sentence about what was just recorded.
+/// The page; `told` is a sentence about what was just recorded. `stays` is there where one stayed after recording: the
+/// verdicts elsewhere that this brought about, as addresses carry them.
 ///
 /// # Errors
 /// Never for a step that is there.
@@ -23,7 +25,7 @@ pub fn page(
     at: &StepAt,
     back: &Back<'_>,
     told: Option<&str>,
-    stays: bool,
+    stays: Option<&str>,
 ) -> Result<Markup, PageError> {
     let (phase, step) = at.step()?;
     let agenda = agenda::of(&at.at.view());
@@ -35,7 +37,7 @@ pub fn page(
     let body = html! {
         @if let Some(told) = told { (notice(told)) (sheet_form::faults(back.errors, "What you typed is still here.")) }
         @else { (sheet_form::summary(back.errors)) }
-        @if stays && may { (stay::outside(at, &agenda, &judged)) }
+        @if let Some(brought) = stays.filter(|_| may) { (stay::outside(at, &agenda, &judged, brought)) }
         div.step.split[!judged.is_empty() && !wide].wide[wide] {
             section {
                 (heading(at, phase, step, &agenda))
@@ -45,6 +47,7 @@ pub fn page(
                 @if let Some(of) = sheet::of(step) { (sheet::summary(at, of, agenda.step(&at.id).map_or(&[][..], |(_, s)| &s.missing))) }
                 @if has_form && may { (form(&inputs)) }
                 @if has_form && !may { (as_words(&inputs)) }
+                (charts_at(&drawing::charts::at(&at.at.view(), step), &step.id))
                 @if !step.why.is_empty() { details.why { summary { "Why and how" } p { (step.why) } } }
             }
             @if !judged.is_empty() { aside.verdicts aria-label="Verdicts" { div data-live aria-live="polite" { (panels(&judged)) } } }
@@ -91,6 +94,15 @@ fn as_words(i: &Inputs<'_>) -> Markup {
     }
 }
 
+/// Whether anything stands at the step, so that its form can overwrite it.
+fn has_values(i: &Inputs<'_>) -> bool {
+    let stands = |place: &EntryPlace| {
+        i.at.at.drive.record.as_ref().and_then(|r| r.entries.get(place)).is_some_and(|slot| !slot.standing().is_empty())
+    };
+    i.step.items.iter().any(|item| places(i.step, item).any(|place| stands(&place)))
+        || i.step.parameters.as_deref().is_some_and(|group| parameter_inputs::has_values(&i.at.at, group))
+}
+
 fn form(i: &Inputs<'_>) -> Markup {
     let (site, drive) = (i.at.at.site.tag.as_str(), i.at.at.drive.tag.as_str());
     let pictures = i.step.items.iter().any(|item| matches!(item.kind, ItemKind::Photo));
@@ -99,7 +111,7 @@ fn form(i: &Inputs<'_>) -> Markup {
             (seal(&i.signed.visitor))
             @if let Some(group) = &i.step.parameters { (parameter_inputs::group(&i.at.at, group, &i.back)) }
             (inputs::all(i))
-            (sheet_form::reason(&i.back))
+            (sheet_form::reason(&i.back, has_values(i)))
         }
     }
 }

@@ -127,21 +127,20 @@ pub fn own_select(
     }
 }
 
-/// Only those that read this kind of quantity; all of them where none says that it does.
+/// Those that read this kind of quantity first, and of those whose calibration stands; then all others, so that one whose
+/// accuracy nobody entered yet can be named too.
 fn select(at: &StepAt, kind: Kind, name: &str, chosen: &str) -> Markup {
     let mut known: Vec<&Instrument> =
         at.at.installation.instruments.values().filter(|i| i.active || i.id.to_string() == chosen).collect();
     let fits = |i: &Instrument| reads(i, kind);
-    if known.iter().any(|i| fits(i)) {
-        known.retain(|i| fits(i) || i.id.to_string() == chosen);
-    }
-    known.sort_by(|a, b| fits(b).cmp(&fits(a)).then_with(|| a.mark.cmp(&b.mark)));
+    let ran_out = |i: &Instrument| !i.due.is_empty() && i.due.as_str() < at.today.as_str();
+    known.sort_by(|a, b| (!fits(a), ran_out(a), &a.mark).cmp(&(!fits(b), ran_out(b), &b.mark)));
     html! {
         select.input id=(crate::components::input_id(name)) name=(name) {
             option value="" { "none named" }
             @for i in known {
                 option value=(i.id) selected[i.id.to_string() == chosen] {
-                    (i.mark) " · " (i.description) @if !i.due.is_empty() { " · due " (i.due) } @if !fits(i) { " · accuracy not known" }
+                    (i.mark) " · " (i.description) @if ran_out(i) { " · calibration ran out on " (i.due) } @else if !i.due.is_empty() { " · due " (i.due) } @if !fits(i) { " · accuracy not known" }
                 }
             }
         }

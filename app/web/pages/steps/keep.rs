@@ -2,7 +2,7 @@
 
 use super::at::StepAt;
 use super::sent::Sent;
-use super::{changes, frame, stay};
+use super::{brought, changes, frame, stay};
 use crate::pages::parameters;
 use crate::posted::Posted;
 use crate::sheet_form::Back;
@@ -31,7 +31,7 @@ pub async fn keep(State(app): State<App>, signed: Signed, at: StepAt, sent: Sent
         Err(PageError::Fields { errors }) => {
             let back = Back { posted: Some(&posted), errors: &errors };
             let told = settings_kept.then_some("The settings were recorded; what is listed below was not.");
-            Ok((StatusCode::UNPROCESSABLE_ENTITY, frame::page(&signed, &at, &back, told, false)?).into_response())
+            Ok((StatusCode::UNPROCESSABLE_ENTITY, frame::page(&signed, &at, &back, told, None)?).into_response())
         }
         Err(PageError::Stale { conflicts }) => {
             let action = links::step(&at.at.site.tag, &at.at.drive.tag, &at.id);
@@ -102,7 +102,8 @@ fn tried(app: &App, signed: &Signed, at: &StepAt, acts: &[Act]) -> Result<(), Pa
     if wrong.is_empty() { Ok(()) } else { Err(PageError::Fields { errors: wrong }) }
 }
 
-/// Stays while something is missing here, or what was just recorded is outside, and says so; goes on otherwise.
+/// Stays while something is missing here, or what was just recorded is outside here or made something outside elsewhere,
+/// and says so; goes on otherwise.
 async fn onward(app: &App, at: &StepAt, anything: bool) -> Result<Response, PageError> {
     let fresh = at.again(app).await?;
     let agenda = agenda::of(&fresh.at.view());
@@ -110,10 +111,11 @@ async fn onward(app: &App, at: &StepAt, anything: bool) -> Result<Response, Page
     let settled = agenda.step(&at.id).is_none_or(|(_, s)| s.state.is_settled());
     let (_, step) = fresh.step()?;
     let outside = anything && stay::any_outside(&verdicts::at_step(&fresh.at.view(), step));
+    let brought = if anything { brought::of(&at.at.view(), &fresh.at.view(), &at.id) } else { String::new() };
     let to = match (settled, anything) {
-        (true, _) if !outside => progress::after(&agenda, &at.id).address(site, drive),
-        (_, true) => links::step_recorded(site, drive, &at.id, if settled { "whole" } else { "partly" }),
-        (_, false) => links::step_recorded(site, drive, &at.id, "nothing"),
+        (true, _) if !outside && brought.is_empty() => progress::after(&agenda, &at.id).address(site, drive),
+        (_, true) => links::step_recorded(site, drive, &at.id, if settled { "whole" } else { "partly" }, &brought),
+        (_, false) => links::step_recorded(site, drive, &at.id, "nothing", ""),
     };
     Ok(Redirect::to(&to).into_response())
 }

@@ -15,6 +15,9 @@ use serde::Deserialize;
 pub struct Asked {
     #[serde(default)]
     recorded: String,
+    /// Verdicts elsewhere that the record brought about.
+    #[serde(default)]
+    brought: String,
 }
 
 /// Shows it; after a record that did not lead on it says what is still to be entered, and what is outside.
@@ -30,6 +33,6 @@ pub async fn show(signed: Signed, at: StepAt, Query(asked): Query<Asked>) -> Res
         (_, Some(missing)) => Some(format!("Recorded. Still to be entered here: {missing}.")),
         (_, None) => Some("Recorded.".to_owned()),
     };
-    let stays = told.is_some() && asked.recorded != "nothing";
+    let stays = (told.is_some() && asked.recorded != "nothing").then_some(asked.brought.as_str());
     page(&signed, &at, &Back::default(), told.as_deref(), stays)
 }
