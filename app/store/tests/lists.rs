@@ -47,6 +47,8 @@ fn a_row_tells_how_far_the_record_is() {
     assert_eq!((row(&store).status, row(&store).open_findings), (StatusKey::Signed, 0));
     done(&store, MAREN, Deed::Return { drive: drive(1), reason: "Which plate?".to_owned() }, at(10));
     assert_eq!(row(&store).status, StatusKey::Returned);
+    let text = "The one on the pump's foot.".to_owned();
+    done(&store, ROWAN, Deed::Remark { drive: drive(1), step: "plate".to_owned(), text }, at(11));
     done(&store, ROWAN, sign(&store, 1, Meaning::Performed), at(11));
     done(&store, MAREN, sign(&store, 1, Meaning::Accepted), at(12));
     assert_eq!(row(&store).status, StatusKey::Accepted);
