@@ -8,8 +8,8 @@ mod tests;
 mod trouble;
 mod unanswered;
 
-pub(crate) use hold::newest;
 pub use hold::unmet_of;
+pub(crate) use hold::{counts, newest};
 pub use parameters::{Difference, differs, left_of_group};
 pub use trouble::with_outcomes;
 pub use unanswered::{Unanswered, unanswered};

@@ -19,7 +19,7 @@ pub(crate) struct Placed {
 
 const GAP: f64 = 8.0;
 
-/// A generous estimate of the width of words, so that no font in use is wider.
+/// A generous estimate of the width of words, so that no font in use is wider: DejaVu Sans, bold, is the widest met.
 pub(crate) fn width(words: &str, strong: bool) -> f64 {
     let ems: f64 = words
         .chars()
@@ -36,7 +36,7 @@ pub(crate) fn width(words: &str, strong: bool) -> f64 {
             _ => 0.75,
         })
         .sum();
-    ems * TEXT * if strong { 1.06 } else { 1.0 }
+    ems * TEXT * if strong { 1.16 } else { 1.04 }
 }
 
 /// Cuts words to a width, with an ellipsis; the whole stands in the picture's title.

@@ -70,16 +70,20 @@ fn stopping(record: &Record) -> Vec<String> {
     numbers.iter().map(|n| format!("Finding {n} stops start-up and is open.")).collect()
 }
 
-/// The steps ahead of a phase that show a check. What does not apply is left out; so is a step that was settled
-/// otherwise, unless something was measured at it: a reading is not unmade by calling its step not applicable.
-fn showing<'a>(view: &View<'a>, check: &str, agenda: &Agenda, before: &str) -> Vec<&'a Step> {
-    let counts = |step: &Step| match agenda.step(&step.id).map(|(_, s)| &s.state) {
+/// Whether a step's verdicts count. What does not apply is left out; so is a step that was settled otherwise, unless
+/// something was measured at it: a reading is not unmade by calling its step not applicable.
+pub(crate) fn counts(view: &View<'_>, agenda: &Agenda, step: &Step) -> bool {
+    match agenda.step(&step.id).map(|(_, s)| &s.state) {
         None => false,
         Some(StepState::NotApplicable(_) | StepState::CouldNotBeDone(_)) => measured(view, step),
         Some(_) => true,
-    };
+    }
+}
+
+/// The steps ahead of a phase that show a check, and count.
+fn showing<'a>(view: &View<'a>, check: &str, agenda: &Agenda, before: &str) -> Vec<&'a Step> {
     let ahead = view.procedure.phases.iter().take_while(|p| p.id != before);
-    ahead.flat_map(|p| &p.steps).filter(|s| s.checks.iter().any(|c| c == check) && counts(s)).collect()
+    ahead.flat_map(|p| &p.steps).filter(|s| s.checks.iter().any(|c| c == check) && counts(view, agenda, s)).collect()
 }
 
 /// Whether any entry stands at a step.

@@ -3,7 +3,7 @@
 use super::writer::Writer;
 use super::{Surroundings, findings};
 use crate::Refusal;
-use crate::agenda::{self, StepState};
+use crate::agenda;
 use crate::journal::{Chain, Event, Fact, Head};
 use crate::judge::{self, View, catalogue::title};
 use crate::procedure::Step;
@@ -48,13 +48,9 @@ pub(super) fn raise_stops(
 /// and at least to be closed before handover, or one closed after the last thing entered there.
 pub(super) fn all_in_findings(view: &View<'_>, record: &Record) -> Result<(), Refusal> {
     let agenda = agenda::of(view);
-    let counts = |id: &str| {
-        let state = agenda.step(id).map(|(_, s)| &s.state);
-        state.is_some_and(|s| !matches!(s, StepState::NotApplicable(_) | StepState::CouldNotBeDone(_)))
-    };
     // The same outcome shown at several steps is one: what it was run for, and what it says.
     let mut shown: Vec<(&str, String, String, Vec<&Step>)> = Vec::new();
-    for (_, step) in view.procedure.steps().filter(|(_, s)| counts(&s.id)) {
+    for (_, step) in view.procedure.steps().filter(|(_, s)| agenda::counts(view, &agenda, s)) {
         for name in &step.checks {
             for one in judge::run(view, name, &step.id) {
                 if one.outcome.verdict != Verdict::Outside {

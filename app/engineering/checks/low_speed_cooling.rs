@@ -6,7 +6,7 @@
 //! below that range, common practice (row VF-07): 75 to 85 % at half speed, 50 to 70 % at a fifth, straight lines
 //! between. Up to the lower line within, above the upper line outside, between them marginal. Below a fifth of rated
 //! speed and below the maker's curve nothing is judged. A motor without a fan or in the load's air stream counts as
-//! self-cooled. Load torque not stated: assumed rated torque throughout.
+//! self-cooled. Load torque not stated: assumed rated torque throughout, and then marginal at worst.
 
 use crate::decision::Measured;
 use crate::formulas::marking::{graded, mark, up_to};
@@ -153,6 +153,9 @@ pub fn check(inputs: &Inputs) -> Outcome {
     let load = load.fraction() * 100.0;
     let measured = Measured::exact(load);
     let verdict = if up_to(load, low) { Verdict::Within } else { graded(&measured, low, high) };
+    // What nobody stated can ask for a look, but it condemns nothing.
+    let assumed = inputs.load_torque.is_none() && verdict == Verdict::Outside;
+    let verdict = if assumed { Verdict::Marginal } else { verdict };
     let shown = significant(load, 3);
     b.figure("continuous torque at the lowest speed", low, 3, "%");
     mark(&mut b, &measured, format!("{shown} %"), verdict);
@@ -160,6 +163,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         verdict,
         match verdict {
             Verdict::Outside => format!("The load asks {shown} % of rated torque at {part_shown} % speed, more than {high_shown} %. Raise the minimum speed, fit a separate fan, or ask the motor's maker."),
+            Verdict::Marginal if assumed => format!("A load that asks rated torque at {part_shown} % speed would be more than the {high_shown} % that practice allows. State the load's torque at its lowest speed."),
             Verdict::Marginal => format!("The load asks {shown} % of rated torque at {part_shown} % speed; practice allows {low_shown} to {high_shown} %. Ask the motor's maker and watch the winding temperature."),
             _ => format!("The load asks {shown} % of rated torque at {part_shown} % speed, at most {low_shown} %."),
         },
@@ -217,7 +221,8 @@ mod tests {
     #[test]
     fn what_is_not_stated_is_assumed_or_missing_by_name() {
         let bare = check(&Inputs { cooling: None, load_torque: None, ..run(25.0, 0.0) });
-        assert_eq!((bare.verdict, bare.assumed.len()), (Verdict::Outside, 2));
+        assert_eq!((bare.verdict, bare.assumed.len()), (Verdict::Marginal, 2), "assumed, so not condemned");
+        assert!(bare.summary.contains("State the load's torque"), "{}", bare.summary);
         let waiting = check(&Inputs { lowest_frequency: None, ..run(0.0, 0.5) });
         assert_eq!(waiting.missing[0].what, "lowest working frequency");
         assert_eq!(check(&run(25.0, f64::NAN)).verdict, Verdict::NotAssessed);

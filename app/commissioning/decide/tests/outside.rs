@@ -101,6 +101,10 @@ fn an_outside_verdict_without_a_finding_keeps_the_record_from_being_signed() {
     world.does(ERIN, Deed::SetDriveFields { drive: DRIVE, sheet: Sheet::Further, changes, reason });
     let said = why(world.sign(ERIN, Meaning::Performed));
     assert!(said.contains("stands in no finding yet: “Stop time” at “Time to standstill”: 4.00 s"), "{said}");
+    let how = crate::record::SettledOtherwise::NotApplicable;
+    world.does(ERIN, Deed::SettleStep { drive: DRIVE, step: STOP.into(), how, reason: "The client knows.".into() });
+    assert!(why(world.sign(ERIN, Meaning::Performed)).contains("no finding"), "measured is measured");
+    world.does(ERIN, Deed::ResumeStep { drive: DRIVE, step: STOP.into() });
     let raise = |finding, severity, text: &str| Deed::RaiseFinding {
         drive: DRIVE,
         finding,

@@ -41,7 +41,8 @@ fn low_speed_cooling_by_kind_of_cooling_and_maker() {
         let outcome = case.once("low-speed-cooling");
         (outcome.verdict, outcome.limit)
     };
-    let usual = (Outside, "at most 75.0 % of rated torque at 50.0 % speed".to_owned());
+    // The load is not stated: rated torque is assumed, and an assumption condemns nothing.
+    let usual = (engineering::Verdict::Marginal, "at most 75.0 % of rated torque at 50.0 % speed".to_owned());
     for cooling in ["self", "surface", "air-stream"] {
         assert_eq!(said(&[(Motor, "cooling", cooling)]), usual, "{cooling}");
     }
