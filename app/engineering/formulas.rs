@@ -27,6 +27,7 @@ pub mod power_flow;
 pub mod power_law;
 pub mod rectifier;
 pub mod reflection;
+pub mod residual_volts;
 pub mod robust_spread;
 pub mod sharing_resistor;
 pub mod slip;

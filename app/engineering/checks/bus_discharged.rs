@@ -7,10 +7,9 @@
 //! with its instrument's doubt, can lie above the limit is outside. Below it the check gives a figure and never a
 //! verdict: waiting and one measurement do not prove a circuit dead. Measure by the drive's manual and local rules.
 
-use crate::decision::Measured;
 use crate::formulas::plausible::{finite_reading, positive};
+use crate::formulas::residual_volts::{Residual, state_limit, weigh};
 use crate::limit::Limit;
-use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
 use crate::quantity::{Capacitance, Voltage};
 use crate::reading::Reading;
@@ -80,9 +79,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
         }
     }
     let limit_shown = significant(limit, 3);
-    b.limit(format!("not above {limit_shown} V"));
-    b.rule(LimitRule::linear("V").tick(limit, format!("{limit_shown} V")));
-    b.line("limit", words, String::new(), format!("{limit_shown} V"));
+    state_limit(&mut b, Voltage::from_volts(limit), words);
     let Some(between) = finite_reading(&mut b, inputs.between_poles.as_ref(), "DC bus volts between the poles") else {
         return b.not_assessed();
     };
@@ -97,35 +94,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             b.note(format!("No reading {name}."));
         }
     }
-    let mut above = Vec::new();
-    let mut too_near = false;
-    let mut highest = 0.0_f64;
-    for (name, reading) in &taken {
-        // The sign says which lead was where; only the size matters.
-        let measured = Measured::scaled(reading, 1.0);
-        let volts = measured.value.abs();
-        let shown = significant(volts, 3);
-        highest = highest.max(volts);
-        let outside = volts + measured.expanded > limit;
-        too_near |= outside && volts - measured.expanded <= limit;
-        if outside {
-            above.push(format!("{shown} V {name}"));
-        }
-        if let Some(doubt) = &measured.doubt {
-            b.note(format!("{name}: {doubt}."));
-        }
-        b.line(
-            name,
-            "|U| + U_instrument",
-            format!("{shown} V + {} V", significant(measured.expanded, 2)),
-            format!("{} V", significant(volts + measured.expanded, 3)),
-        );
-        b.figure(&format!("DC bus {name}"), volts, 3, "V");
-        if let Some(rule) = b.take_rule() {
-            let verdict = if outside { Verdict::Outside } else { Verdict::Figure };
-            b.rule(rule.reading(volts, measured.expanded, format!("{shown} V"), verdict));
-        }
-    }
+    let Residual { above, too_near, highest } = weigh(&mut b, Voltage::from_volts(limit), &taken, "", "DC bus ");
     if above.is_empty() {
         return b.as_figure(format!(
             "{} V left on the DC bus at most; the limit is {limit_shown} V. This is a figure, not a proof.",

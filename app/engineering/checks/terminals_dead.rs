@@ -8,10 +8,9 @@
 //! and never a verdict: a point without voltage proves neither another point nor the tester. The drive's manual, local
 //! rules and licensed practice decide.
 
-use crate::decision::Measured;
 use crate::formulas::plausible::{finite_reading, positive};
+use crate::formulas::residual_volts::{Residual, state_limit, weigh};
 use crate::limit::Limit;
-use crate::limit_rule::LimitRule;
 use crate::outcome::{Outcome, OutcomeBuilder, Verdict};
 use crate::quantity::Voltage;
 use crate::reading::Reading;
@@ -53,40 +52,14 @@ pub fn check(inputs: &Inputs) -> Outcome {
         }
     }
     let limit_shown = significant(limit, 3);
-    b.limit(format!("not above {limit_shown} V"));
-    b.rule(LimitRule::linear("V").tick(limit, format!("{limit_shown} V")));
-    b.line("limit", words, String::new(), format!("{limit_shown} V"));
+    state_limit(&mut b, Voltage::from_volts(limit), words);
     let supply = finite_reading(&mut b, inputs.supply.as_ref(), "volts at the supply terminals");
     let output = finite_reading(&mut b, inputs.output.as_ref(), "volts at the output terminals");
-    let mut live = Vec::new();
-    let mut too_near = false;
-    let mut highest = 0.0_f64;
-    for (name, reading) in [("supply terminals", &supply), ("output terminals", &output)] {
-        let Some(reading) = reading else { continue };
-        let measured = Measured::direct(reading);
-        let volts = measured.value.abs();
-        let shown = significant(volts, 3);
-        highest = highest.max(volts);
-        let outside = volts + measured.expanded > limit;
-        too_near |= outside && volts - measured.expanded <= limit;
-        if outside {
-            live.push(format!("{shown} V at the {name}"));
-        }
-        if let Some(doubt) = &measured.doubt {
-            b.note(format!("{name}: {doubt}."));
-        }
-        b.line(
-            name,
-            "|U| + U_instrument",
-            format!("{shown} V + {} V", significant(measured.expanded, 2)),
-            format!("{} V", significant(volts + measured.expanded, 3)),
-        );
-        b.figure(name, volts, 3, "V");
-        if let Some(rule) = b.take_rule() {
-            let verdict = if outside { Verdict::Outside } else { Verdict::Figure };
-            b.rule(rule.reading(volts, measured.expanded, format!("{shown} V"), verdict));
-        }
-    }
+    let taken: Vec<_> = [("supply terminals", supply), ("output terminals", output)]
+        .into_iter()
+        .filter_map(|(n, r)| Some((n, r?)))
+        .collect();
+    let Residual { above: live, too_near, highest } = weigh(&mut b, Voltage::from_volts(limit), &taken, "at the ", "");
     if !live.is_empty() {
         let doubtful = if too_near { ", or too near to tell" } else { "" };
         return b.judged(
@@ -94,7 +67,7 @@ pub fn check(inputs: &Inputs) -> Outcome {
             format!("{}: above {} V{doubtful}. These terminals are live. Keep out and find where the voltage comes from: another feed, a bypass, a turning motor, a point that was not opened.", live.join(", "), limit_shown.trim_end_matches(".0")),
         );
     }
-    if supply.is_none() || output.is_none() {
+    if taken.len() < 2 {
         return b.not_assessed();
     }
     b.as_figure(format!(
